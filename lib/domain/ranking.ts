@@ -1,0 +1,75 @@
+import { type ArrheniusFit } from '../analysis/reduction/run-reduction'
+import { type Caution } from '../analysis/caution'
+import { type Estimate } from '../analysis/estimate'
+import { type Working } from '../analysis/working'
+import { type RunDecision, type RunState } from './run'
+
+export interface RankingRun {
+  readonly runId: string
+  readonly code: string
+  readonly state: RunState
+  readonly decision: RunDecision | null
+  readonly isIncluded: boolean
+  /** why it is not in the line; empty when it is */
+  readonly reason: string
+}
+
+/** One sample in the ranking. Every number is an estimate in SI; the grid turns it into practical units. */
+export interface RankingRow {
+  readonly sampleId: string
+  readonly sampleCode: string
+  readonly sampleName: string
+  readonly kind: 'catalyst' | 'blank'
+  readonly runs: readonly RankingRun[]
+  /** null where the sample cannot be ranked; the cautions say why */
+  readonly rank: number | null
+  readonly rankInterval: readonly [number, number] | null
+  readonly probabilityBest: number | null
+  readonly activationEnergyJPerMol: Estimate | null
+  readonly activationEnergyInterval: readonly [number, number] | null
+  readonly lnPreExponential: Estimate | null
+  readonly lnPreExponentialInterval: readonly [number, number] | null
+  /** at the method's reference temperature and feed composition */
+  readonly rateMolPerKgS: Estimate | null
+  readonly rateInterval: readonly [number, number] | null
+  readonly turnoverFrequencyPerS: Estimate | null
+  readonly turnoverFrequencyInterval: readonly [number, number] | null
+  /** temperature at which the target conversion is reached at the run's own contact time; null outside the measured range */
+  readonly temperatureForConversionK: number | null
+  readonly selectivity: Readonly<Record<string, number>>
+  readonly carbonBalance: number | null
+  readonly decayPerH: number | null
+  readonly distinctTemperatures: number
+  readonly lowestTemperatureK: number | null
+  readonly highestTemperatureK: number | null
+  readonly cautions: readonly Caution[]
+  readonly isProvisional: boolean
+  readonly isShortlisted: boolean
+  readonly priority: number | null
+  readonly remark: string
+  readonly version: number
+  readonly fit: ArrheniusFit | null
+  /** keyed by field name of this record */
+  readonly workings: Readonly<Record<string, Working>>
+}
+
+export interface Ranking {
+  readonly campaignId: string
+  readonly campaignCode: string
+  readonly campaignName: string
+  readonly methodId: string
+  readonly methodNumber: number
+  readonly rankedBy: 'turnover-frequency' | 'rate'
+  readonly referenceTemperatureK: number
+  readonly confidenceLevel: number
+  readonly draws: number
+  readonly seed: number
+  readonly engineId: string
+  readonly computedAt: string
+  readonly includesProvisional: boolean
+  readonly rows: readonly RankingRow[]
+  /** every hold of every shown run, for the ruler */
+  readonly holdTemperaturesK: readonly number[]
+  /** one sentence that says what the numbers mean */
+  readonly summary: string
+}

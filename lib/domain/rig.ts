@@ -1,0 +1,28 @@
+import { z } from 'zod'
+import { codeSchema, nameSchema, notesSchema } from './text'
+
+export const reactorKinds = ['plug-flow', 'stirred-tank', 'batch'] as const
+
+export const newRigSchema = z.strictObject({
+  code: codeSchema,
+  name: nameSchema,
+  reactorKind: z.enum(reactorKinds).default('plug-flow'),
+  timeZone: z.string().min(1).max(60).default('UTC'),
+  channels: z
+    .array(z.strictObject({ code: codeSchema, tubeInnerDiameterM: z.number().gt(0).lt(1).nullable().default(null) }))
+    .min(1)
+    .max(64),
+  barometerPa: z.number().gte(50_000).lte(120_000).default(101_325),
+  maximumPressurePa: z.number().gt(0).lte(1e8).nullable().default(null),
+  maximumTemperatureK: z.number().gt(0).lte(3_000).nullable().default(null),
+  lineLagS: z.number().gte(0).lte(3_600).default(0),
+  flowReferenceTemperatureK: z.number().gt(200).lt(400).nullable().default(null),
+  flowReferencePressurePa: z.number().gt(50_000).lt(200_000).nullable().default(null),
+  notes: notesSchema,
+})
+export type NewRig = z.infer<typeof newRigSchema>
+
+export interface Rig extends NewRig {
+  readonly id: string
+  readonly version: number
+}
