@@ -22,8 +22,20 @@ export interface FieldIssue {
   readonly message: string
 }
 
-/** An expected failure whose message may be shown. */
+const brand = Symbol.for('inverse-kelvin.app-error')
+
+/**
+ * An expected failure whose message may be shown.
+ *
+ * One server process holds several copies of this module (start-up, pages, handlers), so `instanceof` asks for the mark, not for the copy.
+ */
 export class AppError extends Error {
+  readonly [brand] = true
+
+  static override [Symbol.hasInstance](value: unknown): boolean {
+    return typeof value === 'object' && value !== null && brand in value
+  }
+
   constructor(
     readonly code: AppErrorCode,
     message: string,
@@ -37,6 +49,16 @@ export class AppError extends Error {
     super(message, options)
     this.name = 'AppError'
   }
+}
+
+/** The expected failure in an error or in what caused it (the database layer wraps what passes through it), or null. */
+export function appErrorOf(error: unknown): AppError | null {
+  let at = error
+  for (let depth = 0; depth < 8 && at instanceof Error; depth++) {
+    if (at instanceof AppError) return at
+    at = at.cause
+  }
+  return null
 }
 
 /** What a form action answers: the value, or the sentence and the fields at fault. Never thrown across the wire. */

@@ -1,0 +1,30 @@
+import { createHash } from 'node:crypto'
+import { existsSync, mkdirSync, readdirSync, readFileSync, renameSync, writeFileSync } from 'node:fs'
+import path from 'node:path'
+import { openMemoryDatabase } from '@/db/client'
+import { templateFile } from './fresh-database'
+
+/** Changes with the migrations and with the engine. */
+function fingerprint(): string {
+  const hash = createHash('sha256')
+  for (const name of readdirSync('drizzle')
+    .filter((entry) => entry.endsWith('.sql'))
+    .sort())
+    hash.update(name).update(readFileSync(path.join('drizzle', name)))
+  hash.update(readFileSync('node_modules/@electric-sql/pglite/package.json'))
+  return hash.digest('hex')
+}
+
+/** Migrates once; every test file loads the archive of that. */
+export default async function setup() {
+  const stamp = `${templateFile}.sha256`
+  const current = fingerprint()
+  if (existsSync(templateFile) && existsSync(stamp) && readFileSync(stamp, 'utf8') === current) return
+  mkdirSync(path.dirname(templateFile), { recursive: true })
+  const opened = await openMemoryDatabase()
+  const archive = await opened.thread.dump()
+  await opened.close()
+  writeFileSync(`${templateFile}.${process.pid}`, archive)
+  renameSync(`${templateFile}.${process.pid}`, templateFile)
+  writeFileSync(stamp, current)
+}
