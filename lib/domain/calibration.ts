@@ -42,5 +42,12 @@ export interface Calibration extends NewCalibration {
   readonly id: string
   readonly version: number
   readonly createdBy: string
+  readonly createdByName: string
   readonly createdAt: string
+  /** the calibration that corrected this one */
+  readonly supersededById: string | null
 }
+
+/** What may change of a calibration: the end of its validity. A wrong value is corrected by a calibration that supersedes it. */
+export const calibrationChangeSchema = z.strictObject({ validTo: instantSchema.nullable() })
+export type CalibrationChange = z.infer<typeof calibrationChangeSchema>

@@ -41,3 +41,45 @@ export const campaignSampleChangeSchema = z.strictObject({
   version: z.int().gte(1),
 })
 export type CampaignSampleChange = z.infer<typeof campaignSampleChangeSchema>
+
+/** A campaign that somebody knows of; for a guest it is all there is beside its editions. */
+export interface CampaignName {
+  readonly id: string
+  readonly code: string
+  readonly name: string
+  readonly laboratory: string
+}
+
+export const campaignChangeSchema = z.strictObject({
+  name: nameSchema.optional(),
+  laboratory: z.string().trim().max(200).optional(),
+  description: z.string().trim().max(4_000).optional(),
+  referenceSampleId: idSchema.nullable().optional(),
+})
+export type CampaignChange = z.infer<typeof campaignChangeSchema>
+export type NewMember = z.infer<typeof newMemberSchema>
+
+export interface Member {
+  readonly campaignId: string
+  readonly userId: string
+  readonly displayName: string
+  readonly email: string
+  readonly role: CampaignRole
+  readonly isDisabled: boolean
+  readonly createdAt: string
+}
+
+/** A sample as one campaign holds it, with what people wrote beside it. */
+export interface CampaignSample {
+  readonly campaignId: string
+  readonly sampleId: string
+  readonly sampleCode: string
+  readonly sampleName: string
+  readonly composition: string
+  readonly activeMetal: string | null
+  readonly runCount: number
+  readonly isShortlisted: boolean
+  readonly priority: number | null
+  readonly remark: string
+  readonly version: number
+}

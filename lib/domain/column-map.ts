@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { speciesSchema } from './text'
+import { idSchema, speciesSchema } from './text'
 
 /** What a column can mean. */
 export const columnMeanings = [
@@ -74,3 +74,17 @@ export interface ColumnMap {
   readonly createdBy: string
   readonly createdAt: string
 }
+
+/** The next version of the map of one instrument on one rig. */
+export const newColumnMapSchema = z.strictObject({
+  rigId: idSchema,
+  instrument: z.string().trim().min(1).max(100),
+  fingerprint: z.string().min(1).max(64),
+  specification: columnMapSpecificationSchema,
+  sampleFileSha256: z
+    .string()
+    .regex(/^[0-9a-f]{64}$/)
+    .nullable()
+    .default(null),
+})
+export type NewColumnMap = z.infer<typeof newColumnMapSchema>

@@ -48,6 +48,7 @@ export interface Method {
   readonly settings: MethodSettings
   readonly reason: string
   readonly createdBy: string
+  readonly createdByName: string
   readonly createdAt: string
 }
 
@@ -55,3 +56,4 @@ export const newMethodSchema = z.strictObject({
   settings: methodSettingsSchema,
   reason: z.string().trim().min(3).max(500),
 })
+export type NewMethod = z.infer<typeof newMethodSchema>

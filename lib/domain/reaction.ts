@@ -29,3 +29,13 @@ export interface Reaction extends NewReaction {
   readonly id: string
   readonly version: number
 }
+
+/** The code stays: results and files name the reaction by it. Defaults of a new record do not apply to a change. */
+export const reactionChangeSchema = z.strictObject({
+  name: nameSchema.optional(),
+  keyReactant: speciesSchema.optional(),
+  steps: z.array(stoichiometrySchema).min(1).max(6).optional(),
+  thermochemistry: thermochemistrySchema.nullable().optional(),
+  notes: z.string().trim().max(4_000).optional(),
+})
+export type ReactionChange = z.infer<typeof reactionChangeSchema>

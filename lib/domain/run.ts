@@ -26,7 +26,25 @@ export interface Loading extends NewLoading {
   readonly code: string
   readonly rigId: string
   readonly channel: string
+  readonly sampleCode: string
+  readonly lotCode: string | null
+  readonly packedAt: string | null
+  readonly version: number
 }
+
+/** A weighing or a length that was noted wrongly; sample, rig and channel are what the loading is and stay. */
+export const loadingChangeSchema = z.strictObject({
+  lotId: idSchema.nullable().optional(),
+  catalystMassKg: z.number().gte(0).lt(10).optional(),
+  massRelativeStandardUncertainty: z.number().gte(0).lte(0.5).optional(),
+  diluentMassKg: z.number().gte(0).lt(10).optional(),
+  diluentMaterial: z.string().trim().max(60).optional(),
+  particleMinimumM: z.number().gt(0).lt(0.1).nullable().optional(),
+  particleMaximumM: z.number().gt(0).lt(0.1).nullable().optional(),
+  tubeInnerDiameterM: z.number().gt(0).lt(1).nullable().optional(),
+  bedLengthM: z.number().gt(0).lt(10).nullable().optional(),
+})
+export type LoadingChange = z.infer<typeof loadingChangeSchema>
 
 export const feedEntrySchema = z.strictObject({
   species: speciesSchema,
@@ -64,7 +82,10 @@ export const runChangeSchema = z.strictObject({
   startedAt: instantSchema.optional(),
   pressurePa: z.number().gt(0).lt(1e8).nullable().optional(),
   pressureKind: z.enum(['absolute', 'gauge']).optional(),
+  barometerPa: z.number().gte(50_000).lte(120_000).nullable().optional(),
   pressureText: z.string().trim().max(60).optional(),
+  /** the whole feed, in order */
+  feed: z.array(feedEntrySchema).max(20).optional(),
   pretreatment: z.string().trim().max(2_000).optional(),
   notes: z.string().trim().max(4_000).optional(),
   clockOffsetS: z.number().gte(-86_400).lte(86_400).optional(),
@@ -120,3 +141,35 @@ export const holdEditSchema = z.strictObject({
   endS: z.number().nullable(),
   reason: reasonSchema,
 })
+
+export const remarkSchema = z.strictObject({ body: z.string().trim().min(1).max(2_000) })
+/** Why something is put back. */
+export const withdrawalSchema = z.strictObject({ reason: reasonSchema })
+
+export type NewDecision = z.infer<typeof decisionSchema>
+export type NewExclusion = z.infer<typeof exclusionSchema>
+export type NewHoldEdit = z.infer<typeof holdEditSchema>
+export type NewRemark = z.infer<typeof remarkSchema>
+
+interface MadeBy {
+  readonly id: string
+  readonly runId: string
+  readonly createdBy: string
+  readonly createdByName: string
+  readonly createdAt: string
+}
+
+/** One of the decisions taken on a run; the latest is valid. */
+export interface RunDecisionRecord extends NewDecision, MadeBy {}
+
+/** A hold or an injection left out; put back when withdrawn, and kept. */
+export interface RunExclusion extends NewExclusion, MadeBy {
+  readonly withdrawnAt: string | null
+}
+
+/** A window moved by a person; the rule's own again when withdrawn. */
+export interface RunHoldEdit extends NewHoldEdit, MadeBy {
+  readonly withdrawnAt: string | null
+}
+
+export interface RunRemark extends NewRemark, MadeBy {}

@@ -65,3 +65,23 @@ export interface SiteCount extends NewSiteCount {
   readonly sampleId: string
   readonly createdAt: string
 }
+
+/** The code stays: labels and files name the sample by it. */
+export const sampleChangeSchema = z.strictObject({
+  name: nameSchema.optional(),
+  composition: z.string().trim().max(300).optional(),
+  activeMetal: z
+    .string()
+    .regex(/^[A-Z][a-z]?$/)
+    .nullable()
+    .optional(),
+  metalMassFraction: z.number().gt(0).lt(1).nullable().optional(),
+  particleDensityKgPerM3: z.number().gt(0).lt(30_000).nullable().optional(),
+  poreFraction: z.number().gt(0).lt(1).nullable().optional(),
+  tortuosity: z.number().gte(0.1).lte(50).nullable().optional(),
+  meanPoreRadiusM: z.number().gt(0).lt(1e-3).nullable().optional(),
+  bedVoidFraction: z.number().gt(0).lt(1).nullable().optional(),
+  notes: z.string().trim().max(4_000).optional(),
+})
+export type SampleChange = z.infer<typeof sampleChangeSchema>
+export type NewLot = z.infer<typeof newLotSchema>
