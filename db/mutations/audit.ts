@@ -1,29 +1,32 @@
-import { type Actor } from '../../lib/domain/role'
-import { type Transaction } from '../executor'
+import 'server-only'
+import type { Actor } from '@/lib/domain/role'
+import type { Transaction } from '../executor'
 import { auditEntries } from '../schema'
 
-export interface NewAuditEntry {
-  readonly actor: Actor
+export interface AuditEntryInput {
+  readonly actor: Pick<Actor, 'userId' | 'sessionRef'>
+  /** what was done: `run.hand-in`, `method.save`, … */
   readonly action: string
+  /** the table's name in the singular, and the row */
   readonly entity: string
   readonly entityId: string
-  readonly campaignId?: string
+  readonly campaignId?: string | null
   readonly before?: unknown
   readonly after?: unknown
   readonly reason?: string
 }
 
-/** Who did what to which record, in the transaction of the change itself: neither is there without the other. */
-export async function insertAuditEntry(tx: Transaction, entry: NewAuditEntry): Promise<void> {
+/** Writes who did what, in the transaction of the change itself. Number, time and hashes are the database's own. */
+export async function insertAuditEntry(tx: Transaction, input: AuditEntryInput): Promise<void> {
   await tx.insert(auditEntries).values({
-    actorId: entry.actor.userId,
-    sessionRef: entry.actor.sessionRef,
-    action: entry.action,
-    entity: entry.entity,
-    entityId: entry.entityId,
-    campaignId: entry.campaignId ?? null,
-    before: entry.before ?? null,
-    after: entry.after ?? null,
-    reason: entry.reason ?? '',
+    actorId: input.actor.userId,
+    sessionRef: input.actor.sessionRef,
+    action: input.action,
+    entity: input.entity,
+    entityId: input.entityId,
+    campaignId: input.campaignId ?? null,
+    before: input.before ?? null,
+    after: input.after ?? null,
+    reason: input.reason ?? '',
   })
 }
