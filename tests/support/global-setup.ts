@@ -1,8 +1,8 @@
 import { createHash } from 'node:crypto'
 import { existsSync, mkdirSync, readdirSync, readFileSync, renameSync, writeFileSync } from 'node:fs'
 import path from 'node:path'
-import { openMemoryDatabase } from '@/db/client'
-import { templateFile } from './fresh-database'
+import { openMemoryDatabase, openServerDatabase } from '@/db/client'
+import { administer, onServer, TEMPLATE_DATABASE, templateFile } from './fresh-database'
 
 /** Changes with the migrations and with the engine. */
 function fingerprint(): string {
@@ -15,8 +15,15 @@ function fingerprint(): string {
   return hash.digest('hex')
 }
 
-/** Migrates once; every test file loads the archive of that. */
+async function makeServerTemplate() {
+  await administer(`drop database if exists ${TEMPLATE_DATABASE}`, `create database ${TEMPLATE_DATABASE}`)
+  const opened = await openServerDatabase(onServer(TEMPLATE_DATABASE))
+  await opened.close()
+}
+
+/** Migrates once; every test file starts from a copy of that. */
 export default async function setup() {
+  if (process.env.TEST_DATABASE_URL) return makeServerTemplate()
   const stamp = `${templateFile}.sha256`
   const current = fingerprint()
   if (existsSync(templateFile) && existsSync(stamp) && readFileSync(stamp, 'utf8') === current) return
