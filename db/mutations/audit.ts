@@ -4,7 +4,7 @@ import type { Transaction } from '../executor'
 import { auditEntries } from '../schema'
 
 export interface AuditEntryInput {
-  readonly actor: Pick<Actor, 'userId' | 'sessionRef'>
+  readonly actor: Actor
   /** what was done: `run.hand-in`, `method.save`, … */
   readonly action: string
   /** the table's name in the singular, and the row */

@@ -2,6 +2,7 @@ import { createHash } from 'node:crypto'
 import { existsSync, mkdirSync, readdirSync, readFileSync, renameSync, writeFileSync } from 'node:fs'
 import path from 'node:path'
 import { openMemoryDatabase, openServerDatabase } from '@/db/client'
+import { startPostgresServer } from './postgres-server.mjs'
 import { administer, onServer, TEMPLATE_DATABASE, templateFile } from './fresh-database'
 
 /** Changes with the migrations and with the engine. */
@@ -21,8 +22,16 @@ async function makeServerTemplate() {
   await opened.close()
 }
 
-/** Migrates once; every test file starts from a copy of that. */
+/** Migrates once; every test file starts from a copy of that. TEST_BACKEND=postgres starts a PostgreSQL server for the run. */
 export default async function setup() {
+  if (process.env.TEST_BACKEND === 'postgres' && !process.env.TEST_DATABASE_URL) {
+    const server = await startPostgresServer()
+    if ('skipped' in server) throw new Error(`Not run on a PostgreSQL server: ${server.skipped}`)
+    console.log(`on ${server.version}`)
+    process.env.TEST_DATABASE_URL = server.url
+    await makeServerTemplate()
+    return server.stop
+  }
   if (process.env.TEST_DATABASE_URL) return makeServerTemplate()
   const stamp = `${templateFile}.sha256`
   const current = fingerprint()
