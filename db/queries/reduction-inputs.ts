@@ -32,6 +32,7 @@ export interface RunRecords {
   readonly pressureKind: string
   readonly barometerPa: number | null
   readonly rigBarometerPa: number
+  readonly lineLagS: number
   readonly clockOffsetS: number
   readonly loadingId: string
   readonly loadingCode: string
@@ -69,6 +70,7 @@ export async function selectRunRecords(db: Executor, runIds: readonly string[]):
       pressureKind: runs.pressureKind,
       barometerPa: runs.barometerPa,
       rigBarometerPa: rigs.barometerPa,
+      lineLagS: rigs.lineLagS,
       clockOffsetS: runs.clockOffsetS,
       loadingId: loadings.id,
       loadingCode: loadings.code,
