@@ -1,0 +1,39 @@
+import ln from '@stdlib/math-base-special-ln'
+
+/** SI inside, practical units on screen; each with the header it is shown under. Factors are exact. */
+export interface PracticalUnit {
+  readonly label: string
+  readonly fromSi: (valueSi: number) => number
+  /** an uncertainty or a difference has no zero point */
+  readonly differenceFromSi: (differenceSi: number) => number
+}
+
+const scaled = (label: string, factor: number): PracticalUnit => ({
+  label,
+  fromSi: (valueSi) => valueSi * factor,
+  differenceFromSi: (differenceSi) => differenceSi * factor,
+})
+
+/** mol kg⁻¹ s⁻¹ to µmol g⁻¹ s⁻¹ */
+const RATE_FACTOR = 1_000
+
+export const practicalUnits = {
+  activationEnergy: scaled('kJ mol⁻¹', 1e-3),
+  rate: scaled('µmol g⁻¹ s⁻¹', RATE_FACTOR),
+  turnoverFrequency: scaled('10⁻³ s⁻¹', 1e3),
+  percent: scaled('%', 100),
+  percentPerHour: scaled('% h⁻¹', 100),
+  hours: scaled('h', 1 / 3_600),
+  ratio: scaled('', 1),
+  temperature: {
+    label: '°C',
+    fromSi: (valueSi: number) => valueSi - 273.15,
+    differenceFromSi: (differenceSi: number) => differenceSi,
+  },
+  /** ln of a rate constant per gram: a shift, so its uncertainty is untouched */
+  lnRate: {
+    label: 'ln (µmol g⁻¹ s⁻¹)',
+    fromSi: (valueSi: number) => valueSi + ln(RATE_FACTOR),
+    differenceFromSi: (differenceSi: number) => differenceSi,
+  },
+} satisfies Record<string, PracticalUnit>
