@@ -26,7 +26,8 @@ function temperPosition(temperatureK: number, window: TemperWindow): { index: nu
 
 function channels(hex: string): readonly [number, number, number] {
   const digits = hex.replace('#', '')
-  return [0, 2, 4].map((start) => Number.parseInt(digits.slice(start, start + 2), 16)) as [number, number, number]
+  const read = (start: number) => Number.parseInt(digits.slice(start, start + 2), 16)
+  return [read(0), read(2), read(4)]
 }
 
 /** Colour on a canvas, from the six stops of the theme in use. */
@@ -34,8 +35,8 @@ export function temperColour(temperatureK: number, window: TemperWindow, stops: 
   const { index, fraction } = temperPosition(temperatureK, window)
   const from = channels(stops[index] ?? '#888888')
   const to = channels(stops[index + 1] ?? '#888888')
-  const mixed = from.map((value, channel) => Math.round(value + ((to[channel] ?? value) - value) * fraction))
-  return `rgb(${mixed.join(', ')})`
+  const mix = (start: number, end: number) => Math.round(start + (end - start) * fraction)
+  return `rgb(${mix(from[0], to[0])}, ${mix(from[1], to[1])}, ${mix(from[2], to[2])})`
 }
 
 /** The same colour as a CSS value that follows the theme by itself, for SVG attributes. */

@@ -1,0 +1,369 @@
+import { type CustomSeriesOption, type LineSeriesOption, type ScatterSeriesOption } from 'echarts/charts'
+import { lineAt } from '@/lib/analysis/arrhenius/line-at'
+import { type ArrheniusFit, type FitPoint } from '@/lib/analysis/reduction/run-reduction'
+import { formatFixed } from '@/components/numbers/format-fixed'
+import { practicalUnits } from '@/components/numbers/practical-units'
+import { type ChartOption } from './chart-option'
+import { chartSymbol, type SampleSymbol } from './sample-symbols'
+import { temperColour, type TemperWindow } from './temper-scale'
+import { type ThemeColours } from './theme-colours'
+
+/** One sample's line as drawn. */
+export interface ArrheniusSeries {
+  readonly code: string
+  readonly symbol: SampleSymbol
+  readonly fit: ArrheniusFit
+  /** added to ln rate: the step from a rate per gram to one per site, or from SI to the practical unit */
+  readonly shift: number
+}
+
+export interface ArrheniusOptionInput {
+  readonly series: readonly ArrheniusSeries[]
+  readonly window: TemperWindow
+  readonly colours: ThemeColours
+  /** narrow panel beside the grid: fewer ticks */
+  readonly isCompact: boolean
+  /** drawn as a dashed line when given */
+  readonly referenceTemperatureK: number | null
+}
+
+const BAND_STEPS = 40
+/** room beyond the outermost points, in 1000/T */
+const OVERHANG = 0.008
+
+const abscissa = (temperatureK: number) => 1_000 / temperatureK
+
+interface Bounds {
+  readonly low: number
+  readonly high: number
+}
+
+function boundsOf(values: readonly number[], share: number, least: number): Bounds {
+  const low = values.reduce((a, b) => Math.min(a, b), Infinity)
+  const high = values.reduce((a, b) => Math.max(a, b), -Infinity)
+  if (!Number.isFinite(low) || !Number.isFinite(high)) return { low: 0, high: 1 }
+  const margin = Math.max(least, (high - low) * share)
+  return { low: low - margin, high: high + margin }
+}
+
+/** Ticks of a round step inside the bounds, at most `count`. */
+export function roundTicks(low: number, high: number, count: number): number[] {
+  const rough = (high - low) / Math.max(1, count)
+  const power = 10 ** Math.floor(Math.log10(rough))
+  const step = [1, 2, 2.5, 5, 10].map((factor) => factor * power).find((candidate) => candidate >= rough) ?? rough
+  const first = Math.ceil(low / step - 1e-9)
+  const last = Math.floor(high / step + 1e-9)
+  return Array.from({ length: Math.max(0, last - first + 1) }, (_, index) => (first + index) * step)
+}
+
+const isUsable = (point: FitPoint) => Number.isFinite(point.lnRate) && point.temperatureK > 0
+
+/** Words of one point's tooltip. */
+function pointLines(entry: ArrheniusSeries, point: FitPoint): string[] {
+  const lines = [
+    `${entry.code}, ${point.runCode}, hold ${point.holdNumber}`,
+    `${formatFixed(practicalUnits.temperature.fromSi(point.temperatureK), 2)} °C, 1000 K/T ${formatFixed(abscissa(point.temperatureK), 4)}`,
+    `ln ${formatFixed(point.lnRate + entry.shift, 4)} ± ${formatFixed(point.lnRateStandardUncertainty, 4)}`,
+    `residual ${formatFixed(point.residual, 4)}`,
+  ]
+  return point.isUsed ? lines : [...lines, `not in the line: ${point.reason}`]
+}
+
+function pointData(entry: ArrheniusSeries, input: ArrheniusOptionInput, y: (point: FitPoint) => number) {
+  return entry.fit.points.filter(isUsable).map((point) => ({
+    value: [abscissa(point.temperatureK), y(point)],
+    lines: pointLines(entry, point),
+    runCode: point.runCode,
+    itemStyle: {
+      color: point.isUsed ? temperColour(point.temperatureK, input.window, input.colours.temper) : input.colours.paper,
+      borderColor: point.isUsed ? input.colours.ink : input.colours.ink2,
+      borderWidth: 1.1,
+    },
+  }))
+}
+
+function scatter(
+  entry: ArrheniusSeries,
+  input: ArrheniusOptionInput,
+  options: { y: (point: FitPoint) => number; size: number; axis: number; id: string },
+): ScatterSeriesOption {
+  return {
+    type: 'scatter',
+    id: `${options.id}-${entry.code}`,
+    name: entry.code,
+    xAxisIndex: options.axis,
+    yAxisIndex: options.axis === 0 ? 0 : 1,
+    symbol: chartSymbol(entry.symbol),
+    symbolSize: options.size,
+    data: pointData(entry, input, options.y),
+    z: 5,
+  }
+}
+
+/** A vertical bar of one standard uncertainty each way. */
+function errorBars(
+  entry: ArrheniusSeries,
+  input: ArrheniusOptionInput,
+  options: { y: (point: FitPoint) => number; axis: number; id: string },
+): CustomSeriesOption {
+  return {
+    type: 'custom',
+    id: `${options.id}-${entry.code}`,
+    name: entry.code,
+    xAxisIndex: options.axis,
+    yAxisIndex: options.axis === 0 ? 0 : 1,
+    silent: true,
+    clip: true,
+    data: entry.fit.points
+      .filter(isUsable)
+      .map((point) => [
+        abscissa(point.temperatureK),
+        options.y(point) - point.lnRateStandardUncertainty,
+        options.y(point) + point.lnRateStandardUncertainty,
+      ]),
+    renderItem: (_, api) => {
+      const [x = 0, low = 0] = api.coord([api.value(0), api.value(1)])
+      const [, high = 0] = api.coord([api.value(0), api.value(2)])
+      return {
+        type: 'line',
+        shape: { x1: x, y1: low, x2: x, y2: high },
+        style: { stroke: input.colours.ink, lineWidth: 1.2 },
+      }
+    },
+    z: 4,
+  }
+}
+
+/** Abscissas along the line, a little beyond the outermost points. */
+function lineAbscissas(fit: ArrheniusFit): number[] {
+  const xs = fit.points.filter(isUsable).map((point) => abscissa(point.temperatureK))
+  const { low, high } = boundsOf(xs, 0, OVERHANG)
+  return Array.from({ length: BAND_STEPS + 1 }, (_, step) => low + ((high - low) * step) / BAND_STEPS)
+}
+
+function band(entry: ArrheniusSeries, input: ArrheniusOptionInput): CustomSeriesOption | null {
+  const edges = lineAbscissas(entry.fit).map((x) => ({ x, interval: lineAt(entry.fit, 1_000 / x).interval }))
+  if (edges.some((edge) => edge.interval === null)) return null
+  const upper = edges.map((edge) => [edge.x, (edge.interval?.[1] ?? 0) + entry.shift])
+  const lower = edges.map((edge) => [edge.x, (edge.interval?.[0] ?? 0) + entry.shift]).reverse()
+  const outline = [...upper, ...lower]
+  return {
+    type: 'custom',
+    id: `band-${entry.code}`,
+    name: entry.code,
+    silent: true,
+    clip: true,
+    data: [outline[0] ?? [0, 0]],
+    renderItem: (_, api) => ({
+      type: 'polygon',
+      shape: {
+        points: outline.map((corner) => {
+          const [x = 0, y = 0] = api.coord(corner)
+          return [x, y]
+        }),
+      },
+      style: { fill: input.colours.ink, opacity: 0.11 },
+    }),
+    z: 1,
+  }
+}
+
+function line(entry: ArrheniusSeries, input: ArrheniusOptionInput): LineSeriesOption {
+  const xs = lineAbscissas(entry.fit)
+  const ends = [xs[0] ?? 0, xs[xs.length - 1] ?? 0]
+  return {
+    type: 'line',
+    id: `line-${entry.code}`,
+    name: entry.code,
+    silent: true,
+    symbol: 'none',
+    lineStyle: { color: input.colours.ink2, width: 1.1 },
+    data: ends.map((x) => [x, lineAt(entry.fit, 1_000 / x).lnRate + entry.shift]),
+    endLabel: {
+      show: true,
+      formatter: entry.code,
+      color: input.colours.ink,
+      fontWeight: 600,
+      fontFamily: input.colours.fontFamily,
+      fontSize: 12,
+      distance: 6,
+    },
+    labelLayout: { moveOverlap: 'shiftY' },
+    z: 3,
+  }
+}
+
+/**
+ * The Arrhenius plot as a chart option: ln of the quantity against 1000 K/T, temperature in °C on top, residuals in a strip below.
+ * Points are coloured by temperature and shaped by sample, hollow when not in the line; bars are one standard uncertainty; bands are pointwise.
+ */
+export function buildArrheniusOption(input: ArrheniusOptionInput): ChartOption {
+  const { colours, series } = input
+  const all = series.flatMap((entry) =>
+    entry.fit.points.filter(isUsable).map((point) => ({
+      x: abscissa(point.temperatureK),
+      y: point.lnRate + entry.shift,
+      residual: point.residual,
+      u: point.lnRateStandardUncertainty,
+    })),
+  )
+  const x = boundsOf(
+    all.map((point) => point.x),
+    0.05,
+    0.012,
+  )
+  const y = boundsOf(
+    all.flatMap((point) => [point.y - point.u, point.y + point.u]),
+    0.06,
+    0.1,
+  )
+  const largestResidual = all.reduce((most, point) => Math.max(most, Math.abs(point.residual) + point.u), 0.01) * 1.15
+  const celsius = roundTicks(1_000 / x.high - 273.15, 1_000 / x.low - 273.15, input.isCompact ? 6 : 12)
+  const hottest = celsius[celsius.length - 1]
+  const celsiusTicks = celsius.map((value) => abscissa(value + 273.15))
+  const axisText = { color: colours.ink2, fontFamily: colours.fontFamily, fontSize: 12 }
+  const rule = { show: true, lineStyle: { color: colours.lineStrong } }
+  const hair = { show: true, lineStyle: { color: colours.line } }
+  const none = { show: false }
+  const left = 52
+  const right = 62
+  const strip = input.isCompact ? 46 : 74
+  const xTicks = roundTicks(x.low, x.high, input.isCompact ? 6 : 12)
+  const xDecimals = (xTicks[1] ?? 1) - (xTicks[0] ?? 0) < 0.0099 ? 3 : 2
+  const reference =
+    input.referenceTemperatureK !== null &&
+    abscissa(input.referenceTemperatureK) > x.low &&
+    abscissa(input.referenceTemperatureK) < x.high
+      ? abscissa(input.referenceTemperatureK)
+      : null
+  return {
+    animation: false,
+    textStyle: { fontFamily: colours.fontFamily },
+    grid: [
+      { left, right, top: 26, bottom: strip + 66, containLabel: false },
+      { left, right, height: strip, bottom: 14, containLabel: false },
+    ],
+    tooltip: { trigger: 'item' },
+    xAxis: [
+      {
+        type: 'value',
+        gridIndex: 0,
+        min: x.low,
+        max: x.high,
+        axisLine: rule,
+        splitLine: none,
+        axisTick: { ...rule, customValues: xTicks },
+        axisLabel: { ...axisText, customValues: xTicks, formatter: (value: number) => formatFixed(value, xDecimals) },
+        name: '1000 K / T',
+        nameLocation: 'end',
+        nameGap: 0,
+        nameTextStyle: { ...axisText, align: 'right', verticalAlign: 'top', padding: [24, 0, 0, 0] },
+      },
+      {
+        type: 'value',
+        gridIndex: 1,
+        min: x.low,
+        max: x.high,
+        axisLine: none,
+        splitLine: none,
+        axisTick: none,
+        axisLabel: none,
+      },
+      {
+        type: 'value',
+        gridIndex: 0,
+        position: 'top',
+        min: x.low,
+        max: x.high,
+        axisLine: rule,
+        splitLine: none,
+        axisTick: { ...rule, customValues: celsiusTicks },
+        axisLabel: {
+          ...axisText,
+          customValues: celsiusTicks,
+          hideOverlap: true,
+          formatter: (value: number) => {
+            const degrees = Math.round(1_000 / value - 273.15)
+            return hottest !== undefined && degrees === Math.round(hottest) ? `${degrees} °C` : String(degrees)
+          },
+        },
+      },
+    ],
+    yAxis: [
+      {
+        type: 'value',
+        gridIndex: 0,
+        min: y.low,
+        max: y.high,
+        axisLine: none,
+        axisTick: none,
+        splitLine: hair,
+        axisLabel: {
+          ...axisText,
+          showMinLabel: false,
+          showMaxLabel: false,
+          formatter: (value: number) => formatFixed(value, Number.isInteger(value) ? 0 : 1),
+        },
+      },
+      {
+        type: 'value',
+        gridIndex: 1,
+        min: -largestResidual,
+        max: largestResidual,
+        axisLine: none,
+        axisTick: none,
+        splitLine: none,
+        axisLabel: {
+          ...axisText,
+          customValues: [-largestResidual / 1.15, 0, largestResidual / 1.15],
+          formatter: (value: number) => (value === 0 ? 'resid.' : formatFixed(value, largestResidual < 0.1 ? 3 : 2)),
+        },
+      },
+    ],
+    series: [
+      ...series.flatMap((entry) => {
+        const wash = band(entry, input)
+        const height = (point: FitPoint) => point.lnRate + entry.shift
+        const residual = (point: FitPoint) => point.residual
+        return [
+          ...(wash ? [wash] : []),
+          line(entry, input),
+          errorBars(entry, input, { y: height, axis: 0, id: 'bar' }),
+          scatter(entry, input, { y: height, size: input.isCompact ? 9 : 11, axis: 0, id: 'point' }),
+          errorBars(entry, input, { y: residual, axis: 1, id: 'residual-bar' }),
+          scatter(entry, input, { y: residual, size: input.isCompact ? 6 : 8, axis: 1, id: 'residual' }),
+        ]
+      }),
+      {
+        type: 'line',
+        id: 'zero',
+        xAxisIndex: 1,
+        yAxisIndex: 1,
+        silent: true,
+        symbol: 'none',
+        lineStyle: { color: colours.lineStrong, width: 1 },
+        data: [
+          [x.low, 0],
+          [x.high, 0],
+        ],
+        z: 2,
+      },
+      ...(reference === null
+        ? []
+        : [
+            {
+              type: 'line' as const,
+              id: 'reference',
+              silent: true,
+              symbol: 'none',
+              lineStyle: { color: colours.lineStrong, width: 1, type: 'dashed' as const },
+              data: [
+                [reference, y.low],
+                [reference, y.high],
+              ],
+              z: 1,
+            },
+          ]),
+    ],
+  }
+}

@@ -1,0 +1,48 @@
+'use client'
+
+import { useMemo } from 'react'
+import { buildArrheniusOption, type ArrheniusSeries } from './arrhenius-chart-option'
+import { arrheniusSummary, arrheniusTable } from './arrhenius-text'
+import { ChartFrame } from './chart-frame'
+import { type TemperWindow } from './temper-scale'
+import { useThemeColours } from './theme-colours'
+
+interface ArrheniusChartProps {
+  readonly series: readonly ArrheniusSeries[]
+  readonly window: TemperWindow
+  readonly quantity: 'rate' | 'turnover-frequency'
+  readonly isCompact?: boolean
+  readonly referenceTemperatureK?: number | null
+}
+
+const titles = {
+  rate: 'ln (rate / µmol g⁻¹ s⁻¹)',
+  'turnover-frequency': 'ln (TOF / s⁻¹)',
+} as const
+
+/** ln of a rate against 1000 K/T for the chosen samples, with lines, bands and residuals. */
+export function ArrheniusChart({
+  series,
+  window,
+  quantity,
+  isCompact = false,
+  referenceTemperatureK = null,
+}: ArrheniusChartProps) {
+  const colours = useThemeColours()
+  const option = useMemo(
+    () => buildArrheniusOption({ series, window, colours, isCompact, referenceTemperatureK }),
+    [series, window, colours, isCompact, referenceTemperatureK],
+  )
+  const table = useMemo(() => arrheniusTable(series, titles[quantity]), [series, quantity])
+  return (
+    <ChartFrame
+      label={`Arrhenius plot of ${series.map((entry) => entry.code).join(', ') || 'no sample'}`}
+      summary={arrheniusSummary(series)}
+      table={table}
+      option={option}
+      colours={colours}
+      heightClass={isCompact ? 'h-[410px]' : 'h-[560px]'}
+      caption={titles[quantity]}
+    />
+  )
+}

@@ -1,0 +1,49 @@
+import { formatFixed } from '@/components/numbers/format-fixed'
+import { halfWidth } from '@/components/numbers/half-width'
+import { practicalUnits } from '@/components/numbers/practical-units'
+import { roundToUncertainty } from '@/components/numbers/round-to-uncertainty'
+import { type ArrheniusSeries } from './arrhenius-chart-option'
+import { type ChartTable } from './chart-frame'
+
+const celsius = (temperatureK: number, decimals: number) =>
+  formatFixed(practicalUnits.temperature.fromSi(temperatureK), decimals)
+
+/** What the plot shows, in sentences. */
+export function arrheniusSummary(series: readonly ArrheniusSeries[]): string {
+  if (series.length === 0) return 'No sample is selected.'
+  const sentences = series.map((entry) => {
+    const ea = roundToUncertainty(
+      practicalUnits.activationEnergy.fromSi(entry.fit.activationEnergyJPerMol.value),
+      mapHalf(halfWidth(entry.fit.intervals.activationEnergyJPerMol)),
+    )
+    const used = entry.fit.points.filter((point) => point.isUsed).length
+    const out = entry.fit.points.length - used
+    const interval = ea.uncertainty === '' ? 'no interval' : `± ${ea.uncertainty}`
+    return `${entry.code}: ${ea.value} ${interval} kJ mol⁻¹ from ${used} holds, ${celsius(entry.fit.lowestTemperatureK, 0)} to ${celsius(entry.fit.highestTemperatureK, 0)} °C${out > 0 ? `, ${out} left out` : ''}`
+  })
+  return `${sentences.join('; ')}. Bars are one standard uncertainty; bands are pointwise and hold own scatter only; hollow points are not in the line.`
+}
+
+function mapHalf(half: number | null): number | null {
+  return half === null ? null : practicalUnits.activationEnergy.differenceFromSi(half)
+}
+
+/** The plotted numbers. */
+export function arrheniusTable(series: readonly ArrheniusSeries[], quantity: string): ChartTable {
+  return {
+    columns: ['Sample', 'Run', 'Hold', 'T / °C', '1000 K/T', quantity, 'u', 'residual', 'in the line'],
+    rows: series.flatMap((entry) =>
+      entry.fit.points.map((point) => [
+        entry.code,
+        point.runCode,
+        String(point.holdNumber),
+        celsius(point.temperatureK, 2),
+        formatFixed(1_000 / point.temperatureK, 4),
+        formatFixed(point.lnRate + entry.shift, 4),
+        formatFixed(point.lnRateStandardUncertainty, 4),
+        formatFixed(point.residual, 4),
+        point.isUsed ? 'yes' : `no: ${point.reason}`,
+      ]),
+    ),
+  }
+}

@@ -1,0 +1,46 @@
+import { type Working, type WorkingSymbol } from '@/lib/analysis/working'
+import { roundToUncertainty } from '@/components/numbers/round-to-uncertainty'
+
+/** Value of a symbol to what its uncertainty justifies; one that is exact is given with six figures at most. */
+export function symbolValue(symbol: WorkingSymbol): string {
+  if (symbol.value === null) return 'not known'
+  const u = symbol.standardUncertainty
+  const rounded =
+    u !== null && u > 0 ? roundToUncertainty(symbol.value, u).value : String(Number(symbol.value.toPrecision(6)))
+  return symbol.unit === '' ? rounded.replace('-', '−') : `${rounded.replace('-', '−')} ${symbol.unit}`
+}
+
+/** `± 1.0 % shared`, `± 0.6 %`, or nothing. */
+export function symbolUncertainty(symbol: WorkingSymbol): string {
+  const u = symbol.standardUncertainty
+  if (symbol.value === null || u === null || !(u > 0)) return ''
+  const size = Math.abs(symbol.value)
+  const relative = size > 0 ? u / size : Infinity
+  const shared = symbol.uncertaintyKind === 'shared' ? ' shared' : ''
+  if (relative > 0.3 || relative < 1e-6) return `± ${roundToUncertainty(u, u).uncertainty}${shared}`
+  const percent = relative * 100
+  return `± ${percent >= 0.095 ? percent.toFixed(1) : percent.toPrecision(1)} %${shared}`
+}
+
+const list = (title: string, lines: readonly string[]) =>
+  lines.length > 0 ? [title, ...lines.map((line) => `  ${line}`)] : []
+
+/** The whole derivation as plain text, for a notebook or a mail. */
+export function workingText(working: Working): string {
+  const given = working.symbols.map((symbol) => {
+    const uncertainty = symbolUncertainty(symbol)
+    return `  ${symbol.symbol} = ${symbolValue(symbol)}${uncertainty === '' ? '' : ` (${uncertainty})`}: ${symbol.meaning}`
+  })
+  const resultUncertainty = symbolUncertainty(working.result)
+  return [
+    working.title,
+    working.formula,
+    ...given,
+    `Result: ${working.result.symbol} = ${symbolValue(working.result)}${resultUncertainty === '' ? '' : ` (${resultUncertainty})`}`,
+    ...list('Assumptions', working.assumptions),
+    ...list('Why', working.notes),
+    ...list('From', working.from),
+    ...list('Left out', working.leftOut),
+    `Formula: ${working.source}`,
+  ].join('\n')
+}
