@@ -61,6 +61,10 @@ export interface Ranking {
   readonly methodNumber: number
   readonly rankedBy: 'turnover-frequency' | 'rate'
   readonly referenceTemperatureK: number
+  /** the method's own, where the one in use was moved by the viewer */
+  readonly methodReferenceTemperatureK?: number
+  /** conversion that `temperatureForConversionK` of the rows speaks of */
+  readonly targetConversion?: number
   readonly confidenceLevel: number
   readonly draws: number
   readonly seed: number

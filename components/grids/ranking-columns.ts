@@ -1,0 +1,398 @@
+import {
+  type ColDef,
+  type ColGroupDef,
+  type ICellRendererParams,
+  type IRowNode,
+  type ValueGetterParams,
+} from 'ag-grid-community'
+import { createElement } from 'react'
+import { type Estimate } from '@/lib/analysis/estimate'
+import { type Ranking, type RankingRow } from '@/lib/domain/ranking'
+import { formatFixed } from '@/components/numbers/format-fixed'
+import { halfWidth } from '@/components/numbers/half-width'
+import { practicalUnits, type PracticalUnit } from '@/components/numbers/practical-units'
+import { type IntervalScale } from './interval-scale'
+import {
+  CautionsCell,
+  ColumnHeader,
+  DecisionCell,
+  IntervalCell,
+  PlainNumberCell,
+  QuantityCell,
+  RankIntervalCell,
+  SampleCell,
+  SpanCell,
+} from './ranking-cells'
+import { type RankingGridRow } from './ranking-grid-row'
+
+type Column = ColDef<RankingGridRow>
+type Group = ColGroupDef<RankingGridRow>
+
+/** What the person may write. The server refuses the rest, whatever the grid allows. */
+export interface RankingPermissions {
+  readonly canRemark: boolean
+  readonly canShortlist: boolean
+  readonly canDecide: boolean
+}
+
+/** Missing numbers come last, whichever way the column is sorted. */
+export function compareNumbers(
+  a: unknown,
+  b: unknown,
+  _nodeA?: IRowNode<RankingGridRow>,
+  _nodeB?: IRowNode<RankingGridRow>,
+  isDescending = false,
+): number {
+  const isNumberA = typeof a === 'number' && Number.isFinite(a)
+  const isNumberB = typeof b === 'number' && Number.isFinite(b)
+  if (isNumberA && isNumberB) return a - b
+  if (!isNumberA && !isNumberB) return 0
+  const lastly = isDescending ? -1 : 1
+  return isNumberA ? -lastly : lastly
+}
+
+const numeric = {
+  filter: 'agNumberColumnFilter',
+  comparator: compareNumbers,
+  type: 'rightAligned',
+  cellDataType: 'number',
+} as const
+
+const header = (unit: string, scale: IntervalScale | null = null) => ({
+  headerComponentParams: { innerHeaderComponent: ColumnHeader, innerHeaderComponentParams: { unit, scale } },
+})
+
+const rowOf = (parameters: ValueGetterParams<RankingGridRow> | ICellRendererParams<RankingGridRow>) =>
+  parameters.data?.row
+
+/** A value with half its interval behind ±. */
+function quantity(
+  colId: string,
+  headerName: string,
+  unit: PracticalUnit,
+  read: (row: RankingRow) => { estimate: Estimate | null; interval: readonly [number, number] | null },
+  more: Column = {},
+): Column {
+  const half = (row: RankingRow) => {
+    const width = halfWidth(read(row).interval)
+    return width === null ? null : unit.differenceFromSi(width)
+  }
+  return {
+    ...numeric,
+    ...header(unit.label),
+    colId,
+    headerName,
+    width: 128,
+    valueGetter: (parameters) => {
+      const row = rowOf(parameters)
+      const estimate = row ? read(row).estimate : null
+      return estimate === null ? null : unit.fromSi(estimate.value)
+    },
+    cellRenderer: (parameters: ICellRendererParams<RankingGridRow>) => {
+      const row = rowOf(parameters)
+      const value: unknown = parameters.value
+      return createElement(QuantityCell, {
+        value: typeof value === 'number' ? value : null,
+        half: row ? half(row) : null,
+      })
+    },
+    ...more,
+  }
+}
+
+/** A number without an interval of its own. */
+function plain(
+  colId: string,
+  headerName: string,
+  unit: string,
+  decimals: number,
+  read: (row: RankingRow) => number | null,
+  more: Column = {},
+): Column {
+  return {
+    ...numeric,
+    ...header(unit),
+    colId,
+    headerName,
+    width: 92,
+    valueGetter: (parameters) => {
+      const row = rowOf(parameters)
+      return row ? read(row) : null
+    },
+    cellRenderer: (parameters: ICellRendererParams<RankingGridRow>) => {
+      const value: unknown = parameters.value
+      return createElement(PlainNumberCell, { value: typeof value === 'number' ? value : null, decimals })
+    },
+    ...more,
+  }
+}
+
+/** Probability in words at the ends: a draw count cannot tell 1 from 0.9999. */
+export function formatProbability(probability: number | null): string {
+  if (probability === null || !Number.isFinite(probability)) return '–'
+  if (probability > 0.99) return '> 0.99'
+  if (probability < 0.01) return '< 0.01'
+  return formatFixed(probability, 2)
+}
+
+/** Species whose selectivity any sample states, the most abundant first. */
+export function selectivitySpecies(rows: readonly RankingRow[]): string[] {
+  const largest = new Map<string, number>()
+  for (const row of rows) {
+    for (const [species, value] of Object.entries(row.selectivity)) {
+      largest.set(species, Math.max(largest.get(species) ?? 0, value))
+    }
+  }
+  return [...largest].sort((a, b) => b[1] - a[1]).map(([species]) => species)
+}
+
+/** Digits of a formula as subscripts: `CH4` reads CH₄. */
+export function speciesLabel(species: string): string {
+  return species.replace(/\d/g, (digit) => '₀₁₂₃₄₅₆₇₈₉'[Number(digit)] ?? digit)
+}
+
+function rankGroup(): Column[] {
+  return [
+    {
+      ...numeric,
+      colId: 'rank',
+      headerName: 'Rank',
+      width: 76,
+      pinned: 'left',
+      sort: 'asc',
+      valueGetter: (parameters) => rowOf(parameters)?.rank ?? null,
+      cellRenderer: (parameters: ICellRendererParams<RankingGridRow>) => {
+        const value: unknown = parameters.value
+        return createElement(PlainNumberCell, { value: typeof value === 'number' ? value : null, decimals: 0 })
+      },
+    },
+    {
+      colId: 'sample',
+      headerName: 'Sample',
+      width: 190,
+      pinned: 'left',
+      filter: 'agTextColumnFilter',
+      valueGetter: (parameters) => {
+        const row = rowOf(parameters)
+        return row ? `${row.sampleCode} ${row.sampleName}` : ''
+      },
+      cellRenderer: SampleCell,
+      comparator: (a: unknown, b: unknown) => String(a).localeCompare(String(b), 'en', { numeric: true }),
+    },
+    {
+      ...numeric,
+      type: 'leftAligned',
+      colId: 'rankInterval',
+      headerName: '90 % of draws',
+      width: 122,
+      valueGetter: (parameters) => rowOf(parameters)?.rankInterval?.[0] ?? null,
+      cellRenderer: RankIntervalCell,
+    },
+  ]
+}
+
+function rateGroups(ranking: Ranking): Group[] {
+  const celsius = formatFixed(ranking.referenceTemperatureK - 273.15, 1).replace('.0', '')
+  const best = plain('probabilityBest', 'P(best)', '', 2, (row) => row.probabilityBest, {
+    width: 86,
+    cellRenderer: (parameters: ICellRendererParams<RankingGridRow>) => {
+      const probability = rowOf(parameters)?.probabilityBest ?? null
+      return createElement(
+        'span',
+        { className: probability !== null && probability < 0.01 ? 'text-ink-3' : '' },
+        formatProbability(probability),
+      )
+    },
+  })
+  const turnover: Group = {
+    groupId: 'turnover-frequency',
+    headerName: `turnover frequency at ${celsius} °C`,
+    children: [
+      quantity('turnoverFrequencyPerS', 'TOF', practicalUnits.turnoverFrequency, (row) => ({
+        estimate: row.turnoverFrequencyPerS,
+        interval: row.turnoverFrequencyInterval,
+      })),
+      ...(ranking.rankedBy === 'turnover-frequency' ? [best] : []),
+    ],
+  }
+  const rate: Group = {
+    groupId: 'rate',
+    headerName: `rate at ${celsius} °C`,
+    children: [
+      quantity('rateMolPerKgS', 'Rate', practicalUnits.rate, (row) => ({
+        estimate: row.rateMolPerKgS,
+        interval: row.rateInterval,
+      })),
+      ...(ranking.rankedBy === 'rate' ? [best] : []),
+    ],
+  }
+  return ranking.rankedBy === 'turnover-frequency' ? [turnover, rate] : [rate, turnover]
+}
+
+function slopeGroup(ranking: Ranking, scale: IntervalScale | null): Group {
+  const percent = formatFixed(ranking.confidenceLevel * 100, 1).replace('.0', '')
+  return {
+    groupId: 'activation-energy',
+    headerName: 'apparent activation energy and ln A (rate)',
+    children: [
+      quantity('activationEnergyJPerMol', 'Ea', practicalUnits.activationEnergy, (row) => ({
+        estimate: row.activationEnergyJPerMol,
+        interval: row.activationEnergyInterval,
+      })),
+      {
+        ...numeric,
+        ...header('', scale),
+        type: 'leftAligned',
+        colId: 'activationEnergyInterval',
+        headerName: `${percent} % interval`,
+        width: 132,
+        filter: false,
+        valueGetter: (parameters) => rowOf(parameters)?.activationEnergyInterval?.[0] ?? null,
+        cellRenderer: IntervalCell,
+      },
+      quantity('lnPreExponential', 'ln A', practicalUnits.lnRate, (row) => ({
+        estimate: row.lnPreExponential,
+        interval: row.lnPreExponentialInterval,
+      })),
+    ],
+  }
+}
+
+function stateGroup(ranking: Ranking): Group {
+  const target = ranking.targetConversion
+  return {
+    groupId: 'conversion',
+    headerName: 'selectivity and state',
+    children: [
+      plain(
+        'temperatureForConversionK',
+        target === undefined ? 'T for X' : `T for X = ${String(Number((target * 100).toPrecision(3)))} %`,
+        '°C',
+        1,
+        (row) =>
+          row.temperatureForConversionK === null
+            ? null
+            : practicalUnits.temperature.fromSi(row.temperatureForConversionK),
+        { width: 110 },
+      ),
+      ...selectivitySpecies(ranking.rows).map((species) =>
+        plain(
+          `selectivity.${species}`,
+          `S(${speciesLabel(species)})`,
+          'C-mol %',
+          1,
+          (row) => {
+            const value = row.selectivity[species]
+            return value === undefined ? null : value * 100
+          },
+          { width: 88 },
+        ),
+      ),
+      plain('carbonBalance', 'Carbon', 'out/in', 2, (row) => row.carbonBalance, { width: 82 }),
+      plain('decayPerH', 'Decay', '% h⁻¹', 1, (row) => (row.decayPerH === null ? null : row.decayPerH * 100), {
+        width: 80,
+      }),
+      plain('distinctTemperatures', 'Temps', '', 0, (row) => row.distinctTemperatures, { width: 78 }),
+      {
+        ...numeric,
+        ...header('°C'),
+        colId: 'span',
+        headerName: 'Span',
+        width: 124,
+        valueGetter: (parameters) => {
+          const row = rowOf(parameters)
+          return row?.lowestTemperatureK == null ? null : row.lowestTemperatureK - 273.15
+        },
+        cellRenderer: SpanCell,
+      },
+    ],
+  }
+}
+
+function judgementColumns(permissions: RankingPermissions): Column[] {
+  return [
+    {
+      colId: 'cautions',
+      headerName: 'Cautions',
+      width: 210,
+      filter: 'agTextColumnFilter',
+      autoHeight: true,
+      valueGetter: (parameters) =>
+        rowOf(parameters)
+          ?.cautions.map((caution) => caution.tag)
+          .join(', ') ?? '',
+      cellRenderer: CautionsCell,
+    },
+    {
+      colId: 'decision',
+      headerName: 'Decision',
+      width: 136,
+      filter: 'agTextColumnFilter',
+      autoHeight: true,
+      valueGetter: (parameters) =>
+        rowOf(parameters)
+          ?.runs.map((run) => `${run.code} ${run.decision?.replace('-', ' ') ?? run.state.replace('-', ' ')}`)
+          .join(', ') ?? '',
+      cellRenderer: DecisionCell,
+    },
+    {
+      colId: 'isShortlisted',
+      headerName: 'Shortlist',
+      width: 98,
+      cellDataType: 'boolean',
+      cellRenderer: 'agCheckboxCellRenderer',
+      cellEditor: 'agCheckboxCellEditor',
+      editable: permissions.canShortlist,
+      valueGetter: (parameters) => rowOf(parameters)?.isShortlisted ?? false,
+    },
+    {
+      ...numeric,
+      colId: 'priority',
+      headerName: 'Priority',
+      width: 92,
+      editable: permissions.canShortlist,
+      cellEditor: 'agNumberCellEditor',
+      cellEditorParams: { min: 1, max: 9, precision: 0 },
+      valueGetter: (parameters) => rowOf(parameters)?.priority ?? null,
+      cellRenderer: (parameters: ICellRendererParams<RankingGridRow>) => {
+        const value: unknown = parameters.value
+        return createElement(PlainNumberCell, { value: typeof value === 'number' ? value : null, decimals: 0 })
+      },
+    },
+    {
+      colId: 'remark',
+      headerName: 'Remark',
+      width: 240,
+      filter: 'agTextColumnFilter',
+      wrapText: true,
+      autoHeight: true,
+      editable: permissions.canRemark,
+      cellEditor: 'agTextCellEditor',
+      cellEditorParams: { maxLength: 500 },
+      valueGetter: (parameters) => rowOf(parameters)?.remark ?? '',
+    },
+  ]
+}
+
+/** All columns of the ranking, units in the headers. */
+export function buildRankingColumns(
+  ranking: Ranking,
+  permissions: RankingPermissions,
+  scale: IntervalScale | null,
+): (Column | Group)[] {
+  return [
+    ...rankGroup(),
+    ...rateGroups(ranking),
+    slopeGroup(ranking, scale),
+    stateGroup(ranking),
+    ...judgementColumns(permissions),
+  ]
+}
+
+/** Which working a column's number belongs to. */
+export function workingKeyOf(colId: string): string {
+  if (colId === 'activationEnergyInterval') return 'activationEnergyJPerMol'
+  if (colId === 'rankInterval' || colId === 'probabilityBest') return 'rank'
+  if (colId.startsWith('selectivity.')) return 'selectivity'
+  return colId
+}

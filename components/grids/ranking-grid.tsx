@@ -1,0 +1,171 @@
+'use client'
+
+import {
+  type CellClickedEvent,
+  type CellEditRequestEvent,
+  type CellKeyDownEvent,
+  type FullWidthCellKeyDownEvent,
+  type GridState,
+  type RowSelectionOptions,
+  type SelectionChangedEvent,
+  type StateUpdatedEvent,
+} from 'ag-grid-community'
+import { AgGridReact } from 'ag-grid-react'
+import { useMemo, useRef, useState } from 'react'
+import { type TemperWindow } from '@/components/charts/temper-scale'
+import { type CampaignSampleChange } from '@/lib/domain/campaign'
+import { type Ranking, type RankingRow } from '@/lib/domain/ranking'
+import { type Working } from '@/lib/analysis/working'
+import { GridProvider, gridTheme } from './grid-provider'
+import { intervalScale } from './interval-scale'
+import { type RankingCellContext } from './ranking-cells'
+import { buildRankingColumns, workingKeyOf, type RankingPermissions } from './ranking-columns'
+import { rankingGridRows, type RankingGridRow } from './ranking-grid-row'
+
+/** The cells that people write; the version goes with them. */
+export type RankingCellChange = Omit<CampaignSampleChange, 'version'>
+
+interface RankingGridProps {
+  readonly ranking: Ranking
+  readonly permissions: RankingPermissions
+  readonly window: TemperWindow
+  readonly selectedSampleIds: readonly string[]
+  readonly onSelectionChange: (sampleIds: string[]) => void
+  readonly onOpenWorking: (row: RankingRow, working: Working) => void
+  readonly onChangeCell: (row: RankingRow, change: RankingCellChange) => void
+  /** column order, widths, sort and filters as the person left them */
+  readonly savedState: GridState | null
+  readonly onStateChange: (state: GridState) => void
+  readonly styleNonce?: string
+}
+
+const rowSelection: RowSelectionOptions<RankingGridRow> = {
+  mode: 'multiRow',
+  checkboxes: true,
+  headerCheckbox: false,
+  enableClickSelection: false,
+  isRowSelectable: (node) => node.data?.row.fit != null,
+}
+const selectionColumnDef = { width: 44, pinned: 'left', resizable: false, headerName: '' } as const
+const defaultColDef = { resizable: true, sortable: true, suppressHeaderMenuButton: false, minWidth: 60 } as const
+/** above this many rows the grid scrolls inside a fixed height, so that not every row is in the page at once */
+const ROWS_SHOWN_WHOLE = 40
+const runHref = (runId: string) => `/runs/${runId}`
+
+/** What an edited cell asks to be changed; null when the value is none that may be stored. */
+export function cellChange(colId: string, value: unknown): RankingCellChange | null {
+  if (colId === 'remark') return { remark: typeof value === 'string' ? value.trim().slice(0, 500) : '' }
+  if (colId === 'isShortlisted') return { isShortlisted: value === true }
+  if (colId === 'priority') {
+    if (value === null || value === undefined || value === '') return { priority: null }
+    const priority = Number(value)
+    return Number.isInteger(priority) && priority >= 1 && priority <= 9 ? { priority } : null
+  }
+  return null
+}
+
+function savable(state: GridState): GridState {
+  const { columnOrder, columnSizing, columnVisibility, columnPinning, sort, filter } = state
+  return {
+    ...(columnOrder ? { columnOrder } : {}),
+    ...(columnSizing ? { columnSizing } : {}),
+    ...(columnVisibility ? { columnVisibility } : {}),
+    ...(columnPinning ? { columnPinning } : {}),
+    ...(sort ? { sort } : {}),
+    ...(filter ? { filter } : {}),
+  }
+}
+
+/** The ranking as a grid: sorted, filtered, written in by those who may, each computed number opening its working. */
+export function RankingGrid(props: RankingGridProps) {
+  const { ranking, permissions, onOpenWorking, onChangeCell, onStateChange, onSelectionChange } = props
+  const rows = useMemo(() => rankingGridRows(ranking.rows), [ranking.rows])
+  const scale = useMemo(
+    () =>
+      intervalScale(
+        ranking.rows.map((row) => {
+          if (row.activationEnergyInterval) {
+            return [row.activationEnergyInterval[0] / 1_000, row.activationEnergyInterval[1] / 1_000]
+          }
+          const value = row.activationEnergyJPerMol?.value
+          return value === undefined ? null : [value / 1_000, value / 1_000]
+        }),
+        112,
+      ),
+    [ranking.rows],
+  )
+  const columns = useMemo(() => buildRankingColumns(ranking, permissions, scale), [ranking, permissions, scale])
+  const context = useMemo<RankingCellContext>(
+    () => ({
+      rankedCount: ranking.rows.filter((row) => row.rank !== null).length,
+      scale,
+      window: props.window,
+      canDecide: permissions.canDecide,
+      runHref,
+    }),
+    [ranking.rows, scale, props.window, permissions.canDecide],
+  )
+  // read once: afterwards the grid itself is the place where the state lives
+  const [initialState] = useState<GridState>(() => ({
+    ...(props.savedState ?? {}),
+    rowSelection: [...props.selectedSampleIds],
+    partialColumnState: true,
+  }))
+  const saving = useRef<ReturnType<typeof setTimeout> | null>(null)
+
+  const openWorking = (event: CellClickedEvent<RankingGridRow> | CellKeyDownEvent<RankingGridRow>) => {
+    const row = event.data?.row
+    const working = row?.workings[workingKeyOf(event.column.getColId())]
+    if (row && working) onOpenWorking(row, working)
+  }
+  const onCellKeyDown = (event: CellKeyDownEvent<RankingGridRow> | FullWidthCellKeyDownEvent<RankingGridRow>) => {
+    if (!('column' in event)) return
+    const key = event.event instanceof KeyboardEvent ? event.event.key : ''
+    if (key === 'Enter' && event.column.getColDef().editable !== true) openWorking(event)
+  }
+  const onCellEditRequest = (event: CellEditRequestEvent<RankingGridRow>) => {
+    const change = cellChange(event.column.getColId(), event.newValue)
+    if (event.data && change) onChangeCell(event.data.row, change)
+  }
+  const onStateUpdated = (event: StateUpdatedEvent<RankingGridRow>) => {
+    if (event.sources.every((source) => ['gridInitializing', 'rowSelection', 'focusedCell', 'scroll'].includes(source)))
+      return
+    if (saving.current) clearTimeout(saving.current)
+    saving.current = setTimeout(() => onStateChange(savable(event.state)), 800)
+  }
+  const isWhole = rows.length <= ROWS_SHOWN_WHOLE
+  return (
+    <GridProvider>
+      <div className={isWhole ? 'ranking-grid w-full' : 'ranking-grid h-[70vh] w-full'}>
+        <AgGridReact<RankingGridRow>
+          theme={gridTheme}
+          {...(props.styleNonce ? { styleNonce: props.styleNonce } : {})}
+          rowData={rows}
+          columnDefs={columns}
+          defaultColDef={defaultColDef}
+          context={context}
+          getRowId={(parameters) => parameters.data.row.sampleId}
+          domLayout={isWhole ? 'autoHeight' : 'normal'}
+          rowSelection={rowSelection}
+          selectionColumnDef={selectionColumnDef}
+          initialState={initialState}
+          readOnlyEdit
+          singleClickEdit={false}
+          stopEditingWhenCellsLoseFocus
+          enableCellTextSelection={false}
+          suppressMovableColumns={false}
+          animateRows={false}
+          tooltipShowDelay={400}
+          overlayNoRowsTemplate="No sample has been tested in this campaign yet."
+          onCellClicked={openWorking}
+          onCellKeyDown={onCellKeyDown}
+          onCellEditRequest={onCellEditRequest}
+          onStateUpdated={onStateUpdated}
+          onSelectionChanged={(event: SelectionChangedEvent<RankingGridRow>) =>
+            onSelectionChange(event.api.getSelectedRows().map((entry) => entry.row.sampleId))
+          }
+        />
+      </div>
+    </GridProvider>
+  )
+}
