@@ -217,12 +217,16 @@ export function buildArrheniusOption(input: ArrheniusOptionInput): ChartOption {
     0.06,
     0.1,
   )
-  const largestResidual = all.reduce((most, point) => Math.max(most, Math.abs(point.residual) + point.u), 0.01) * 1.15
-  const celsius = roundTicks(1_000 / x.high - 273.15, 1_000 / x.low - 273.15, input.isCompact ? 6 : 12)
+  const residualRoom = all.reduce((most, point) => Math.max(most, Math.abs(point.residual) + point.u), 0.004) * 1.15
+  const residualLabel = roundTicks(0, residualRoom, 2).at(-1) ?? residualRoom
+  const residualDecimals = Math.max(2, -Math.floor(Math.log10(residualLabel)))
+  const celsius = roundTicks(1_000 / x.high - 273.15, 1_000 / x.low - 273.15, input.isCompact ? 8 : 14)
   const hottest = celsius[celsius.length - 1]
   const celsiusTicks = celsius.map((value) => abscissa(value + 273.15))
   const axisText = { color: colours.ink2, fontFamily: colours.fontFamily, fontSize: 12 }
   const rule = { show: true, lineStyle: { color: colours.lineStrong } }
+  // an axis stays at the edge of its grid, wherever zero lies
+  const edge = { ...rule, onZero: false }
   const hair = { show: true, lineStyle: { color: colours.line } }
   const none = { show: false }
   const left = 52
@@ -250,7 +254,7 @@ export function buildArrheniusOption(input: ArrheniusOptionInput): ChartOption {
         gridIndex: 0,
         min: x.low,
         max: x.high,
-        axisLine: rule,
+        axisLine: edge,
         splitLine: none,
         axisTick: { ...rule, customValues: xTicks },
         axisLabel: { ...axisText, customValues: xTicks, formatter: (value: number) => formatFixed(value, xDecimals) },
@@ -275,7 +279,7 @@ export function buildArrheniusOption(input: ArrheniusOptionInput): ChartOption {
         position: 'top',
         min: x.low,
         max: x.high,
-        axisLine: rule,
+        axisLine: edge,
         splitLine: none,
         axisTick: { ...rule, customValues: celsiusTicks },
         axisLabel: {
@@ -308,15 +312,15 @@ export function buildArrheniusOption(input: ArrheniusOptionInput): ChartOption {
       {
         type: 'value',
         gridIndex: 1,
-        min: -largestResidual,
-        max: largestResidual,
+        min: -residualRoom,
+        max: residualRoom,
         axisLine: none,
         axisTick: none,
         splitLine: none,
         axisLabel: {
           ...axisText,
-          customValues: [-largestResidual / 1.15, 0, largestResidual / 1.15],
-          formatter: (value: number) => (value === 0 ? 'resid.' : formatFixed(value, largestResidual < 0.1 ? 3 : 2)),
+          customValues: input.isCompact ? [0, residualLabel] : [-residualLabel, 0, residualLabel],
+          formatter: (value: number) => (value === 0 ? 'resid.' : formatFixed(value, residualDecimals)),
         },
       },
     ],

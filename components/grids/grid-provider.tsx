@@ -22,6 +22,7 @@ import {
 } from 'ag-grid-community'
 import { AgGridProvider } from 'ag-grid-react'
 import { type ReactNode } from 'react'
+import './grid.css'
 
 /** Only what the product's grids use. */
 const modules = [
@@ -57,8 +58,9 @@ export const gridTheme = themeQuartz.withParams({
   headerFontWeight: 600,
   headerFontSize: 12.5,
   headerColumnBorder: false,
-  headerColumnResizeHandleColor: 'var(--line)',
-  headerRowBorder: { color: 'var(--line-strong)' },
+  headerColumnResizeHandleColor: 'transparent',
+  pinnedColumnBorder: false,
+  headerRowBorder: false,
   fontFamily: 'inherit',
   dataFontSize: 14.5,
   fontSize: 14.5,
@@ -67,7 +69,7 @@ export const gridTheme = themeQuartz.withParams({
   wrapperBorder: false,
   wrapperBorderRadius: 0,
   borderRadius: 3,
-  cellHorizontalPadding: 8,
+  cellHorizontalPadding: 7,
   oddRowBackgroundColor: 'var(--paper)',
   rowHoverColor: 'color-mix(in srgb, var(--accent-wash) 45%, transparent)',
   selectedRowBackgroundColor: 'var(--accent-wash)',

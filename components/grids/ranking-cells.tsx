@@ -102,7 +102,7 @@ export function IntervalCell({ data, context }: CellProps) {
       aria-label={
         low === null || high === null ? 'no interval' : `${formatFixed(low, 1)} to ${formatFixed(high, 1)} kJ per mol`
       }
-      className="block"
+      className="inline-block align-middle"
     >
       {scale.ticks.map((tick) => (
         <line key={tick} x1={scale.toX(tick)} x2={scale.toX(tick)} y1="0" y2="24" stroke="var(--line)" />

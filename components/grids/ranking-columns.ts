@@ -28,6 +28,8 @@ import { type RankingGridRow } from './ranking-grid-row'
 type Column = ColDef<RankingGridRow>
 type Group = ColGroupDef<RankingGridRow>
 
+const GROUP_CLASS = 'ranking-group'
+
 /** What the person may write. The server refuses the rest, whatever the grid allows. */
 export interface RankingPermissions {
   readonly canRemark: boolean
@@ -82,7 +84,7 @@ function quantity(
     ...header(unit.label),
     colId,
     headerName,
-    width: 128,
+    width: 108,
     valueGetter: (parameters) => {
       const row = rowOf(parameters)
       const estimate = row ? read(row).estimate : null
@@ -114,7 +116,7 @@ function plain(
     ...header(unit),
     colId,
     headerName,
-    width: 92,
+    width: 84,
     valueGetter: (parameters) => {
       const row = rowOf(parameters)
       return row ? read(row) : null
@@ -151,14 +153,15 @@ export function speciesLabel(species: string): string {
   return species.replace(/\d/g, (digit) => '₀₁₂₃₄₅₆₇₈₉'[Number(digit)] ?? digit)
 }
 
-function rankGroup(): Column[] {
+/** Rank and sample stay in sight while the rest is scrolled; on a narrow screen only the sample does. */
+function rankColumns(isNarrow: boolean): Column[] {
   return [
     {
       ...numeric,
       colId: 'rank',
       headerName: 'Rank',
-      width: 76,
-      pinned: 'left',
+      width: 68,
+      pinned: isNarrow ? null : 'left',
       sort: 'asc',
       valueGetter: (parameters) => rowOf(parameters)?.rank ?? null,
       cellRenderer: (parameters: ICellRendererParams<RankingGridRow>) => {
@@ -167,9 +170,19 @@ function rankGroup(): Column[] {
       },
     },
     {
+      ...numeric,
+      type: [],
+      colId: 'rankInterval',
+      headerName: '90 % of draws',
+      width: 100,
+      pinned: isNarrow ? null : 'left',
+      valueGetter: (parameters) => rowOf(parameters)?.rankInterval?.[0] ?? null,
+      cellRenderer: RankIntervalCell,
+    },
+    {
       colId: 'sample',
       headerName: 'Sample',
-      width: 190,
+      width: isNarrow ? 150 : 178,
       pinned: 'left',
       filter: 'agTextColumnFilter',
       valueGetter: (parameters) => {
@@ -179,22 +192,14 @@ function rankGroup(): Column[] {
       cellRenderer: SampleCell,
       comparator: (a: unknown, b: unknown) => String(a).localeCompare(String(b), 'en', { numeric: true }),
     },
-    {
-      ...numeric,
-      type: 'leftAligned',
-      colId: 'rankInterval',
-      headerName: '90 % of draws',
-      width: 122,
-      valueGetter: (parameters) => rowOf(parameters)?.rankInterval?.[0] ?? null,
-      cellRenderer: RankIntervalCell,
-    },
   ]
 }
 
-function rateGroups(ranking: Ranking): Group[] {
+/** The quantity that ranks comes first, the other one further right. */
+function rateGroups(ranking: Ranking): { first: Group; second: Group } {
   const celsius = formatFixed(ranking.referenceTemperatureK - 273.15, 1).replace('.0', '')
   const best = plain('probabilityBest', 'P(best)', '', 2, (row) => row.probabilityBest, {
-    width: 86,
+    width: 74,
     cellRenderer: (parameters: ICellRendererParams<RankingGridRow>) => {
       const probability = rowOf(parameters)?.probabilityBest ?? null
       return createElement(
@@ -207,6 +212,7 @@ function rateGroups(ranking: Ranking): Group[] {
   const turnover: Group = {
     groupId: 'turnover-frequency',
     headerName: `turnover frequency at ${celsius} °C`,
+    headerClass: GROUP_CLASS,
     children: [
       quantity('turnoverFrequencyPerS', 'TOF', practicalUnits.turnoverFrequency, (row) => ({
         estimate: row.turnoverFrequencyPerS,
@@ -218,6 +224,7 @@ function rateGroups(ranking: Ranking): Group[] {
   const rate: Group = {
     groupId: 'rate',
     headerName: `rate at ${celsius} °C`,
+    headerClass: GROUP_CLASS,
     children: [
       quantity('rateMolPerKgS', 'Rate', practicalUnits.rate, (row) => ({
         estimate: row.rateMolPerKgS,
@@ -226,14 +233,17 @@ function rateGroups(ranking: Ranking): Group[] {
       ...(ranking.rankedBy === 'rate' ? [best] : []),
     ],
   }
-  return ranking.rankedBy === 'turnover-frequency' ? [turnover, rate] : [rate, turnover]
+  return ranking.rankedBy === 'turnover-frequency'
+    ? { first: turnover, second: rate }
+    : { first: rate, second: turnover }
 }
 
 function slopeGroup(ranking: Ranking, scale: IntervalScale | null): Group {
   const percent = formatFixed(ranking.confidenceLevel * 100, 1).replace('.0', '')
   return {
     groupId: 'activation-energy',
-    headerName: 'apparent activation energy and ln A (rate)',
+    headerName: 'apparent activation energy',
+    headerClass: GROUP_CLASS,
     children: [
       quantity('activationEnergyJPerMol', 'Ea', practicalUnits.activationEnergy, (row) => ({
         estimate: row.activationEnergyJPerMol,
@@ -242,7 +252,7 @@ function slopeGroup(ranking: Ranking, scale: IntervalScale | null): Group {
       {
         ...numeric,
         ...header('', scale),
-        type: 'leftAligned',
+        type: [],
         colId: 'activationEnergyInterval',
         headerName: `${percent} % interval`,
         width: 132,
@@ -263,6 +273,7 @@ function stateGroup(ranking: Ranking): Group {
   return {
     groupId: 'conversion',
     headerName: 'selectivity and state',
+    headerClass: GROUP_CLASS,
     children: [
       plain(
         'temperatureForConversionK',
@@ -288,7 +299,6 @@ function stateGroup(ranking: Ranking): Group {
           { width: 88 },
         ),
       ),
-      plain('carbonBalance', 'Carbon', 'out/in', 2, (row) => row.carbonBalance, { width: 82 }),
       plain('decayPerH', 'Decay', '% h⁻¹', 1, (row) => (row.decayPerH === null ? null : row.decayPerH * 100), {
         width: 80,
       }),
@@ -309,12 +319,16 @@ function stateGroup(ranking: Ranking): Group {
   }
 }
 
-function judgementColumns(permissions: RankingPermissions): Column[] {
-  return [
+const carbonColumn = plain('carbonBalance', 'Carbon', 'out/in', 2, (row) => row.carbonBalance, { width: 72 })
+
+/** Doubts and decisions; and the cells that people write. */
+function judgementColumns(permissions: RankingPermissions): { doubts: Column[]; written: Column[] } {
+  const doubts: Column[] = [
+    carbonColumn,
     {
       colId: 'cautions',
       headerName: 'Cautions',
-      width: 210,
+      width: 172,
       filter: 'agTextColumnFilter',
       autoHeight: true,
       valueGetter: (parameters) =>
@@ -326,7 +340,7 @@ function judgementColumns(permissions: RankingPermissions): Column[] {
     {
       colId: 'decision',
       headerName: 'Decision',
-      width: 136,
+      width: 104,
       filter: 'agTextColumnFilter',
       autoHeight: true,
       valueGetter: (parameters) =>
@@ -335,6 +349,8 @@ function judgementColumns(permissions: RankingPermissions): Column[] {
           .join(', ') ?? '',
       cellRenderer: DecisionCell,
     },
+  ]
+  const written: Column[] = [
     {
       colId: 'isShortlisted',
       headerName: 'Shortlist',
@@ -372,6 +388,7 @@ function judgementColumns(permissions: RankingPermissions): Column[] {
       valueGetter: (parameters) => rowOf(parameters)?.remark ?? '',
     },
   ]
+  return { doubts, written }
 }
 
 /** All columns of the ranking, units in the headers. */
@@ -379,13 +396,18 @@ export function buildRankingColumns(
   ranking: Ranking,
   permissions: RankingPermissions,
   scale: IntervalScale | null,
+  isNarrow: boolean,
 ): (Column | Group)[] {
+  const rates = rateGroups(ranking)
+  const judgement = judgementColumns(permissions)
   return [
-    ...rankGroup(),
-    ...rateGroups(ranking),
+    ...rankColumns(isNarrow),
+    rates.first,
     slopeGroup(ranking, scale),
+    ...judgement.doubts,
+    rates.second,
     stateGroup(ranking),
-    ...judgementColumns(permissions),
+    ...judgement.written,
   ]
 }
 

@@ -4,6 +4,7 @@ import {
   type CellClickedEvent,
   type CellEditRequestEvent,
   type CellKeyDownEvent,
+  type ColDef,
   type FullWidthCellKeyDownEvent,
   type GridState,
   type RowSelectionOptions,
@@ -36,6 +37,8 @@ interface RankingGridProps {
   /** column order, widths, sort and filters as the person left them */
   readonly savedState: GridState | null
   readonly onStateChange: (state: GridState) => void
+  readonly hasFilterRow: boolean
+  readonly isNarrow: boolean
   readonly styleNonce?: string
 }
 
@@ -46,11 +49,27 @@ const rowSelection: RowSelectionOptions<RankingGridRow> = {
   enableClickSelection: false,
   isRowSelectable: (node) => node.data?.row.fit != null,
 }
-const selectionColumnDef = { width: 44, pinned: 'left', resizable: false, headerName: '' } as const
-const defaultColDef = { resizable: true, sortable: true, suppressHeaderMenuButton: false, minWidth: 60 } as const
+const selectionColumnDef = { width: 40, pinned: 'left', resizable: false, headerName: '' } as const
+/** Filters stand in a row of their own, shown on request: a filter button in each header leaves no room for the unit. */
+const columnDefaults: ColDef<RankingGridRow> = {
+  resizable: true,
+  sortable: true,
+  suppressHeaderFilterButton: true,
+  minWidth: 48,
+  cellClassRules: {
+    'has-working': (parameters) =>
+      parameters.colDef.colId !== undefined && workingOf(parameters.data?.row, parameters.colDef.colId) !== null,
+  },
+}
 /** above this many rows the grid scrolls inside a fixed height, so that not every row is in the page at once */
 const ROWS_SHOWN_WHOLE = 40
 const runHref = (runId: string) => `/runs/${runId}`
+
+/** The derivation of the number in this cell, where the result carries one. */
+function workingOf(row: RankingRow | undefined, colId: string): Working | null {
+  const key = workingKeyOf(colId)
+  return row?.workings[key] ?? row?.fit?.workings[key] ?? null
+}
 
 /** What an edited cell asks to be changed; null when the value is none that may be stored. */
 export function cellChange(colId: string, value: unknown): RankingCellChange | null {
@@ -94,7 +113,11 @@ export function RankingGrid(props: RankingGridProps) {
       ),
     [ranking.rows],
   )
-  const columns = useMemo(() => buildRankingColumns(ranking, permissions, scale), [ranking, permissions, scale])
+  const columns = useMemo(
+    () => buildRankingColumns(ranking, permissions, scale, props.isNarrow),
+    [ranking, permissions, scale, props.isNarrow],
+  )
+  const defaultColDef = useMemo(() => ({ ...columnDefaults, floatingFilter: props.hasFilterRow }), [props.hasFilterRow])
   const context = useMemo<RankingCellContext>(
     () => ({
       rankedCount: ranking.rows.filter((row) => row.rank !== null).length,
@@ -115,7 +138,7 @@ export function RankingGrid(props: RankingGridProps) {
 
   const openWorking = (event: CellClickedEvent<RankingGridRow> | CellKeyDownEvent<RankingGridRow>) => {
     const row = event.data?.row
-    const working = row?.workings[workingKeyOf(event.column.getColId())]
+    const working = workingOf(row, event.column.getColId())
     if (row && working) onOpenWorking(row, working)
   }
   const onCellKeyDown = (event: CellKeyDownEvent<RankingGridRow> | FullWidthCellKeyDownEvent<RankingGridRow>) => {
@@ -155,6 +178,7 @@ export function RankingGrid(props: RankingGridProps) {
           enableCellTextSelection={false}
           suppressMovableColumns={false}
           animateRows={false}
+          alwaysShowHorizontalScroll
           tooltipShowDelay={400}
           overlayNoRowsTemplate="No sample has been tested in this campaign yet."
           onCellClicked={openWorking}

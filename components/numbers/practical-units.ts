@@ -32,7 +32,7 @@ export const practicalUnits = {
   },
   /** ln of a rate constant per gram: a shift, so its uncertainty is untouched */
   lnRate: {
-    label: 'ln (µmol g⁻¹ s⁻¹)',
+    label: 'A in µmol g⁻¹ s⁻¹',
     fromSi: (valueSi: number) => valueSi + ln(RATE_FACTOR),
     differenceFromSi: (differenceSi: number) => differenceSi,
   },

@@ -28,10 +28,12 @@ function leadingExponent(value: number): number {
 /** Decimals to which an uncertainty is stated: two figures when it starts with 1 or 2 (one would round by up to a third), else one. */
 export function decimalsForUncertainty(uncertainty: number): number {
   const exponent = leadingExponent(uncertainty)
-  const leadingDigits = Number((uncertainty / 10 ** exponent).toPrecision(1))
-  const lead = leadingDigits === 10 ? 1 : leadingDigits
-  const carried = leadingDigits === 10 ? exponent + 1 : exponent
-  return lead <= 2 ? 1 - carried : -carried
+  // to two figures first: 0.0996 is 0.10, not 0.1
+  const twoFigures = Number((uncertainty / 10 ** exponent).toPrecision(2))
+  const isCarried = twoFigures >= 10
+  const lead = isCarried ? 1 : Math.floor(twoFigures)
+  const place = isCarried ? exponent + 1 : exponent
+  return lead <= 2 ? 1 - place : -place
 }
 
 /**
