@@ -11,7 +11,7 @@ import {
 import { type AccountRow, selectAccount, selectAccountByEmail, selectSession } from '../../db/queries/people'
 import { refuseEvenly } from '../auth/even-refusal'
 import { hashPassword, PASSWORD_SCHEME, verifyPassword } from '../auth/password'
-import { networkOf, restoreBudget, takeFromBudget, tooManyAttempts } from '../auth/rate-limit'
+import { callerAddress, networkOf, restoreBudget, takeFromBudget, tooManyAttempts } from '../auth/rate-limit'
 import { hashSecret, makeSecret } from '../auth/secret'
 import { SESSION_LIFE_S } from '../auth/session'
 import { LOCKED_AFTER, secondsToWait } from '../auth/sign-in-delay'
@@ -173,4 +173,9 @@ export async function signOut(secret: string, now = new Date()): Promise<void> {
       entityId: sessionRefOf(idHash),
     })
   })
+}
+
+/** Where a request comes from, out of its headers. */
+export function callerFrom(headers: Headers, knownPeople: readonly string[] = []): Caller {
+  return { address: callerAddress(headers), userAgent: headers.get('user-agent') ?? '', knownPeople }
 }

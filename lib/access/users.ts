@@ -64,6 +64,13 @@ export async function listPeople(actor: Actor, now = new Date()): Promise<Person
   }))
 }
 
+/** One person, as the admin sees them. */
+export async function getPerson(actor: Actor, userId: string): Promise<PersonSummary> {
+  const person = (await listPeople(actor)).find((one) => one.id === userId)
+  hideUnless(person !== undefined)
+  return person
+}
+
 /** Names to choose members from, for leads and admins. */
 export async function listPersonNames(actor: Actor): Promise<PersonName[]> {
   authorise(can.listPeople(actor))

@@ -44,6 +44,8 @@ const titleOf: Record<AppErrorCode, string> = {
 const PRIVATE = { 'Cache-Control': 'private, no-store', Vary: 'Cookie, Authorization' } as const
 /** Longest JSON request; files go by multipart, which is counted while it streams. */
 const MAXIMUM_JSON_BYTES = 1_000_000
+/** Marks an answer whose body is for this one reading. */
+const HOLDS_SECRET = 'x-shown-once'
 
 interface Problem {
   readonly status: number
@@ -155,6 +157,8 @@ export function answer(
     readonly status?: number
     readonly record?: { readonly id: string; readonly version: number }
     readonly location?: string
+    /** the body holds a secret: a repeated request is told so and does not get it again */
+    readonly holdsSecret?: boolean
     readonly headers?: Readonly<Record<string, string>>
   } = {},
 ): Response {
@@ -163,6 +167,7 @@ export function answer(
     ...options.headers,
     ...(options.record === undefined ? {} : { ETag: etagOf(options.record) }),
     ...(options.location === undefined ? {} : { Location: options.location }),
+    ...(options.holdsSecret === true ? { [HOLDS_SECRET]: '1' } : {}),
   }
   if (body === undefined || options.status === 204)
     return new Response(null, { status: options.status ?? 204, headers })
@@ -230,16 +235,24 @@ export function readQuery<T extends z.ZodType>(request: Request, schema: T): z.o
 async function runOnce(request: Request, actor: Actor, key: string, work: () => Promise<Response>): Promise<Response> {
   const body = await request.clone().text()
   const { pathname, search } = new URL(request.url)
+  let made: Response | null = null
   const stored = await onceForKey(actor, key, { method: request.method, path: pathname + search, body }, async () => {
-    const made = await work()
-    const text = await made.text()
+    made = await work()
+    // What holds a secret is answered and not kept: the table of answers would give it away.
+    if (made.headers.has(HOLDS_SECRET)) return { status: made.status, body: null, headers: { [HOLDS_SECRET]: '1' } }
     const kept: Record<string, string> = {}
     for (const name of ['etag', 'location', 'content-type']) {
       const value = made.headers.get(name)
       if (value !== null) kept[name] = value
     }
-    return { status: made.status, body: text, headers: kept }
+    return { status: made.status, body: await made.clone().text(), headers: kept }
   })
+  if (made !== null) return made
+  if (Object.hasOwn(stored.headers, HOLDS_SECRET))
+    throw new AppError(
+      'conflict',
+      'This was done with the first request. Its answer held a secret, which is shown once and not kept; make a new one if it was lost.',
+    )
   const text = typeof stored.body === 'string' && stored.body !== '' ? stored.body : null
   return new Response(text, { status: stored.status, headers: { ...PRIVATE, ...stored.headers } })
 }

@@ -175,7 +175,12 @@ describe('own sessions', () => {
     const actor = await actorNow(secret, after(1))
     const from = caller()
     await expect(
-      changePassword(actor, { currentPassword: 'not this one at all', newPassword: 'harbour violin mosaic quartz' }, from, after(2)),
+      changePassword(
+        actor,
+        { currentPassword: 'not this one at all', newPassword: 'harbour violin mosaic quartz' },
+        from,
+        after(2),
+      ),
     ).rejects.toMatchObject({ code: 'unprocessable' })
     expect(await actorOfSession(secret, after(3))).not.toBeNull()
     const changed = await changePassword(

@@ -1,0 +1,27 @@
+import { z } from 'zod'
+import { getDraft, removeDraft, saveDraft } from '@/lib/access/drafts'
+import { answer, handle, readJson } from '../../_respond'
+
+interface Context {
+  params: Promise<{ form: string }>
+}
+const draftSchema = z.strictObject({ content: z.json() })
+
+/** What was typed into a form and not sent: `{ "draft": null }` when there is nothing. */
+export async function GET(request: Request, context: Context): Promise<Response> {
+  return handle(request, async (actor) => ({ draft: await getDraft(actor, (await context.params).form) }))
+}
+
+export async function PUT(request: Request, context: Context): Promise<Response> {
+  return handle(request, async (actor) => {
+    const { content } = await readJson(request, draftSchema)
+    return { draft: await saveDraft(actor, (await context.params).form, content) }
+  })
+}
+
+export async function DELETE(request: Request, context: Context): Promise<Response> {
+  return handle(request, async (actor) => {
+    await removeDraft(actor, (await context.params).form)
+    return answer(undefined, { status: 204 })
+  })
+}

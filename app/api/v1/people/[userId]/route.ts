@@ -1,0 +1,26 @@
+import { changePerson, getPerson } from '@/lib/access/users'
+import { personChangeSchema } from '@/lib/domain/person'
+import { answer, handle, readJson, versionFromIfMatch } from '../../_respond'
+
+interface Context {
+  params: Promise<{ userId: string }>
+}
+const changeSchema = personChangeSchema.omit({ version: true })
+
+export async function GET(request: Request, context: Context): Promise<Response> {
+  return handle(request, async (actor) => {
+    const person = await getPerson(actor, (await context.params).userId)
+    return answer(person, { record: person })
+  })
+}
+
+/** Changes the house role, or closes and opens the account. */
+export async function PATCH(request: Request, context: Context): Promise<Response> {
+  return handle(request, async (actor) => {
+    const { userId } = await context.params
+    const version = versionFromIfMatch(request, userId)
+    await changePerson(actor, userId, { ...(await readJson(request, changeSchema)), version })
+    const person = await getPerson(actor, userId)
+    return answer(person, { record: person })
+  })
+}

@@ -1,0 +1,184 @@
+import { afterAll, beforeAll, describe, expect, test, vi } from 'vitest'
+import { z } from 'zod'
+import { answer, handle, handlePublic, readJson, versionFromIfMatch } from '@/app/api/v1/_respond'
+import { type OpenDatabase } from '@/db/client'
+import { createToken } from '@/lib/access/tokens'
+import { AnalysisError } from '@/lib/analysis/analysis-error'
+import { AppError, appErrorCodes } from '@/lib/domain/errors'
+import { actorOf } from '@/tests/support/actors'
+import { freshDatabase } from '@/tests/support/fresh-database'
+import { makePerson } from '@/tests/support/make-person'
+
+let opened: OpenDatabase
+let secret: string
+beforeAll(async () => {
+  opened = await freshDatabase()
+  const person = await makePerson('researcher', { passwordHash: 'none' })
+  const token = await createToken(actorOf('researcher', { userId: person.id }), {
+    name: 'test',
+    scopes: ['read', 'write'],
+    campaignId: null,
+    validDays: 1,
+  })
+  secret = token.secret
+})
+afterAll(() => opened.close())
+
+const post = (body: unknown, headers: Record<string, string> = {}) =>
+  new Request('http://localhost:3000/api/v1/things', {
+    method: 'POST',
+    headers: { 'Content-Type': 'application/json', Authorization: `Bearer ${secret}`, ...headers },
+    body: JSON.stringify(body),
+  })
+const get = () => new Request('http://localhost:3000/api/v1/things')
+
+describe('a failure', () => {
+  /* The statuses as the product describes them, written out once more by hand. */
+  test.each([
+    ['not-signed-in', 401],
+    ['not-allowed', 403],
+    ['not-found', 404],
+    ['conflict', 409],
+    ['stale', 412],
+    ['precondition-required', 428],
+    ['invalid', 400],
+    ['unprocessable', 422],
+    ['too-large', 413],
+    ['unsupported', 415],
+    ['too-many-requests', 429],
+    ['bad-origin', 403],
+    ['busy', 503],
+    ['storage-full', 507],
+  ] as const)('%s answers %i', async (code, status) => {
+    const response = await handlePublic(get(), async () => {
+      throw new AppError(code, 'Run 42 has 2 temperatures; a fit needs 3.', { issues: [{ field: 'a', message: 'b' }] })
+    })
+    expect(response.status).toBe(status)
+    expect(await response.json()).toMatchObject({
+      type: `urn:inverse-kelvin:problem:${code}`,
+      status,
+      code,
+      detail: 'Run 42 has 2 temperatures; a fit needs 3.',
+      issues: [{ field: 'a', message: 'b' }],
+    })
+  })
+  test('of every code is listed above', () => {
+    expect(appErrorCodes).toHaveLength(14)
+  })
+
+  test('wrapped by another layer keeps its code', async () => {
+    const response = await handlePublic(get(), async () => {
+      throw new Error('query failed', { cause: new AppError('conflict', 'There is one already.') })
+    })
+    expect(response.status).toBe(409)
+  })
+
+  test('of the analysis answers 422 with its own code and numbers', async () => {
+    const response = await handlePublic(get(), async () => {
+      throw new AnalysisError('too-few-points', 'A line needs 3 points; there are 2.', { count: 2 })
+    })
+    expect(response.status).toBe(422)
+    expect(await response.json()).toMatchObject({ code: 'too-few-points', details: { count: 2 } })
+  })
+
+  test('with a time to wait says it in the header', async () => {
+    const response = await handlePublic(get(), async () => {
+      throw new AppError('busy', 'Later.', { retryAfterS: 1.2 })
+    })
+    expect(response.headers.get('retry-after')).toBe('2')
+  })
+
+  test('nobody foresaw shows nothing of the inside and is logged with a reference', async () => {
+    const log = vi.spyOn(console, 'error').mockImplementation(() => {})
+    const response = await handlePublic(get(), async () => {
+      throw new Error('password of the database is hunter2', { cause: new Error('deep') })
+    })
+    expect(response.status).toBe(500)
+    const text = await response.text()
+    expect(text).not.toMatch(/hunter2|deep|\.ts/)
+    const requestId: unknown = JSON.parse(text).requestId
+    expect(log.mock.calls).toHaveLength(1)
+    const line = String(log.mock.calls[0]?.[0])
+    expect(line).toContain(String(requestId))
+    expect(line).toContain('deep')
+    expect(line).not.toContain('\n')
+    log.mockRestore()
+  })
+})
+
+describe('a version', () => {
+  const withMatch = (value: string) => new Request('http://localhost/', { headers: { 'If-Match': value } })
+  test('is read from strong and weak marks of this record', () => {
+    expect(versionFromIfMatch(withMatch('W/"run.7"'), 'run')).toBe(7)
+    expect(versionFromIfMatch(withMatch('"run.7"'), 'run')).toBe(7)
+    expect(versionFromIfMatch(withMatch('W/"a.b.12"'), 'a.b')).toBe(12)
+  })
+  test('is written so that it can be read', () => {
+    const etag = answer({}, { record: { id: 'x.y', version: 3 } }).headers.get('etag') ?? ''
+    expect(versionFromIfMatch(withMatch(etag), 'x.y')).toBe(3)
+  })
+  test.each(['*', '', '"run"', 'run.7', 'W/"run.7", W/"run.8"', 'W/"run.-1"', 'W/"other.7"'])(
+    '%j is refused',
+    (value) => {
+      expect(() => versionFromIfMatch(withMatch(value), 'run')).toThrow(expect.objectContaining({ code: 'stale' }))
+    },
+  )
+})
+
+describe('a repeated request', () => {
+  const schema = z.strictObject({ name: z.string() })
+  let count = 0
+  const make = (request: Request) =>
+    handle(request, async () => {
+      const { name } = await readJson(request, schema)
+      count += 1
+      return answer({ name, count }, { status: 201, location: '/there', record: { id: name, version: 1 } })
+    })
+
+  test('gets the first answer again, headers included, and the work is done once', async () => {
+    count = 0
+    const headers = { 'Idempotency-Key': 'a-key-of-my-own' }
+    const first = await make(post({ name: 'a' }, headers))
+    const second = await make(post({ name: 'a' }, headers))
+    expect(count).toBe(1)
+    expect([first.status, second.status]).toEqual([201, 201])
+    expect(await second.text()).toBe(await first.text())
+    for (const name of ['etag', 'location', 'content-type', 'cache-control'])
+      expect(second.headers.get(name), name).toBe(first.headers.get(name))
+  })
+
+  test('without a key is done again', async () => {
+    count = 0
+    await make(post({ name: 'a' }))
+    await make(post({ name: 'a' }))
+    expect(count).toBe(2)
+  })
+
+  test('that failed the first time may be mended and sent again with its key', async () => {
+    count = 0
+    const headers = { 'Idempotency-Key': 'a-key-for-mending' }
+    expect((await make(post({ nme: 'a' }, headers))).status).toBe(400)
+    expect((await make(post({ name: 'a' }, headers))).status).toBe(201)
+    expect(count).toBe(1)
+  })
+
+  test('while the first is running is asked to wait', async () => {
+    let finish: () => void = () => {}
+    const finished = new Promise<void>((done) => (finish = done))
+    let begun: () => void = () => {}
+    const hasBegun = new Promise<void>((done) => (begun = done))
+    const headers = { 'Idempotency-Key': 'a-key-for-two' }
+    const first = handle(post({ name: 'a' }, headers), async () => {
+      begun()
+      await finished
+      return { ok: true }
+    })
+    await hasBegun
+    const second = await make(post({ name: 'a' }, headers))
+    expect(second.status).toBe(409)
+    expect(second.headers.get('retry-after')).toBe('2')
+    finish()
+    expect((await first).status).toBe(200)
+    expect(await (await make(post({ name: 'a' }, headers))).json()).toEqual({ ok: true })
+  })
+})
