@@ -1,23 +1,40 @@
 import { z } from 'zod'
 import { roleSchema, tokenScopes, tokenScopeSchema, type Role, type TokenScope } from './role'
-import { idSchema, nameSchema } from './text'
+import { idSchema } from './text'
 
-export const emailSchema = z.email().trim().toLowerCase().max(254)
+export const emailSchema = z
+  .string()
+  .trim()
+  .toLowerCase()
+  .max(254, 'An e-mail address has at most 254 characters.')
+  .pipe(z.email('An e-mail address looks like name@laboratory.example.'))
+/** At sign-in any text is looked up as it is. */
+const typedEmailSchema = z
+  .string()
+  .trim()
+  .min(1, 'Type your e-mail address.')
+  .max(254, 'An e-mail address has at most 254 characters.')
 /** As typed: no trimming, no truncation; how good it is, is judged when it is set. */
-const passwordSchema = z.string().min(1).max(2_000)
-const displayNameSchema = nameSchema.max(100)
+const passwordSchema = z.string().min(1, 'Type the password.').max(2_000, 'A password has at most 1,024 bytes.')
+const displayNameSchema = z
+  .string()
+  .trim()
+  .min(1, 'Type the name that others see.')
+  .max(100, 'A name has at most 100 characters.')
 
-export const signInSchema = z.strictObject({ email: z.string().trim().min(1).max(254), password: passwordSchema })
+export const signInSchema = z.strictObject({ email: typedEmailSchema, password: passwordSchema })
+
+const oneTimeCodeSchema = z.string().trim().min(1, 'Type or paste the code.').max(100, 'This is longer than a code.')
 
 export const setUpSchema = z.strictObject({
-  code: z.string().trim().min(1).max(100),
+  code: oneTimeCodeSchema,
   email: emailSchema,
   displayName: displayNameSchema,
   password: passwordSchema,
 })
 
 export const acceptInvitationSchema = z.strictObject({
-  code: z.string().trim().min(1).max(100),
+  code: oneTimeCodeSchema,
   password: passwordSchema,
 })
 
@@ -37,8 +54,16 @@ export const profileChangeSchema = z.strictObject({ displayName: displayNameSche
 export const passwordChangeSchema = z.strictObject({ currentPassword: passwordSchema, newPassword: passwordSchema })
 
 export const newTokenSchema = z.strictObject({
-  name: nameSchema.max(100),
-  scopes: z.array(tokenScopeSchema).min(1).max(tokenScopes.length).default(['read', 'intake', 'write']),
+  name: z
+    .string()
+    .trim()
+    .min(1, 'Name the computer or script that will use the token.')
+    .max(100, 'A name has at most 100 characters.'),
+  scopes: z
+    .array(tokenScopeSchema)
+    .min(1, 'Choose at least one thing the token may do.')
+    .max(tokenScopes.length)
+    .default(['read', 'intake', 'write']),
   campaignId: idSchema.nullable().default(null),
   /** days until it ends; at most a year, so that a forgotten one does not live for ever */
   validDays: z.int().gte(1).lte(366).default(90),
@@ -47,7 +72,7 @@ export type NewToken = z.infer<typeof newTokenSchema>
 
 /** A token asked for with name and password, by a script that has no session. */
 export const tokenRequestSchema = newTokenSchema.extend({
-  email: z.string().trim().min(1).max(254),
+  email: typedEmailSchema,
   password: passwordSchema,
 })
 

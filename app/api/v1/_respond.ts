@@ -3,6 +3,7 @@ import { z } from 'zod'
 import { actorFromRequest } from '@/lib/access/actor'
 import { onceForKey } from '@/lib/access/idempotency'
 import { AnalysisError } from '@/lib/analysis/analysis-error'
+import { issuesOf } from '@/lib/domain/action-answer'
 import { AppError, appErrorOf, type AppErrorCode, type FieldIssue } from '@/lib/domain/errors'
 import { type Actor } from '@/lib/domain/role'
 
@@ -81,11 +82,6 @@ function problemAnswer(problem: Problem, requestId: string): Response {
       },
     },
   )
-}
-
-/** The fields at fault out of a failed parse, one entry each, by their path: `feed.0.species`. */
-export function issuesOf(error: z.ZodError): FieldIssue[] {
-  return error.issues.map((issue) => ({ field: issue.path.map(String).join('.'), message: issue.message }))
 }
 
 function answerToError(error: unknown, requestId: string): Response {
