@@ -62,9 +62,7 @@ export const NOT_COMBUSTIBLE: readonly Species[] = [
  * @returns lower and upper limit as mole fractions in air [-] with the edition each is from; null where none is tabulated
  * @example propane: 0.017 (IEC) to 0.109 (IEC)
  */
-export function widestFlammableRange(
-  species: Species,
-): {
+export function widestFlammableRange(species: Species): {
   readonly lower: number
   readonly upper: number
   readonly lowerEdition: string
