@@ -1,4 +1,5 @@
 import { AnalysisError } from '../analysis-error'
+import { elementCount } from '../element-count'
 
 /** Standard atomic weights, conventional values [g mol-1]. Source: IUPAC, Standard atomic weights of the elements 2021. */
 export const ATOMIC_WEIGHTS_G_PER_MOL: Readonly<Record<string, number>> = {
@@ -76,40 +77,6 @@ export const ATOMIC_WEIGHTS_G_PER_MOL: Readonly<Record<string, number>> = {
 const AIR_G_PER_MOL = 28.9644
 
 /**
- * Atoms in a formula unit.
- *
- * Element symbols with counts and round brackets: `CO2`, `CH3OCH3`, `Ni(CO)4`. Charges and isotopes are not read.
- * Source: common notation.
- *
- * @param formula - formula [-]
- * @returns count of atoms by element [-], in the order met; null where the text is not such a formula
- * @example `Ni(CO)4` has 1 Ni, 4 C, 4 O
- */
-export function atomsIn(formula: string): Readonly<Record<string, number>> | null {
-  const stack: Record<string, number>[] = [{}]
-  const pattern = /([A-Z][a-z]?)(\d*)|(\()|(\))(\d*)/gy
-  while (pattern.lastIndex < formula.length) {
-    const match = pattern.exec(formula)
-    const top = stack[stack.length - 1]
-    if (match === null || top === undefined) return null
-    const [, element, count, open, close, repeat] = match
-    if (element !== undefined) {
-      if (!Object.hasOwn(ATOMIC_WEIGHTS_G_PER_MOL, element)) return null
-      top[element] = (top[element] ?? 0) + (count === '' || count === undefined ? 1 : Number(count))
-    } else if (open !== undefined) stack.push({})
-    else if (close !== undefined) {
-      const below = stack[stack.length - 2]
-      if (below === undefined) return null
-      stack.pop()
-      const times = repeat === '' || repeat === undefined ? 1 : Number(repeat)
-      for (const [name, n] of Object.entries(top)) below[name] = (below[name] ?? 0) + times * n
-    }
-  }
-  const atoms = stack[0]
-  return stack.length === 1 && atoms !== undefined && Object.keys(atoms).length > 0 ? atoms : null
-}
-
-/**
  * Molar mass of a species from its formula.
  *
  * M = Σ n_i A_i
@@ -124,14 +91,16 @@ export function atomsIn(formula: string): Readonly<Record<string, number>> | nul
  */
 export function molarMass(species: string): number {
   if (species === 'air') return AIR_G_PER_MOL / 1_000
-  const atoms = atomsIn(species)
-  if (atoms === null)
-    throw new AnalysisError(
-      'unknown-species',
-      `“${species}” is not a formula of known elements; enter its molar mass.`,
-      { species },
-    )
   let sum = 0
-  for (const [element, count] of Object.entries(atoms)) sum += count * (ATOMIC_WEIGHTS_G_PER_MOL[element] ?? NaN)
+  for (const [element, count] of Object.entries(elementCount(species))) {
+    const weight = Object.hasOwn(ATOMIC_WEIGHTS_G_PER_MOL, element) ? ATOMIC_WEIGHTS_G_PER_MOL[element] : undefined
+    if (weight === undefined)
+      throw new AnalysisError(
+        'unknown-species',
+        `“${element}” in “${species}” is not a known element; enter the molar mass.`,
+        { species },
+      )
+    sum += count * weight
+  }
   return sum / 1_000
 }
