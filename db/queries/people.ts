@@ -1,4 +1,4 @@
-import { and, count, desc, eq, gt, isNull, max, sql } from 'drizzle-orm'
+import { and, count, desc, eq, gt, inArray, isNull, max, sql } from 'drizzle-orm'
 import {
   campaignRoleSchema,
   roleSchema,
@@ -244,9 +244,17 @@ export async function selectWorkingAdmins(db: Executor): Promise<string[]> {
   return rows.map((row) => row.id)
 }
 
-export async function selectCampaignExists(db: Executor, campaignId: string): Promise<boolean> {
-  const rows = await db.select({ id: campaigns.id }).from(campaigns).where(eq(campaigns.id, campaignId)).limit(1)
-  return rows.length > 0
+/** Campaigns by code, within a scope that may be empty. */
+export async function selectCampaignNames(
+  db: Executor,
+  scope: 'all' | readonly string[],
+): Promise<{ id: string; code: string; name: string }[]> {
+  if (scope !== 'all' && scope.length === 0) return []
+  return db
+    .select({ id: campaigns.id, code: campaigns.code, name: campaigns.name })
+    .from(campaigns)
+    .where(scope === 'all' ? undefined : inArray(campaigns.id, [...scope]))
+    .orderBy(campaigns.code)
 }
 
 /** An unused code that has not run out. */
