@@ -1,5 +1,6 @@
 'use client'
 
+import { Button } from '@/components/ui/button'
 import { type RankingCellChange } from '@/components/grids/ranking-grid'
 import { type RankingRow } from '@/lib/domain/ranking'
 
@@ -34,7 +35,6 @@ interface CellConflictProps {
 
 /** Both values side by side when two people wrote the same cell, or the sentence of a refusal. */
 export function CellConflict({ trouble, onKeepTheirs, onWriteMine }: CellConflictProps) {
-  const button = 'min-h-8 rounded border border-line-strong bg-sheet px-3 py-1 text-ink'
   return (
     <div role="alert" className="mx-4 my-2 rounded bg-fault-wash px-3 py-2 text-fault sm:mx-6">
       {trouble.theirs ? (
@@ -44,12 +44,8 @@ export function CellConflict({ trouble, onKeepTheirs, onWriteMine }: CellConflic
             it is now {words(standing(trouble.theirs, trouble.change))}; you wrote {words(trouble.change)}.
           </p>
           <p className="mt-2 mb-0 flex flex-wrap gap-2">
-            <button type="button" className={button} onClick={onKeepTheirs}>
-              Keep theirs
-            </button>
-            <button type="button" className={button} onClick={onWriteMine}>
-              Write mine
-            </button>
+            <Button onClick={onKeepTheirs}>Keep theirs</Button>
+            <Button onClick={onWriteMine}>Write mine</Button>
           </p>
         </>
       ) : (
@@ -57,9 +53,7 @@ export function CellConflict({ trouble, onKeepTheirs, onWriteMine }: CellConflic
           <span>
             {trouble.row.sampleCode}: {trouble.message} The cell shows what is stored.
           </span>
-          <button type="button" className={button} onClick={onKeepTheirs}>
-            Understood
-          </button>
+          <Button onClick={onKeepTheirs}>Understood</Button>
         </p>
       )}
     </div>

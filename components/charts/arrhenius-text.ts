@@ -1,7 +1,7 @@
 import { formatFixed } from '@/components/numbers/format-fixed'
 import { halfWidth } from '@/components/numbers/half-width'
 import { practicalUnits } from '@/components/numbers/practical-units'
-import { roundToUncertainty } from '@/components/numbers/round-to-uncertainty'
+import { estimateAsText } from '@/lib/domain/format-estimate'
 import { type ArrheniusSeries } from './arrhenius-chart-option'
 import { type ChartTable } from './chart-frame'
 
@@ -12,14 +12,14 @@ const celsius = (temperatureK: number, decimals: number) =>
 export function arrheniusSummary(series: readonly ArrheniusSeries[]): string {
   if (series.length === 0) return 'No sample is selected.'
   const sentences = series.map((entry) => {
-    const ea = roundToUncertainty(
+    const ea = estimateAsText(
       practicalUnits.activationEnergy.fromSi(entry.fit.activationEnergyJPerMol.value),
       mapHalf(halfWidth(entry.fit.intervals.activationEnergyJPerMol)),
+      'kJ mol⁻¹',
     )
     const used = entry.fit.points.filter((point) => point.isUsed).length
     const out = entry.fit.points.length - used
-    const interval = ea.uncertainty === '' ? 'no interval' : `± ${ea.uncertainty}`
-    return `${entry.code}: ${ea.value} ${interval} kJ mol⁻¹ from ${used} holds, ${celsius(entry.fit.lowestTemperatureK, 0)} to ${celsius(entry.fit.highestTemperatureK, 0)} °C${out > 0 ? `, ${out} left out` : ''}`
+    return `${entry.code}: ${ea} from ${used} holds, ${celsius(entry.fit.lowestTemperatureK, 0)} to ${celsius(entry.fit.highestTemperatureK, 0)} °C${out > 0 ? `, ${out} left out` : ''}`
   })
   return `${sentences.join('; ')}. Bars are one standard uncertainty; bands are pointwise and hold own scatter only; hollow points are not in the line.`
 }

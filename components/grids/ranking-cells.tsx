@@ -4,7 +4,7 @@ import { type CustomCellRendererProps, type CustomInnerHeaderProps } from 'ag-gr
 import { SampleSymbolMark } from '@/components/charts/sample-symbol-mark'
 import { temperCssColour, type TemperWindow } from '@/components/charts/temper-scale'
 import { formatFixed } from '@/components/numbers/format-fixed'
-import { roundToUncertainty } from '@/components/numbers/round-to-uncertainty'
+import { ValueWithUncertainty } from '@/components/ui/value-with-uncertainty'
 import { CautionTag } from '@/components/working/caution-tag'
 import { type IntervalScale } from './interval-scale'
 import { type RankingGridRow } from './ranking-grid-row'
@@ -21,19 +21,14 @@ type CellProps = CustomCellRendererProps<RankingGridRow, unknown, RankingCellCon
 
 const dash = <span className="text-ink-3">–</span>
 
-/** Value large, uncertainty small, both rounded to what the uncertainty justifies. */
+/** Value large, uncertainty small; where none is known a mark says so. */
 export function QuantityCell({ value, half }: { value: number | null; half: number | null }) {
   if (value === null || !Number.isFinite(value)) return dash
-  const rounded = roundToUncertainty(value, half)
   return (
-    <span className="whitespace-nowrap">
-      {rounded.value}
-      {rounded.uncertainty === '' ? (
-        <span className="text-[.8em] text-ink-3"> ± ?</span>
-      ) : (
-        <span className="text-[.84em] text-ink-3"> ± {rounded.uncertainty}</span>
-      )}
-    </span>
+    <>
+      <ValueWithUncertainty value={value} uncertainty={half} />
+      {half === null ? <span className="text-[.8em] text-ink-3"> ± ?</span> : null}
+    </>
   )
 }
 

@@ -1,6 +1,7 @@
 'use client'
 
 import { useEffect, useRef, useState } from 'react'
+import { Button } from '@/components/ui/button'
 import { type Working } from '@/lib/analysis/working'
 import { Formula } from './formula'
 import { symbolUncertainty, symbolValue, workingText } from './working-text'
@@ -93,22 +94,8 @@ export function WorkingPanel({ working, usedBy = [], onClose, takesFocus = false
         <Lines title="Used by" lines={usedBy} />
       </dl>
       <p className="mt-3 mb-0 flex flex-wrap items-center gap-2">
-        <button
-          type="button"
-          onClick={() => void copy()}
-          className="min-h-8 rounded border border-line-strong bg-sheet px-3 py-1 text-ink"
-        >
-          Copy as text
-        </button>
-        {onClose ? (
-          <button
-            type="button"
-            onClick={onClose}
-            className="min-h-8 rounded border border-line-strong bg-sheet px-3 py-1 text-ink"
-          >
-            Close
-          </button>
-        ) : null}
+        <Button onClick={() => void copy()}>Copy as text</Button>
+        {onClose ? <Button onClick={onClose}>Close</Button> : null}
         <span role="status" className="text-[12.5px] text-ink-3">
           {copied}
         </span>

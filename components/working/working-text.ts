@@ -1,13 +1,27 @@
 import { type Working, type WorkingSymbol } from '@/lib/analysis/working'
-import { roundToUncertainty } from '@/components/numbers/round-to-uncertainty'
+import { estimateAsText, formatEstimate, setFigures, type EstimateText } from '@/lib/domain/format-estimate'
+
+const SUPERSCRIPTS: Readonly<Record<string, string>> = { '−': '⁻', '-': '⁻' }
+
+function withPower(text: EstimateText): string {
+  if (text.exponent === null) return text.value
+  const power = [...text.exponent].map((sign) => SUPERSCRIPTS[sign] ?? '⁰¹²³⁴⁵⁶⁷⁸⁹'[Number(sign)] ?? sign).join('')
+  return `${text.value} × 10${power}`
+}
+
+/** A number without an uncertainty: all its figures, six at most. */
+function exactFigures(value: number): string {
+  const plain = String(Number(value.toPrecision(6)))
+  return plain.includes('e') ? withPower(formatEstimate(value, null, 6)) : setFigures(plain)
+}
 
 /** Value of a symbol to what its uncertainty justifies; one that is exact is given with six figures at most. */
 export function symbolValue(symbol: WorkingSymbol): string {
   if (symbol.value === null) return 'not known'
   const u = symbol.standardUncertainty
-  const rounded =
-    u !== null && u > 0 ? roundToUncertainty(symbol.value, u).value : String(Number(symbol.value.toPrecision(6)))
-  return symbol.unit === '' ? rounded.replace('-', '−') : `${rounded.replace('-', '−')} ${symbol.unit}`
+  // the uncertainty stands in its own column, so only the value's rounding is taken from it
+  const rounded = u !== null && u > 0 ? withPower(formatEstimate(symbol.value, u)) : exactFigures(symbol.value)
+  return symbol.unit === '' ? rounded : `${rounded} ${symbol.unit}`
 }
 
 /** `± 1.0 % shared`, `± 0.6 %`, or nothing. */
@@ -17,7 +31,7 @@ export function symbolUncertainty(symbol: WorkingSymbol): string {
   const size = Math.abs(symbol.value)
   const relative = size > 0 ? u / size : Infinity
   const shared = symbol.uncertaintyKind === 'shared' ? ' shared' : ''
-  if (relative > 0.3 || relative < 1e-6) return `± ${roundToUncertainty(u, u).uncertainty}${shared}`
+  if (relative > 0.3 || relative < 1e-6) return `± ${estimateAsText(u, null)}${shared}`
   const percent = relative * 100
   return `± ${percent >= 0.095 ? percent.toFixed(1) : percent.toPrecision(1)} %${shared}`
 }
