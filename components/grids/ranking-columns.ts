@@ -11,6 +11,7 @@ import { type Ranking, type RankingRow } from '@/lib/domain/ranking'
 import { formatFixed } from '@/components/numbers/format-fixed'
 import { halfWidth } from '@/components/numbers/half-width'
 import { practicalUnits, type PracticalUnit } from '@/components/numbers/practical-units'
+import { speciesLabel } from '@/components/numbers/species-label'
 import { type IntervalScale } from './interval-scale'
 import {
   CautionsCell,
@@ -146,11 +147,6 @@ export function selectivitySpecies(rows: readonly RankingRow[]): string[] {
     }
   }
   return [...largest].sort((a, b) => b[1] - a[1]).map(([species]) => species)
-}
-
-/** Digits of a formula as subscripts: `CH4` reads CH₄. */
-export function speciesLabel(species: string): string {
-  return species.replace(/\d/g, (digit) => '₀₁₂₃₄₅₆₇₈₉'[Number(digit)] ?? digit)
 }
 
 /** Rank and sample stay in sight while the rest is scrolled; on a narrow screen only the sample does. */
