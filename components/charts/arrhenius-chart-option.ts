@@ -4,6 +4,7 @@ import { type ArrheniusFit, type FitPoint } from '@/lib/analysis/reduction/run-r
 import { formatFixed } from '@/components/numbers/format-fixed'
 import { practicalUnits } from '@/components/numbers/practical-units'
 import { type ChartOption } from './chart-option'
+import { tickText } from './tick-text'
 import { chartSymbol, type SampleSymbol } from './sample-symbols'
 import { temperColour, type TemperWindow } from './temper-scale'
 import { type ThemeColours } from './theme-colours'
@@ -78,6 +79,7 @@ function pointData(entry: ArrheniusSeries, input: ArrheniusOptionInput, y: (poin
       color: point.isUsed ? temperColour(point.temperatureK, input.window, input.colours.temper) : input.colours.paper,
       borderColor: point.isUsed ? input.colours.ink : input.colours.ink2,
       borderWidth: 1.1,
+      opacity: 1,
     },
   }))
 }
@@ -306,7 +308,7 @@ export function buildArrheniusOption(input: ArrheniusOptionInput): ChartOption {
           ...axisText,
           showMinLabel: false,
           showMaxLabel: false,
-          formatter: (value: number) => formatFixed(value, Number.isInteger(value) ? 0 : 1),
+          formatter: tickText,
         },
       },
       {

@@ -50,7 +50,12 @@ export function ChartFrame(props: ChartFrameProps) {
         <span id={summaryId}>{props.summary}</span>
         <details className="mt-0.5">
           <summary className="inline-block min-h-6 cursor-pointer text-accent">Numbers of this plot as a table</summary>
-          <div className="max-h-80 overflow-auto" tabIndex={0} role="region" aria-label={`${props.label}, as a table`}>
+          <div
+            className="relative max-h-80 overflow-auto"
+            tabIndex={0}
+            role="region"
+            aria-label={`${props.label}, as a table`}
+          >
             <table className="mt-1 border-collapse text-ink">
               <thead>
                 <tr>

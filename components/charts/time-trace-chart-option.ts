@@ -3,6 +3,7 @@ import { type Hold, type InjectionUse } from '@/lib/analysis/reduction/run-reduc
 import { formatFixed } from '@/components/numbers/format-fixed'
 import { roundTicks } from './arrhenius-chart-option'
 import { type ChartOption } from './chart-option'
+import { tickText } from './tick-text'
 import { temperColour, type TemperWindow } from './temper-scale'
 import { type ThemeColours } from './theme-colours'
 
@@ -73,7 +74,6 @@ export function buildTimeTraceOption(input: TimeTraceInput): ChartOption {
   const highestConversion = input.injections.reduce((most, entry) => Math.max(most, entry.conversion ?? 0), 0)
   const conversionTop = highestConversion > 0 ? highestConversion * 100 * 1.35 : 1
   const conversionTicks = roundTicks(0, conversionTop, 3)
-  const conversionStep = (conversionTicks[1] ?? 1) - (conversionTicks[0] ?? 0)
   const temperatureTicks = roundTicks(axis.min, axis.max, 4).filter((tick) => tick > axis.min)
   const none = { show: false }
   const rule = { show: true, lineStyle: { color: colours.lineStrong } }
@@ -101,7 +101,7 @@ export function buildTimeTraceOption(input: TimeTraceInput): ChartOption {
       axisLabel: {
         ...text,
         customValues: ticks,
-        formatter: (value: number) => (value === 0 ? '0 h' : String(Number(value.toPrecision(3)))),
+        formatter: (value: number) => (value === 0 ? '0 h' : tickText(value)),
       },
     },
     yAxis: [
@@ -116,7 +116,7 @@ export function buildTimeTraceOption(input: TimeTraceInput): ChartOption {
           ...text,
           customValues: temperatureTicks,
           formatter: (value: number) =>
-            value === temperatureTicks[temperatureTicks.length - 1] ? `${value} °C` : String(value),
+            value === temperatureTicks[temperatureTicks.length - 1] ? `${tickText(value)} °C` : tickText(value),
         },
         interval: (temperatureTicks[1] ?? 20) - (temperatureTicks[0] ?? 0),
       },
@@ -131,8 +131,7 @@ export function buildTimeTraceOption(input: TimeTraceInput): ChartOption {
         axisLabel: {
           ...text,
           customValues: conversionTicks,
-          formatter: (value: number) =>
-            `${formatFixed(value, conversionStep < 1 ? (conversionStep < 0.1 ? 2 : 1) : 0)} %`,
+          formatter: (value: number) => `${tickText(value)} %`,
         },
       },
     ],
@@ -176,7 +175,7 @@ export function buildTimeTraceOption(input: TimeTraceInput): ChartOption {
         name: 'conversion',
         yAxisIndex: 1,
         symbol: 'circle',
-        symbolSize: 7,
+        symbolSize: input.isCompact ? 5 : 7,
         data: input.injections
           .filter((injection) => injection.conversion !== null)
           .map((injection) => ({
@@ -187,6 +186,7 @@ export function buildTimeTraceOption(input: TimeTraceInput): ChartOption {
               color: injection.use === 'point' ? colours.ink : colours.paper,
               borderColor: colours.ink,
               borderWidth: 1.2,
+              opacity: 1,
             },
           })),
         z: 6,

@@ -54,7 +54,7 @@ export function FitTable({ caption, fits, onOpen }: FitTableProps) {
     )
   }
   return (
-    <div className="overflow-x-auto" role="region" aria-label={caption} tabIndex={0}>
+    <div className="relative overflow-x-auto" role="region" aria-label={caption} tabIndex={0}>
       <table className="mt-1.5 w-full border-collapse">
         <caption className="sr-only">{caption}</caption>
         <thead>

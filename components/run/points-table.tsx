@@ -1,6 +1,5 @@
 'use client'
 
-import { type ReactNode } from 'react'
 import { type Estimate } from '@/lib/analysis/estimate'
 import { type Point } from '@/lib/analysis/reduction/run-reduction'
 import { temperCssColour, type TemperWindow } from '@/components/charts/temper-scale'
@@ -21,8 +20,6 @@ interface PointsTableProps {
   readonly window: TemperWindow
   readonly picked: PickedNumber | null
   readonly onPick: (picked: PickedNumber) => void
-  /** further things to do with a hold, at the end of its row */
-  readonly rowActions?: (point: Point) => ReactNode
 }
 
 interface NumberColumn {
@@ -136,11 +133,12 @@ function Cell({
 }
 
 /** One row a hold: both conversion routes, rates, and what is doubtful; each number opens its working. */
-export function PointsTable({ points, window, picked, onPick, rowActions }: PointsTableProps) {
+export function PointsTable({ points, window, picked, onPick }: PointsTableProps) {
   const columns = numberColumns(mainProduct(points))
-  const head = 'border-b border-line-strong px-2 py-1 align-bottom text-[12.5px] leading-tight font-semibold text-ink-2'
+  const head =
+    'border-b border-line-strong px-1.5 py-1 align-bottom text-[12.5px] leading-tight font-semibold text-ink-2'
   return (
-    <div className="overflow-x-auto" role="region" aria-label="Points" tabIndex={0}>
+    <div className="relative overflow-x-auto" role="region" aria-label="Points" tabIndex={0}>
       <table className="mt-1.5 w-full border-collapse">
         <caption className="sr-only">Points, one row a hold</caption>
         <thead>
@@ -157,7 +155,7 @@ export function PointsTable({ points, window, picked, onPick, rowActions }: Poin
             ))}
             <Head className={head} name="Injections" unit="" />
             <th scope="col" className={`${head} text-left`}>
-              <span className="sr-only">Cautions and what can be done</span>
+              <span className="sr-only">Cautions</span>
             </th>
           </tr>
         </thead>
@@ -167,7 +165,7 @@ export function PointsTable({ points, window, picked, onPick, rowActions }: Poin
             const isOut = point.excluded !== null && hold.returnsTo === null
             return (
               <tr key={hold.foundStartS} className={`border-b border-line align-middle ${isOut ? 'text-ink-3' : ''}`}>
-                <th scope="row" className="px-2 py-1 text-left font-normal whitespace-nowrap">
+                <th scope="row" className="px-1.5 py-1 text-left font-normal whitespace-nowrap">
                   <svg width="10" height="10" aria-hidden="true" className="mr-1.5 inline-block">
                     <rect
                       x=".75"
@@ -180,7 +178,15 @@ export function PointsTable({ points, window, picked, onPick, rowActions }: Poin
                       strokeWidth="1.5"
                     />
                   </svg>
-                  {hold.number}
+                  <button
+                    type="button"
+                    aria-label={`Pick hold ${hold.number}`}
+                    aria-pressed={picked?.holdNumber === hold.number}
+                    onClick={() => onPick({ holdNumber: hold.number, key: picked?.key ?? 'rateMolPerKgS' })}
+                    className="min-h-6 min-w-6 cursor-pointer text-left hover:underline touch:min-h-11"
+                  >
+                    {hold.number}
+                  </button>
                   {hold.returnsTo === null ? null : <span className="text-ink-3"> returned</span>}
                   {hold.isEdited ? <span className="text-ink-3"> moved</span> : null}
                 </th>
@@ -189,7 +195,7 @@ export function PointsTable({ points, window, picked, onPick, rowActions }: Poin
                   return [
                     <td
                       key={column.key}
-                      className={`px-2 py-1 text-right whitespace-nowrap ${column.isQuiet ? 'text-ink-3' : ''} ${
+                      className={`px-1.5 py-1 text-right whitespace-nowrap ${column.isQuiet ? 'text-ink-3' : ''} ${
                         isPicked ? 'bg-accent-wash outline-2 -outline-offset-2 outline-accent' : ''
                       }`}
                     >
@@ -201,26 +207,25 @@ export function PointsTable({ points, window, picked, onPick, rowActions }: Poin
                       />
                     </td>,
                     index === 0 ? (
-                      <td key="on-stream" className="px-2 py-1 text-right">
+                      <td key="on-stream" className="px-1.5 py-1 text-right">
                         {formatFixed(practicalUnits.hours.fromSi(point.timeOnStreamS), 1)}
                       </td>
                     ) : null,
                   ]
                 })}
-                <td className="px-2 py-1 text-right whitespace-nowrap">
+                <td className="px-1.5 py-1 text-right whitespace-nowrap">
                   {point.injectionsUsed.length} <span className="text-ink-3">of {point.injectionsInHold}</span>
                 </td>
-                <td className="px-2 py-1 text-left">
+                <td className="px-1.5 py-1 text-left">
                   <span className="flex flex-wrap items-center gap-1">
                     {point.cautions.map((caution, index) => (
                       <CautionTag key={`${caution.code}-${index}`} caution={caution} />
                     ))}
-                    {point.excluded === null ? null : (
+                    {point.excluded === null || hold.returnsTo !== null ? null : (
                       <span className="text-[12.5px] text-ink-2">
                         not in the line, {point.excluded.by}: {point.excluded.reason}
                       </span>
                     )}
-                    {rowActions?.(point)}
                   </span>
                 </td>
               </tr>

@@ -174,19 +174,15 @@ export function RunWorkspace(props: RunWorkspaceProps) {
                 setPicked(next)
                 setHasPicked(true)
               }}
-              {...(permissions.canLeaveOut
-                ? {
-                    rowActions: (entry: Point) => (
-                      <HoldActions
-                        point={entry}
-                        exclusion={exclusionOf('hold', entry.hold.foundStartS)}
-                        edit={editOf(entry.hold.foundStartS)}
-                        onAsk={setAsked}
-                      />
-                    ),
-                  }
-                : {})}
             />
+            {permissions.canLeaveOut && point ? (
+              <HoldActions
+                point={point}
+                exclusion={exclusionOf('hold', point.hold.foundStartS)}
+                edit={editOf(point.hold.foundStartS)}
+                onAsk={setAsked}
+              />
+            ) : null}
             {permissions.canLeaveOut ? (
               <InjectionList
                 injections={reduction.injections}
@@ -269,57 +265,20 @@ function HoldActions({
 }) {
   const { hold } = point
   const name = `hold ${hold.number}`
-  const label = (words: string) => `${words} ${name}`
+  const window = { foundStartS: hold.foundStartS, number: hold.number, startS: hold.startS, endS: hold.endS }
   return (
-    <span className="ml-auto flex gap-1 print:hidden">
+    <p className="mt-2 mb-0 flex flex-wrap items-center gap-2 print:hidden">
+      <span className="text-ink-2">Hold {hold.number}</span>
       {exclusion ? (
-        <Button
-          kind="quiet"
-          className="px-1 text-[12.5px]"
-          aria-label={label('Put back')}
-          onClick={() => onAsk({ kind: 'put-back', exclusion, name })}
-        >
-          Put back…
-        </Button>
+        <Button onClick={() => onAsk({ kind: 'put-back', exclusion, name })}>Put back</Button>
       ) : (
-        <Button
-          kind="quiet"
-          className="px-1 text-[12.5px]"
-          aria-label={label('Leave out')}
-          onClick={() => onAsk({ kind: 'leave-out', what: 'hold', atS: hold.foundStartS, name })}
-        >
-          Leave out…
+        <Button onClick={() => onAsk({ kind: 'leave-out', what: 'hold', atS: hold.foundStartS, name })}>
+          Leave out
         </Button>
       )}
-      <Button
-        kind="quiet"
-        className="px-1 text-[12.5px]"
-        aria-label={label('Move window of')}
-        onClick={() =>
-          onAsk({
-            kind: 'move',
-            window: {
-              foundStartS: hold.foundStartS,
-              number: hold.number,
-              startS: hold.startS,
-              endS: hold.endS,
-            },
-          })
-        }
-      >
-        Window…
-      </Button>
-      {edit ? (
-        <Button
-          kind="quiet"
-          className="px-1 text-[12.5px]"
-          aria-label={label('Restore window of')}
-          onClick={() => onAsk({ kind: 'restore', edit, name })}
-        >
-          Restore…
-        </Button>
-      ) : null}
-    </span>
+      <Button onClick={() => onAsk({ kind: 'move', window })}>Move window</Button>
+      {edit ? <Button onClick={() => onAsk({ kind: 'restore', edit, name })}>Restore window</Button> : null}
+    </p>
   )
 }
 
@@ -337,7 +296,7 @@ function InjectionList({
       <summary className="inline-block min-h-6 cursor-pointer text-[13px] text-accent touch:min-h-11">
         Injections, one by one
       </summary>
-      <div className="max-h-80 overflow-auto" role="region" aria-label="Injections" tabIndex={0}>
+      <div className="relative max-h-80 overflow-auto" role="region" aria-label="Injections" tabIndex={0}>
         <table className="mt-1 border-collapse">
           <thead>
             <tr>
