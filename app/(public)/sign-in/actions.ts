@@ -2,6 +2,7 @@
 
 import { headers } from 'next/headers'
 import { redirect } from 'next/navigation'
+import { routeOf } from '@/app/_route-of'
 import { type FormState } from '@/components/ui/form-state'
 import { assertActionFromHere } from '@/lib/access/actor'
 import { callerFrom, signIn, signOut } from '@/lib/access/sign-in'
@@ -29,7 +30,7 @@ export async function signInAction(_previous: FormState, data: FormData): Promis
     return ''
   })
   if (!answer.ok) return answer
-  redirect(safeNextPath(data.get('next')))
+  redirect(routeOf(safeNextPath(data.get('next'))))
 }
 
 /** Ends the session on the server, not only in this browser. */

@@ -1,5 +1,6 @@
 import Link from 'next/link'
 import { redirect } from 'next/navigation'
+import { routeOf } from '@/app/_route-of'
 import { SignInForm } from '@/components/forms/sign-in-form'
 import { Notice } from '@/components/ui/notice'
 import { getActor } from '@/lib/access/actor'
@@ -15,7 +16,7 @@ export default async function SignInPage({
   searchParams: Promise<Record<string, string | string[] | undefined>>
 }) {
   const next = safeNextPath((await searchParams).next)
-  if ((await getActor()) !== null) redirect(next)
+  if ((await getActor()) !== null) redirect(routeOf(next))
   return (
     <>
       <h1>Sign in</h1>
