@@ -92,8 +92,9 @@ export async function updateCalibration(
   return rows.length > 0
 }
 
-/** Writes the next version of the instrument's map on the rig. */
+/** Writes the next version of the instrument's map on the rig; holds the rig, so that no two get the same number. */
 export async function insertColumnMap(tx: Transaction, map: NewColumnMap & Made): Promise<void> {
+  await tx.select({ id: rigs.id }).from(rigs).where(eq(rigs.id, map.rigId)).for('update')
   const [row] = await tx
     .select({ largest: max(columnMaps.number) })
     .from(columnMaps)
