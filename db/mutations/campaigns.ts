@@ -48,6 +48,22 @@ export async function insertMember(tx: Transaction, campaignId: string, member: 
   await tx.insert(members).values({ campaignId, userId: member.userId, role: member.role })
 }
 
+export async function updateMember(
+  tx: Transaction,
+  scope: Scope,
+  campaignId: string,
+  member: NewMember,
+): Promise<boolean> {
+  const rows = await tx
+    .update(members)
+    .set({ role: member.role })
+    .where(
+      and(inScope(members.campaignId, scope), eq(members.campaignId, campaignId), eq(members.userId, member.userId)),
+    )
+    .returning({ userId: members.userId })
+  return rows.length > 0
+}
+
 export async function deleteMember(
   tx: Transaction,
   scope: Scope,
