@@ -1,7 +1,7 @@
 'use client'
 
 import { Button } from '@/components/ui/button'
-import { type RankingCellChange } from '@/components/grids/ranking-grid'
+import { type RankingCellChange } from '@/components/grids/ranking-cell-change'
 import { type RankingRow } from '@/lib/domain/ranking'
 
 /** A cell that could not be written, or that somebody else wrote first. */

@@ -2,7 +2,7 @@
 
 import { useQueryClient, type QueryKey } from '@tanstack/react-query'
 import { useCallback, useState } from 'react'
-import { type RankingCellChange } from '@/components/grids/ranking-grid'
+import { type RankingCellChange } from '@/components/grids/ranking-cell-change'
 import { rankingKeys } from '@/components/server-state/ranking'
 import { type CampaignSampleChange } from '@/lib/domain/campaign'
 import { type ActionResult } from '@/lib/domain/errors'

@@ -14,17 +14,14 @@ import {
 import { AgGridReact } from 'ag-grid-react'
 import { useMemo, useRef, useState } from 'react'
 import { type TemperWindow } from '@/components/charts/temper-scale'
-import { type CampaignSampleChange } from '@/lib/domain/campaign'
 import { type Ranking, type RankingRow } from '@/lib/domain/ranking'
 import { type Working } from '@/lib/analysis/working'
 import { GridProvider, gridTheme } from './grid-provider'
 import { intervalScale } from './interval-scale'
 import { type RankingCellContext } from './ranking-cells'
+import { cellChange, type RankingCellChange } from './ranking-cell-change'
 import { buildRankingColumns, workingKeyOf, type RankingPermissions } from './ranking-columns'
 import { rankingGridRows, type RankingGridRow } from './ranking-grid-row'
-
-/** The cells that people write; the version goes with them. */
-export type RankingCellChange = Omit<CampaignSampleChange, 'version'>
 
 interface RankingGridProps {
   readonly ranking: Ranking
@@ -69,18 +66,6 @@ const runHref = (runId: string) => `/runs/${runId}`
 function workingOf(row: RankingRow | undefined, colId: string): Working | null {
   const key = workingKeyOf(colId)
   return row?.workings[key] ?? row?.fit?.workings[key] ?? null
-}
-
-/** What an edited cell asks to be changed; null when the value is none that may be stored. */
-export function cellChange(colId: string, value: unknown): RankingCellChange | null {
-  if (colId === 'remark') return { remark: typeof value === 'string' ? value.trim().slice(0, 500) : '' }
-  if (colId === 'isShortlisted') return { isShortlisted: value === true }
-  if (colId === 'priority') {
-    if (value === null || value === undefined || value === '') return { priority: null }
-    const priority = Number(value)
-    return Number.isInteger(priority) && priority >= 1 && priority <= 9 ? { priority } : null
-  }
-  return null
 }
 
 function savable(state: GridState): GridState {

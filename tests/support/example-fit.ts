@@ -1,7 +1,7 @@
 import { type ArrheniusFit, type FitPoint } from '@/lib/analysis/reduction/run-reduction'
 import { type Estimate } from '@/lib/analysis/estimate'
 
-const GAS_CONSTANT = 8.314462618
+const GAS_CONSTANT = 8.31446261815324
 
 /** Estimate with an own part and, where given, shared parts. */
 export function estimateOf(

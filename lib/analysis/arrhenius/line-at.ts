@@ -1,7 +1,6 @@
-import tQuantile from '@stdlib/stats-base-dists-t-quantile'
-import normalQuantile from '@stdlib/stats-base-dists-normal-quantile'
 import { GAS_CONSTANT_J_PER_MOL_K } from '../units/constants'
 import { type ArrheniusFit } from '../reduction/run-reduction'
+import { coverageFactor } from '../statistics/student-t'
 
 /** The fitted line at one temperature. */
 export interface LineAt {
@@ -42,10 +41,8 @@ export function lineAt(fit: ArrheniusFit, temperatureK: number): LineAt {
     centreError * centreError + step * step * slopeError * slopeError - 2 * step * covariance,
   )
   const standardError = Math.sqrt(variance)
-  const probability = (1 + fit.confidenceLevel) / 2
-  const degreesOfFreedom = fit.activationEnergyJPerMol.degreesOfFreedom
-  const quantile =
-    degreesOfFreedom === null ? normalQuantile(probability, 0, 1) : tQuantile(probability, degreesOfFreedom)
-  if (!Number.isFinite(quantile)) return { lnRate, standardError, interval: null }
+  const { degreesOfFreedom } = fit.activationEnergyJPerMol
+  if (degreesOfFreedom !== null && !(degreesOfFreedom > 0)) return { lnRate, standardError, interval: null }
+  const quantile = coverageFactor(fit.confidenceLevel, degreesOfFreedom)
   return { lnRate, standardError, interval: [lnRate - quantile * standardError, lnRate + quantile * standardError] }
 }

@@ -1,0 +1,130 @@
+import { describe, expect, it } from 'vitest'
+import { intervalScale } from '@/components/grids/interval-scale'
+import {
+  buildRankingColumns,
+  compareNumbers,
+  formatProbability,
+  selectivitySpecies,
+  workingKeyOf,
+} from '@/components/grids/ranking-columns'
+import { cellChange } from '@/components/grids/ranking-cell-change'
+import { rankingGridRows } from '@/components/grids/ranking-grid-row'
+import { savedGridState } from '@/components/grids/saved-grid-state'
+import { exampleRanking } from '../../../support/example-ranking'
+
+const ranking = exampleRanking()
+const none = { canRemark: false, canShortlist: false, canDecide: false }
+const leaves = (permissions: typeof none) =>
+  buildRankingColumns(ranking, permissions, null, false).flatMap((column) =>
+    'children' in column ? column.children.flatMap((child) => ('children' in child ? [] : [child])) : [column],
+  )
+
+describe('ranking columns', () => {
+  it('have all that the ranking states, each under its own key', () => {
+    const ids = leaves(none).map((column) => column.colId)
+    expect(new Set(ids).size).toBe(ids.length)
+    for (const id of [
+      'rank',
+      'rankInterval',
+      'sample',
+      'turnoverFrequencyPerS',
+      'probabilityBest',
+      'rateMolPerKgS',
+      'activationEnergyJPerMol',
+      'activationEnergyInterval',
+      'lnPreExponential',
+      'temperatureForConversionK',
+      'selectivity.CH4',
+      'selectivity.CO',
+      'carbonBalance',
+      'decayPerH',
+      'distinctTemperatures',
+      'span',
+      'cautions',
+      'decision',
+      'isShortlisted',
+      'priority',
+      'remark',
+    ]) {
+      expect(ids).toContain(id)
+    }
+  })
+  it('let a cell be written by those who may', () => {
+    const editable = (permissions: typeof none) =>
+      leaves(permissions)
+        .filter((column) => column.editable === true)
+        .map((column) => column.colId)
+    expect(editable(none)).toEqual([])
+    expect(editable({ ...none, canRemark: true })).toEqual(['remark'])
+    expect(editable({ canRemark: true, canShortlist: true, canDecide: true })).toEqual([
+      'isShortlisted',
+      'priority',
+      'remark',
+    ])
+  })
+  it('put missing numbers last whichever way they are sorted', () => {
+    const up = [3, null, 1].sort((a, b) => compareNumbers(a, b, undefined, undefined, false))
+    expect(up).toEqual([1, 3, null])
+    // the grid turns the sign round for a descending sort
+    const down = [3, null, 1].sort((a, b) => -compareNumbers(a, b, undefined, undefined, true))
+    expect(down).toEqual([3, 1, null])
+  })
+  it('name the selectivities by amount, and the working of a derived column', () => {
+    expect(selectivitySpecies(ranking.rows)).toEqual(['CH4', 'CO'])
+    expect(workingKeyOf('activationEnergyInterval')).toBe('activationEnergyJPerMol')
+    expect(workingKeyOf('selectivity.CH4')).toBe('selectivity')
+    expect(workingKeyOf('carbonBalance')).toBe('carbonBalance')
+  })
+  it('do not claim certainty from draws', () => {
+    expect(formatProbability(0.9998)).toBe('> 0.99')
+    expect(formatProbability(0)).toBe('< 0.01')
+    expect(formatProbability(0.5)).toBe('0.50')
+    expect(formatProbability(null)).toBe('–')
+  })
+})
+
+describe('what an edited cell asks for', () => {
+  it('takes what may be stored and nothing else', () => {
+    expect(cellChange('remark', '  again  ')).toEqual({ remark: 'again' })
+    expect(cellChange('remark', null)).toEqual({ remark: '' })
+    expect(cellChange('isShortlisted', true)).toEqual({ isShortlisted: true })
+    expect(cellChange('priority', 3)).toEqual({ priority: 3 })
+    expect(cellChange('priority', null)).toEqual({ priority: null })
+    expect(cellChange('priority', 12)).toBeNull()
+    expect(cellChange('priority', 1.5)).toBeNull()
+    expect(cellChange('rank', 1)).toBeNull()
+  })
+})
+
+describe('rows', () => {
+  it('come in rank order with the unranked last, and keep their shape when ranks change', () => {
+    const rows = rankingGridRows(ranking.rows)
+    expect(rows.map((entry) => entry.row.rank)).toEqual([1, 2, 3, 4, 5, 6, 7, null])
+    const turned = rankingGridRows(
+      ranking.rows.map((row) => ({ ...row, rank: row.rank === null ? null : 8 - row.rank })),
+    )
+    for (const entry of rows) {
+      expect(turned.find((other) => other.row.sampleId === entry.row.sampleId)?.symbol).toBe(entry.symbol)
+    }
+  })
+})
+
+describe('interval scale', () => {
+  it('holds every interval', () => {
+    const scale = intervalScale([[70, 74], null, [97, 101]], 112)
+    expect(scale?.toX(70)).toBeGreaterThanOrEqual(5)
+    expect(scale?.toX(101)).toBeLessThanOrEqual(107)
+    expect(scale?.ticks).toEqual([70, 80, 90, 100])
+    expect(intervalScale([null], 112)).toBeNull()
+  })
+})
+
+describe('saved state', () => {
+  it('takes the parts it knows', () => {
+    expect(savedGridState({ sort: { sortModel: [] }, rowSelection: ['x'], filter: null })).toEqual({
+      sort: { sortModel: [] },
+    })
+    expect(savedGridState('nonsense')).toBeNull()
+    expect(savedGridState(null)).toBeNull()
+  })
+})
