@@ -12,15 +12,11 @@ import { hashSecret } from '../auth/secret'
 import { readSessionSecret } from '../auth/session'
 import { AppError } from '../domain/errors'
 import { type Actor } from '../domain/role'
+import { sessionRefOf } from './session-ref'
 import { isSessionAlive, SESSION_TOUCH_S } from './session-rules'
 
 const NOT_SIGNED_IN = 'Sign in first, or send a token that is still valid.'
 const LONGEST_UNNOTED_TOKEN_USE_S = 60
-
-/** Short name of a session for lists and the audit trail; it opens nothing. */
-export function sessionRefOf(idHash: string): string {
-  return `session:${idHash.slice(0, 16)}`
-}
 
 /** The person behind a session secret, with role, state and memberships as the database has them now. */
 export async function actorOfSession(secret: string, now = new Date()): Promise<Actor | null> {

@@ -1,4 +1,4 @@
-import { SESSION_LIFE_S } from '../auth/session'
+import { SESSION_LIFE_S } from '../auth/session-life'
 
 export const SESSION_IDLE_S = 30 * 60
 /** How often a session in use is noted as such; finer would write on every page view. */

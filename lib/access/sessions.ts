@@ -6,7 +6,7 @@ import { selectAccount, selectLiveSessions } from '../../db/queries/people'
 import { type SessionSummary } from '../domain/person'
 import { type Actor } from '../domain/role'
 import { can } from '../policy/can'
-import { sessionRefOf } from './actor'
+import { sessionRefOf } from './session-ref'
 import { authorise, hideUnless } from './authorise'
 import { SESSION_IDLE_S } from './session-rules'
 

@@ -13,11 +13,11 @@ import { refuseEvenly } from '../auth/even-refusal'
 import { hashPassword, PASSWORD_SCHEME, verifyPassword } from '../auth/password'
 import { callerAddress, networkOf, restoreBudget, takeFromBudget, tooManyAttempts } from '../auth/rate-limit'
 import { hashSecret, makeSecret } from '../auth/secret'
-import { SESSION_LIFE_S } from '../auth/session'
+import { SESSION_LIFE_S } from '../auth/session-life'
 import { LOCKED_AFTER, secondsToWait } from '../auth/sign-in-delay'
 import { AppError } from '../domain/errors'
 import { type Actor } from '../domain/role'
-import { sessionRefOf } from './actor'
+import { sessionRefOf } from './session-ref'
 
 /** Where an attempt comes from. */
 export interface Caller {

@@ -2,9 +2,8 @@ import 'server-only'
 import { sealData, unsealData } from 'iron-session'
 import { cookies } from 'next/headers'
 import { environment } from '../environment'
+import { SESSION_LIFE_S } from './session-life'
 
-/** A session ends for good after this, however busy it was. */
-export const SESSION_LIFE_S = 12 * 3600
 /** A device that signed somebody in is known for so long: strangers who guess passwords cannot lock its owner out. */
 const DEVICE_LIFE_S = 90 * 86_400
 
