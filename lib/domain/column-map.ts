@@ -61,6 +61,8 @@ export const columnMapSpecificationSchema = z.strictObject({
   /** composition columns: whether water was removed before the analyser */
   basis: z.enum(['dry', 'wet']).nullable().default(null),
   barometerPa: z.number().gte(50_000).lte(120_000).nullable().default(null),
+  /** which of the two a local time is that the clock shows twice, where the order of the rows does not tell */
+  ambiguousHour: z.enum(['earlier', 'later']).nullable().default(null),
 })
 export type ColumnMapSpecification = z.infer<typeof columnMapSpecificationSchema>
 

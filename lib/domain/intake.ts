@@ -57,6 +57,24 @@ export const questionSchema = z.strictObject({
 })
 export type Question = z.infer<typeof questionSchema>
 
+/** What the rows and the preamble of one file leave open, apart from what its columns mean. */
+export const fileFactsSchema = z.strictObject({
+  isKindOpen: z.boolean(),
+  isDateOrderOpen: z.boolean(),
+  dateOrderProposal: z.enum(['day-first', 'month-first']),
+  dateOrderReason: z.string().max(200),
+  dateExample: z.string().max(100),
+  isDecimalMarkOpen: z.boolean(),
+  decimalExample: z.string().max(300),
+  /** start of elapsed time as the preamble has it */
+  statedStart: z.string().max(100).nullable(),
+  needsStart: z.boolean(),
+  /** every time carries its own offset, so no zone is needed */
+  hasOffsets: z.boolean(),
+  hasAmbiguousHour: z.boolean(),
+})
+export type FileFacts = z.infer<typeof fileFactsSchema>
+
 export const detectionSchema = z.strictObject({
   format: z.enum(['delimited-text', 'workbook', 'chromatography-netcdf', 'jcamp-dx']),
   /** in words: `semicolon-separated, decimal comma, Windows-1252, header in row 5, units in row 6` */
@@ -73,6 +91,7 @@ export const detectionSchema = z.strictObject({
   /** id of the stored map that was recognised, when the instrument is known */
   columnMapId: z.string().nullable(),
   questions: z.array(questionSchema).max(20),
+  facts: fileFactsSchema,
 })
 export type Detection = z.infer<typeof detectionSchema>
 
