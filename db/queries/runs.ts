@@ -184,6 +184,15 @@ export async function selectRun(db: Executor, scope: Scope, id: string): Promise
   }
 }
 
+/** The campaign of a run in scope, or null. */
+export async function selectRunCampaign(db: Executor, scope: Scope, id: string): Promise<string | null> {
+  const [row] = await db
+    .select({ campaignId: runs.campaignId })
+    .from(runs)
+    .where(and(inScope(runs.campaignId, scope), eq(runs.id, id)))
+  return row?.campaignId ?? null
+}
+
 /** The run that started last on a rig, of those in scope. */
 export async function selectLastRunIdOnRig(
   db: Executor,
