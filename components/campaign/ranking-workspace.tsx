@@ -1,7 +1,7 @@
 'use client'
 
 import { useQuery } from '@tanstack/react-query'
-import { type SavedGridState } from '@/components/grids/saved-grid-state'
+import { savedGridState, type SavedGridState } from '@/components/grids/saved-grid-state'
 import Link from 'next/link'
 import { type Route } from 'next'
 import { useCallback, useMemo, useRef, useState } from 'react'
@@ -18,6 +18,7 @@ import { savePreference } from '@/components/server-state/save-preference'
 import { WorkingPanel } from '@/components/working/working-panel'
 import { arrheniusSeries } from './arrhenius-series'
 import { CellConflict } from './cell-conflict'
+import { RANKING_COLUMNS_PREFERENCE } from './ranking-columns-preference'
 import { useCellChanges, type ChangeCampaignSample } from './use-cell-changes'
 import { useMediaQuery } from './use-media-query'
 import { useRankingView } from './use-ranking-view'
@@ -25,13 +26,12 @@ import { useRankingView } from './use-ranking-view'
 interface RankingWorkspaceProps {
   readonly campaignId: string
   readonly permissions: RankingPermissions
-  readonly savedState: SavedGridState | null
+  /** as stored for this person; read by the grid */
+  readonly savedState: unknown
   readonly changeCell: ChangeCampaignSample
   readonly styleNonce?: string
 }
 
-/** Key under which a person's columns are kept, one set for all campaigns. */
-export const RANKING_COLUMNS_PREFERENCE = 'ranking-columns'
 const FIRST_SHOWN = 4
 
 const isDrawable = (row: RankingRow) => row.fit !== null && row.rank !== null
@@ -47,6 +47,7 @@ export function RankingWorkspace(props: RankingWorkspaceProps) {
   const [view, setView] = useRankingView()
   const { data: ranking, error, isFetching } = useQuery(rankingQuery(campaignId, view))
   const [chosen, setChosen] = useState<readonly string[] | null>(null)
+  const savedState = useMemo(() => savedGridState(props.savedState), [props.savedState])
   const [hasFilterRow, setHasFilterRow] = useState(false)
   const isNarrow = useMediaQuery('(max-width: 760px)')
   const [opened, setOpened] = useState<{ row: RankingRow; working: Working } | null>(null)
@@ -182,7 +183,7 @@ export function RankingWorkspace(props: RankingWorkspaceProps) {
               setOpened({ row, working })
             }}
             onChangeCell={cells.change}
-            savedState={props.savedState}
+            savedState={savedState}
             onStateChange={onStateChange}
             hasFilterRow={hasFilterRow}
             isNarrow={isNarrow}
