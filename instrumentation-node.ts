@@ -1,13 +1,34 @@
-import { ensureSetUpCode } from '@/lib/access/set-up'
-import { stampCallerAddress } from '@/lib/auth/stamp-caller-address'
-import { environment } from '@/lib/environment'
+import type { Server } from 'node:http'
+import { closeDatabase, getOpenDatabase } from './db/client'
+import { deleteStagedReadingSets } from './db/mutations/readings'
+import { ensureSetUpCode } from './lib/access/set-up'
+import { stampCallerAddress } from './lib/auth/stamp-caller-address'
+import { environment } from './lib/environment'
 
-/** Opens the database at the start, so that a folder that is in use is refused here and not at somebody's first click. */
-export async function startServer(): Promise<void> {
-  if (environment.NEXT_PHASE === 'phase-production-build') return
-  stampCallerAddress()
+const DAY_MS = 86_400_000
+
+/** How long requests under way may take when the server is asked to stop. */
+const GRACE_MS = 20_000
+
+/** Put there by scripts/start.mjs, which also takes the framework's own signal handling away. */
+const started = globalThis as typeof globalThis & { [key: symbol]: unknown }
+const httpServer = (): Server | undefined => started[Symbol.for('inverse-kelvin.http-server')] as Server | undefined
+
+/** What a killed process left half-stored: in the folder nobody else can be writing, on a server another process might be. */
+async function sweep(): Promise<void> {
+  const { database, backEnd } = await getOpenDatabase()
+  const before = new Date(Date.now() - (backEnd === 'thread' ? 0 : DAY_MS))
+  await database.transaction((tx) => deleteStagedReadingSets(tx, before))
+}
+
+/** Reads them, or makes them at the first start: damaged ones are met now and not by the first person who signs in. */
+function checkSecrets(): void {
+  if (environment.SESSION_KEY === environment.PEPPER) throw new Error('SESSION_KEY and PEPPER must not be the same.')
+}
+
+async function printSetUpCode(): Promise<void> {
   const setUp = await ensureSetUpCode()
-  if (setUp === null) return
+  if (!setUp) return
   console.log(
     [
       '',
@@ -17,4 +38,49 @@ export async function startServer(): Promise<void> {
       '',
     ].join('\n'),
   )
+}
+
+/** Opens and migrates the database, or ends the process: a server that answers 500 to everything is worse than none. */
+export async function startServer(): Promise<void> {
+  if (environment.NEXT_PHASE === 'phase-production-build') return
+  try {
+    process.umask(0o077)
+    stampCallerAddress()
+    await getOpenDatabase()
+    closeOnSignals()
+    await sweep()
+    checkSecrets()
+    if (httpServer()) console.log(`\nInverse Kelvin: ${environment.APP_ORIGIN}\n`)
+    await printSetUpCode()
+  } catch (error) {
+    console.error(`The server did not start. ${error instanceof Error ? error.message : String(error)}`)
+    if (error instanceof Error && error.cause !== undefined) console.error(error.cause)
+    process.exit(1)
+  }
+}
+
+/** No new connections; the requests under way are finished, then whoever is still there is cut off. */
+async function finishRequests(server: Server): Promise<void> {
+  const cutOff = setTimeout(() => server.closeAllConnections(), GRACE_MS)
+  await new Promise((resolve) => server.close(resolve))
+  clearTimeout(cutOff)
+}
+
+function closeOnSignals(): void {
+  let isClosing = false
+  const close = async () => {
+    if (isClosing) return
+    isClosing = true
+    const server = httpServer()
+    try {
+      if (server) await finishRequests(server)
+      await closeDatabase()
+    } catch (error) {
+      console.error('The database was not closed cleanly; what was acknowledged is on disk.', error)
+      if (server) process.exit(1)
+    }
+    if (server) process.exit(0)
+  }
+  process.on('SIGTERM', () => void close())
+  process.on('SIGINT', () => void close())
 }
