@@ -1,0 +1,60 @@
+import { type Route } from 'next'
+import Link from 'next/link'
+import { type Upload } from '@/lib/domain/intake'
+import { formatFixed } from '@/components/numbers/format-fixed'
+
+const kinds = { 'rig-log': 'Rig log', analyser: 'Analyser', attachment: 'Attachment' } as const
+
+function stateText(upload: Upload): string {
+  if (upload.failure !== null) return `failed: ${upload.failure}`
+  switch (upload.state) {
+    case 'confirmed': {
+      const rows = upload.detection === null ? '' : `${upload.detection.rowCount.toLocaleString('en')} rows, `
+      const problems = upload.problems.filter((problem) => problem.severity !== 'note').length
+      return `${rows}${problems === 0 ? 'nothing skipped' : `${problems} ${problems === 1 ? 'problem' : 'problems'}`}`
+    }
+    case 'set-aside':
+      return 'set aside'
+    case 'needs-answers':
+      return 'questions to be answered'
+    case 'ready':
+      return 'read, to be confirmed'
+    case 'failed':
+      return 'could not be read'
+    default:
+      return 'being read'
+  }
+}
+
+/** The files that the run rests on. */
+export function UploadLine({
+  uploads,
+  runId,
+  clockOffsetS,
+  canOpen,
+}: {
+  uploads: readonly Upload[]
+  runId: string
+  clockOffsetS: number
+  canOpen: boolean
+}) {
+  return (
+    <div className="flex flex-wrap gap-x-[22px] gap-y-0.5 text-[12.5px]">
+      {uploads.length === 0 ? <span>No files yet.</span> : null}
+      {uploads.map((upload) => (
+        <span key={upload.id} title={upload.fileName}>
+          <b className="font-semibold">{upload.kind === null ? upload.fileName : kinds[upload.kind]}</b>{' '}
+          {stateText(upload)}
+          {upload.kind === 'analyser'
+            ? `, clock ${clockOffsetS < 0 ? '−' : '+'} ${formatFixed(Math.abs(clockOffsetS), 0)} s`
+            : ''}
+        </span>
+      ))}
+      {canOpen ? (
+        <Link href={`/runs/${runId}/intake` as Route} className="inline-block min-h-6">
+          Preview and problems
+        </Link>
+      ) : null}
+    </div>
+  )
+}
