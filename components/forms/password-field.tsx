@@ -30,7 +30,7 @@ export function PasswordField({
         required
         maxLength={1024}
       />
-      <Button kind="quiet" className="px-0" aria-pressed={isShown} onClick={() => setIsShown(!isShown)}>
+      <Button kind="quiet" className="-ml-3 touch:-ml-4" aria-pressed={isShown} onClick={() => setIsShown(!isShown)}>
         {isShown ? 'Hide' : 'Show'} the {label.toLowerCase()}
       </Button>
     </div>

@@ -32,7 +32,7 @@ export function DataTable<Row>({
   readonly empty?: string
 }) {
   return (
-    <div className="overflow-x-auto" role="region" aria-label={caption} tabIndex={0}>
+    <div className="relative overflow-x-auto" role="region" aria-label={caption} tabIndex={0}>
       <table className="w-full border-collapse">
         <caption className={isCaptionShown ? 'pb-2 text-left font-head text-[17px] font-[560]' : 'sr-only'}>
           {caption}

@@ -55,7 +55,10 @@ interface FirstAdmin {
 
 function refuseFaultyPassword(admin: FirstAdmin): void {
   const fault = passwordFault(admin.password, admin)
-  if (fault !== null) throw new AppError('unprocessable', fault, { issues: [{ field: 'password', message: fault }] })
+  if (fault !== null)
+    throw new AppError('unprocessable', `The password cannot be taken. ${fault}`, {
+      issues: [{ field: 'password', message: fault }],
+    })
 }
 
 function adminActor(userId: string, admin: FirstAdmin, sessionRef: string): Actor {

@@ -192,7 +192,10 @@ export async function changePerson(
 
 function refuseFaultyPassword(password: string, person: { email: string; displayName: string }, field: string): void {
   const fault = passwordFault(password, person)
-  if (fault !== null) throw new AppError('unprocessable', fault, { issues: [{ field, message: fault }] })
+  if (fault !== null)
+    throw new AppError('unprocessable', `The password cannot be taken. ${fault}`, {
+      issues: [{ field, message: fault }],
+    })
 }
 
 /** Takes an invitation up: the person chooses a password and is signed in. Answers the secret of the new session. */

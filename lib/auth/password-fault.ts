@@ -109,7 +109,7 @@ export function passwordFault(
   const text = password.normalize('NFC')
   const count = [...text].length
   if (count < MINIMUM_PASSWORD_CHARACTERS)
-    return `This password has ${count} characters; at least ${MINIMUM_PASSWORD_CHARACTERS} are needed. Four or five words that do not belong together are easy to keep.`
+    return `This password has ${count} characters; at least ${MINIMUM_PASSWORD_CHARACTERS} are needed.`
   if (new TextEncoder().encode(text).length > MAXIMUM_PASSWORD_BYTES)
     return `This password is longer than ${MAXIMUM_PASSWORD_BYTES} bytes. Shorten it; it is never cut off silently.`
   const lower = text.normalize('NFKC').toLowerCase()

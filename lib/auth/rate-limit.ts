@@ -69,6 +69,7 @@ export function callerAddress(headers: Headers, trustedProxies = environment.TRU
 
 /** The network of an address, for the list of sessions and for budgets: /24, or /64 for IPv6. */
 export function networkOf(address: string): string {
+  if (address === '::1' || address.startsWith('127.')) return 'this machine'
   if (isIP(address) === 4) return `${address.split('.').slice(0, 3).join('.')}.0/24`
   if (isIP(address) !== 6) return 'unknown'
   const [head = '', tail = ''] = address.split('::')

@@ -2,7 +2,7 @@ const BROWSERS: readonly (readonly [RegExp, string])[] = [
   [/\bEdg(e|A|iOS)?\//, 'Edge'],
   [/\bOPR\//, 'Opera'],
   [/\b(Firefox|FxiOS)\//, 'Firefox'],
-  [/\b(Chrome|CriOS|Chromium)\//, 'Chrome'],
+  [/(Chrome|CriOS|Chromium)\//, 'Chrome'],
   [/\bSafari\//, 'Safari'],
 ]
 const SYSTEMS: readonly (readonly [RegExp, string])[] = [
