@@ -50,8 +50,9 @@ export function integrate(f: (x: number) => number, from: number, to: number, re
     if (!Number.isFinite(total) || widest === undefined || pieces.length >= MAXIMUM_PIECES)
       throw new AnalysisError('no-convergence', 'The integral does not converge over this range.', { from, to })
     const middle = (widest.from + widest.to) / 2
-    // rounding noise: a piece that cannot be halved any more is as good as it gets
-    if (middle === widest.from || middle === widest.to) return total
+    // a piece that cannot be halved any more and still errs sits on a pole
+    if (middle === widest.from || middle === widest.to)
+      throw new AnalysisError('no-convergence', 'The integral does not converge over this range.', { from, to })
     pieces.splice(worst, 1, piece(f, widest.from, middle), piece(f, middle, widest.to))
   }
 }
