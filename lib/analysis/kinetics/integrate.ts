@@ -50,8 +50,8 @@ export function integrate(f: (x: number) => number, from: number, to: number, re
     if (!Number.isFinite(total) || widest === undefined || pieces.length >= MAXIMUM_PIECES)
       throw new AnalysisError('no-convergence', 'The integral does not converge over this range.', { from, to })
     const middle = (widest.from + widest.to) / 2
-    // a piece that cannot be halved any more and still errs sits on a pole
-    if (middle === widest.from || middle === widest.to)
+    // a piece as narrow as the spacing of numbers that still errs sits on a pole
+    if (Math.abs(widest.to - widest.from) < 1e-13 * Math.max(Math.abs(from), Math.abs(to)))
       throw new AnalysisError('no-convergence', 'The integral does not converge over this range.', { from, to })
     pieces.splice(worst, 1, piece(f, widest.from, middle), piece(f, middle, widest.to))
   }
