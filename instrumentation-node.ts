@@ -1,5 +1,6 @@
 import type { Server } from 'node:http'
 import { closeDatabase, getOpenDatabase } from './db/client'
+import { maintainDatabase } from './db/maintain'
 import { deleteStagedReadingSets } from './db/mutations/readings'
 import { ensureSetUpCode } from './lib/access/set-up'
 import { stampCallerAddress } from './lib/auth/stamp-caller-address'
@@ -19,6 +20,18 @@ async function sweep(): Promise<void> {
   const { database, backEnd } = await getOpenDatabase()
   const before = new Date(Date.now() - (backEnd === 'thread' ? 0 : DAY_MS))
   await database.transaction((tx) => deleteStagedReadingSets(tx, before))
+}
+
+/** Now and four times a day. Beside the requests: nobody waits for it, and a fault in it is no fault of theirs. */
+async function keepInShape(): Promise<void> {
+  const { database, backEnd } = await getOpenDatabase()
+  if (backEnd !== 'thread') return
+  const maintain = () =>
+    void maintainDatabase(database).catch((error: unknown) =>
+      console.error('Maintenance of the database failed.', error),
+    )
+  maintain()
+  setInterval(maintain, DAY_MS / 4).unref()
 }
 
 /** Reads them, or makes them at the first start: damaged ones are met now and not by the first person who signs in. */
@@ -52,6 +65,7 @@ export async function startServer(): Promise<void> {
     checkSecrets()
     if (httpServer()) console.log(`\nInverse Kelvin: ${environment.APP_ORIGIN}\n`)
     await printSetUpCode()
+    await keepInShape()
   } catch (error) {
     console.error(`The server did not start. ${error instanceof Error ? error.message : String(error)}`)
     if (error instanceof Error && error.cause !== undefined) console.error(error.cause)

@@ -1,9 +1,11 @@
 import 'server-only'
 import { chmodSync, existsSync, mkdirSync, rmSync } from 'node:fs'
 import path from 'node:path'
+import { sql } from 'drizzle-orm'
 import { drizzle as drizzleThread, type PgliteDatabase } from 'drizzle-orm/pglite'
 import { drizzle as drizzlePool } from 'drizzle-orm/node-postgres'
 import { environment } from '@/lib/environment'
+import { databaseLimits, INTERACTIVE_LIMITS } from './database-limits'
 import { insideTransaction } from './inside-transaction'
 import { mapDatabaseError } from './map-database-error'
 import { migrateDatabase } from './migrate'
@@ -51,7 +53,10 @@ export async function openServerDatabase(url: string): Promise<OpenDatabase> {
   database.transaction = (work, config) => {
     insideTransaction.refuseOuter(pool)
     const scope = { isOpen: true }
+    const { callMs } = databaseLimits()
     return transaction(async (tx) => {
+      if (callMs !== INTERACTIVE_LIMITS.callMs)
+        await tx.execute(sql`select set_config('statement_timeout', ${String(Math.ceil(callMs))}, true)`)
       const result = await insideTransaction.run(pool, scope, () => work(tx))
       // a swallowed error leaves the transaction dead, and `commit` would then roll back without a word
       await tx.execute('select 1')

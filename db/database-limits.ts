@@ -11,7 +11,10 @@ export interface DatabaseLimits {
 
 export const INTERACTIVE_LIMITS: DatabaseLimits = { callMs: 10_000, transactionMs: 15_000, waitMs: 20_000 }
 
-const scoped = new AsyncLocalStorage<DatabaseLimits>()
+// The open database belongs to one of the several copies that a server process holds of this module; all of them share this one scope.
+const key = Symbol.for('inverse-kelvin.database-limits')
+const shared = globalThis as typeof globalThis & { [key]?: AsyncLocalStorage<DatabaseLimits> }
+const scoped = (shared[key] ??= new AsyncLocalStorage<DatabaseLimits>())
 
 export const databaseLimits = (): DatabaseLimits => scoped.getStore() ?? INTERACTIVE_LIMITS
 

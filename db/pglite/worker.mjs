@@ -148,6 +148,12 @@ async function run(database, message) {
   }
 }
 
+/** The engine has stopped; the owner of this thread starts another one. */
+function giveUp(message) {
+  parentPort.postMessage({ fatal: 'engine', message })
+  process.exit(1)
+}
+
 async function answer(database, message) {
   try {
     const result = await run(database, message)
@@ -158,10 +164,33 @@ async function answer(database, message) {
     parentPort.postMessage({ id: message.id, error: description, syncCount })
     // an error without a code is not the statement's: the engine itself has stopped
     if (description.code === undefined && message.op !== 'dump') {
-      parentPort.postMessage({ fatal: 'engine', message: description.message })
-      process.exit(1)
+      giveUp(description.message)
     }
   }
+}
+
+/** In this build nothing starts a checkpoint: without one the log grows for ever, and so does the start after a kill. */
+const CHECKPOINT_BYTES = 32 * 1024 * 1024
+const ANSWERS_BETWEEN_LOOKS = 32
+let answers = 0
+let isInTransaction = false
+let checkpointedAt = 0
+
+async function logPosition(database) {
+  const found = await database.query("select (pg_current_wal_insert_lsn() - '0/0')::float8 as bytes")
+  return found.rows[0].bytes
+}
+
+async function checkpointWhenDue(database, message) {
+  if (message.op === 'close') return
+  if (message.op === 'exec' && /^(begin|commit|rollback)$/.test(message.sql)) isInTransaction = message.sql === 'begin'
+  answers += 1
+  if (isInTransaction || answers < ANSWERS_BETWEEN_LOOKS) return
+  answers = 0
+  const position = await logPosition(database)
+  if (position - checkpointedAt < CHECKPOINT_BYTES) return
+  await database.exec('checkpoint')
+  checkpointedAt = position
 }
 
 if (create) {
@@ -171,8 +200,12 @@ if (create) {
   const database = await open()
   // messages are answered strictly in their order
   let tail = Promise.resolve()
+  checkpointedAt = await logPosition(database)
   parentPort.on('message', (message) => {
-    tail = tail.then(() => answer(database, message))
+    tail = tail
+      .then(() => answer(database, message))
+      .then(() => checkpointWhenDue(database, message))
+      .catch((error) => giveUp(String(error?.message ?? error)))
   })
   parentPort.postMessage({ ready: true, syncCount })
 }

@@ -4,6 +4,7 @@ import path from 'node:path'
 import { sql } from 'drizzle-orm'
 import { afterAll, expect, test } from 'vitest'
 import { openFolderDatabase } from '@/db/client'
+import { maintainDatabase } from '@/db/maintain'
 
 const parent = mkdtempSync(path.join(tmpdir(), 'folder-'))
 const folder = path.join(parent, 'data', 'database')
@@ -49,5 +50,31 @@ test('no change is acknowledged before the disk has it', async () => {
     if (counters.syncs <= before) early.push(n)
   }
   expect(early).toEqual([])
+  await opened.close()
+})
+
+test('the log of changes does not grow for ever, and maintenance runs through', async () => {
+  const opened = await openFolderDatabase(folder)
+  const logBytes = () =>
+    readdirSync(path.join(folder, 'pg_wal'), { withFileTypes: true })
+      .filter((entry) => entry.isFile())
+      .reduce((sum, entry) => sum + statSync(path.join(folder, 'pg_wal', entry.name)).size, 0)
+  await opened.database.execute(sql`create table filler (content text)`)
+  for (let round = 0; round < 8; round++) {
+    // some 25 MB of changes, then as many small questions as it takes to be looked at
+    await opened.database.execute(
+      sql`insert into filler select repeat(md5(n::text), 6) from generate_series(1, 100000) n`,
+    )
+    for (let n = 0; n < 32; n++) await opened.database.execute(sql`select 1`)
+  }
+  // twice the 64 MB it may hold, against the 200 MB that were written
+  expect(logBytes()).toBeLessThan(128e6)
+  await maintainDatabase(opened.database)
+  const [filler] = (
+    await opened.database.execute<{ rows: number }>(
+      sql`select reltuples::float8 as rows from pg_class where relname = 'filler'`,
+    )
+  ).rows
+  expect(filler?.rows).toBe(800_000)
   await opened.close()
 })
