@@ -28,10 +28,8 @@ const HOUSE: readonly Place[] = [
 /** The bar at the head of every page: where one can go, the one thing done most often, and who is signed in. */
 export function HeaderBar({
   signedIn,
-  signOut,
 }: {
   readonly signedIn: { readonly displayName: string; readonly role: Role } | null
-  readonly signOut: (() => Promise<void>) | null
 }) {
   const path = usePathname()
   const isGuest = signedIn === null || signedIn.role === 'guest'
@@ -62,7 +60,7 @@ export function HeaderBar({
           {signedIn === null ? null : (
             <div className="hidden items-center gap-x-3 lg:flex">
               <SignedIn signedIn={signedIn} />
-              {signOut === null ? null : <SignOut signOut={signOut} />}
+              <SignOut />
             </div>
           )}
           {signedIn === null ? null : (
@@ -82,7 +80,7 @@ export function HeaderBar({
                 </nav>
                 <div className="mt-3 flex items-center justify-between gap-3">
                   <SignedIn signedIn={signedIn} />
-                  {signOut === null ? null : <SignOut signOut={signOut} />}
+                  <SignOut />
                 </div>
               </div>
             </details>
@@ -126,9 +124,10 @@ function SignedIn({ signedIn }: { readonly signedIn: { readonly displayName: str
   )
 }
 
-function SignOut({ signOut }: { readonly signOut: () => Promise<void> }) {
+/** A whole new page follows, so that nothing of this person stays in the browser's memory. */
+function SignOut() {
   return (
-    <form action={signOut}>
+    <form action="/sign-out" method="post">
       <Button type="submit" kind="quiet" className="px-1">
         Sign out
       </Button>

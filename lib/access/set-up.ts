@@ -12,8 +12,9 @@ import {
 import { selectAccountByEmail, selectOneTimeCode, selectWorkingAdmins } from '../../db/queries/people'
 import { hashPassword, PASSWORD_SCHEME } from '../auth/password'
 import { passwordFault } from '../auth/password-fault'
-import { takeFromBudget } from '../auth/rate-limit'
+import { networkOf, takeFromBudget } from '../auth/rate-limit'
 import { hashSecret, makeSecret } from '../auth/secret'
+import { logSecurityEvent } from '../auth/security-log'
 import { AppError } from '../domain/errors'
 import { type Actor } from '../domain/role'
 import { startSession, type Caller } from './sign-in'
@@ -90,7 +91,10 @@ export async function completeSetUp(
     { issues: [{ field: 'code', message: 'Not a code that still works.' }] },
   )
   const code = await selectOneTimeCode(db, codeHash, now)
-  if (code === null || code.purpose !== 'set-up') throw refused
+  if (code === null || code.purpose !== 'set-up') {
+    logSecurityEvent('set-up-code-refused', { network: networkOf(caller.address) })
+    throw refused
+  }
   refuseFaultyPassword(input)
   const passwordHash = await hashPassword(input.password)
   const userId = randomUUID()

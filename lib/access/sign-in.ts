@@ -13,9 +13,10 @@ import { refuseEvenly } from '../auth/even-refusal'
 import { hashPassword, PASSWORD_SCHEME, verifyPassword } from '../auth/password'
 import { callerAddress, networkOf, restoreBudget, takeFromBudget, tooManyAttempts } from '../auth/rate-limit'
 import { hashSecret, makeSecret } from '../auth/secret'
+import { logSecurityEvent } from '../auth/security-log'
 import { SESSION_LIFE_S } from '../auth/session-life'
 import { LOCKED_AFTER, secondsToWait } from '../auth/sign-in-delay'
-import { AppError } from '../domain/errors'
+import { AppError, appErrorOf } from '../domain/errors'
 import { type Actor } from '../domain/role'
 import { sessionRefOf } from './session-ref'
 
@@ -79,7 +80,14 @@ export async function checkPassword(
   caller: Caller,
   now = new Date(),
 ): Promise<AccountRow> {
-  return refuseEvenly(() => openAccount(credentials, caller, now))
+  try {
+    return await refuseEvenly(() => openAccount(credentials, caller, now))
+  } catch (error) {
+    const code = appErrorOf(error)?.code
+    if (code === 'not-signed-in') logSecurityEvent('sign-in-refused', { network: networkOf(caller.address) })
+    if (code === 'too-many-requests') logSecurityEvent('too-many-attempts', { network: networkOf(caller.address) })
+    throw error
+  }
 }
 
 async function openAccount(

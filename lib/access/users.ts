@@ -24,8 +24,9 @@ import {
 } from '../../db/queries/people'
 import { hashPassword, PASSWORD_SCHEME, verifyPassword } from '../auth/password'
 import { passwordFault } from '../auth/password-fault'
-import { takeFromBudget } from '../auth/rate-limit'
+import { networkOf, takeFromBudget } from '../auth/rate-limit'
 import { hashSecret, makeSecret } from '../auth/secret'
+import { logSecurityEvent } from '../auth/security-log'
 import { LOCKED_AFTER } from '../auth/sign-in-delay'
 import { AppError } from '../domain/errors'
 import {
@@ -210,11 +211,13 @@ export async function acceptInvitation(
   const code = await selectOneTimeCode(db, codeHash, now)
   const account =
     code === null || code.purpose !== 'invitation' || code.userId === null ? null : await selectAccount(db, code.userId)
-  if (account === null || account.disabledAt !== null)
+  if (account === null || account.disabledAt !== null) {
+    logSecurityEvent('invitation-refused', { network: networkOf(caller.address) })
     throw new AppError(
       'not-found',
       'This invitation was used, has run out or was replaced. Ask an admin for a new one.',
     )
+  }
   refuseFaultyPassword(input.password, account, 'password')
   const passwordHash = await hashPassword(input.password)
   await db.transaction(async (tx) => {

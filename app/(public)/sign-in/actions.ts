@@ -7,13 +7,7 @@ import { type FormState } from '@/components/ui/form-state'
 import { assertActionFromHere } from '@/lib/access/actor'
 import { callerFrom, signIn, signOut } from '@/lib/access/sign-in'
 import { safeNextPath } from '@/lib/auth/next-path'
-import {
-  clearSessionSecret,
-  readKnownPeople,
-  readSessionSecret,
-  rememberDevice,
-  writeSessionSecret,
-} from '@/lib/auth/session'
+import { readKnownPeople, readSessionSecret, rememberDevice, writeSessionSecret } from '@/lib/auth/session'
 import { answerAction, textFields } from '@/lib/domain/action-answer'
 import { signInSchema } from '@/lib/domain/person'
 
@@ -31,13 +25,4 @@ export async function signInAction(_previous: FormState, data: FormData): Promis
   })
   if (!answer.ok) return answer
   redirect(routeOf(safeNextPath(data.get('next'))))
-}
-
-/** Ends the session on the server, not only in this browser. */
-export async function signOutAction(): Promise<void> {
-  await assertActionFromHere()
-  const secret = await readSessionSecret()
-  if (secret !== null) await signOut(secret)
-  await clearSessionSecret()
-  redirect('/sign-in')
 }

@@ -2,6 +2,7 @@ import { randomUUID } from 'node:crypto'
 import { z } from 'zod'
 import { actorFromRequest } from '@/lib/access/actor'
 import { onceForKey } from '@/lib/access/idempotency'
+import { logSecurityEvent } from '@/lib/auth/security-log'
 import { AnalysisError } from '@/lib/analysis/analysis-error'
 import { issuesOf } from '@/lib/domain/action-answer'
 import { AppError, appErrorOf, type AppErrorCode, type FieldIssue } from '@/lib/domain/errors'
@@ -87,6 +88,8 @@ function problemAnswer(problem: Problem, requestId: string): Response {
 function answerToError(error: unknown, requestId: string): Response {
   const expected = appErrorOf(error)
   if (expected !== null) {
+    if (expected.code === 'not-allowed' || expected.code === 'bad-origin')
+      logSecurityEvent(expected.code, { requestId })
     const { issues, retryAfterS, ...details } = expected.details
     return problemAnswer(
       {
