@@ -256,7 +256,7 @@ function slopeGroup(ranking: Ranking, scale: IntervalScale | null): Group {
         valueGetter: (parameters) => rowOf(parameters)?.activationEnergyInterval?.[0] ?? null,
         cellRenderer: IntervalCell,
       },
-      quantity('lnPreExponential', 'ln A', practicalUnits.lnRate, (row) => ({
+      quantity('lnPreExponential', 'ln A', practicalUnits.lnPreExponential, (row) => ({
         estimate: row.lnPreExponential,
         interval: row.lnPreExponentialInterval,
       })),

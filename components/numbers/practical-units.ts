@@ -30,10 +30,12 @@ export const practicalUnits = {
     fromSi: (valueSi: number) => valueSi - 273.15,
     differenceFromSi: (differenceSi: number) => differenceSi,
   },
-  /** ln of a rate constant per gram: a shift, so its uncertainty is untouched */
+  /** ln of a rate in the plot's unit: a shift, so its uncertainty is untouched */
   lnRate: {
-    label: 'A in µmol g⁻¹ s⁻¹',
+    label: 'µmol g⁻¹ s⁻¹',
     fromSi: (valueSi: number) => valueSi + ln(RATE_FACTOR),
     differenceFromSi: (differenceSi: number) => differenceSi,
   },
+  /** ln A is given for A in SI, as its working has it */
+  lnPreExponential: scaled('A in mol kg⁻¹ s⁻¹', 1),
 } satisfies Record<string, PracticalUnit>

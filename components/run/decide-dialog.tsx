@@ -2,7 +2,7 @@
 
 import { useState } from 'react'
 import { type ActionResult } from '@/lib/domain/errors'
-import { runDecisions, type NewDecision, type RunDecision } from '@/lib/domain/run'
+import { type NewDecision, type RunDecision } from '@/lib/domain/run'
 import { ReasonDialog } from './reason-dialog'
 
 const words: Readonly<Record<RunDecision, { label: string; hint: string }>> = {
@@ -10,6 +10,8 @@ const words: Readonly<Record<RunDecision, { label: string; hint: string }>> = {
   'set-aside': { label: 'Set aside', hint: 'kept and shown, part of no line' },
   repeat: { label: 'Repeat', hint: 'to be measured again; part of no line until then' },
 }
+
+const choices: readonly RunDecision[] = ['counts', 'set-aside', 'repeat']
 
 interface DecideDialogProps {
   readonly runCode: string
@@ -32,7 +34,7 @@ export function DecideDialog({ runCode, current, onClose, onConfirm, onDone }: D
     >
       <fieldset className="m-0 mb-3 border-0 p-0">
         <legend className="mb-1 p-0 text-[14px] text-ink-2">Decision</legend>
-        {runDecisions.map((choice) => (
+        {choices.map((choice) => (
           <label key={choice} className="flex min-h-8 items-baseline gap-2 touch:min-h-11">
             <input
               type="radio"

@@ -24,15 +24,10 @@ const optional = (value: number | null, decimals: number) => (value === null ? '
 export function FitTable({ caption, fits, onOpen }: FitTableProps) {
   const head = 'border-b border-line-strong px-2 py-1 align-bottom text-[12.5px] leading-tight font-semibold text-ink-2'
   const level = fits[0]?.fit.confidenceLevel ?? 0.95
-  const shift = practicalUnits.lnRate
   const quantity = (fit: ArrheniusFit, key: 'activationEnergyJPerMol' | 'lnPreExponential') => {
     const unit = key === 'activationEnergyJPerMol' ? practicalUnits.activationEnergy : null
     const half = halfWidth(fit.intervals[key])
-    const value = unit
-      ? unit.fromSi(fit[key].value)
-      : fit.quantity === 'rate'
-        ? shift.fromSi(fit[key].value)
-        : fit[key].value
+    const value = unit ? unit.fromSi(fit[key].value) : fit[key].value
     const content = (
       <>
         <ValueWithUncertainty
@@ -64,7 +59,10 @@ export function FitTable({ caption, fits, onOpen }: FitTableProps) {
             </th>
             {[
               ['Ea', 'kJ mol⁻¹'],
-              ['ln A', fits[0]?.fit.quantity === 'turnover-frequency' ? 'A in s⁻¹' : shift.label],
+              [
+                'ln A',
+                fits[0]?.fit.quantity === 'turnover-frequency' ? 'A in s⁻¹' : practicalUnits.lnPreExponential.label,
+              ],
               ['Holds', 'temperatures'],
               ['Span', '°C'],
               ['Residual', 's of ln r'],
