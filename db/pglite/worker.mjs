@@ -32,8 +32,7 @@ class DurableNodeFS extends NodeFS {
         try {
           if (failSyncAfter !== null && syncCount >= failSyncAfter)
             throw new Error('EIO: i/o error, fsync (made to fail)')
-          if (stream.nfd === undefined) syncPath(module.NODEFS.realPath(stream.node))
-          else fs.fsyncSync(stream.nfd)
+          fs.fsyncSync(stream.nfd)
           syncCount += 1
           return 0
         } catch (error) {
