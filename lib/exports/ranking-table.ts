@@ -1,6 +1,6 @@
 import { type Estimate } from '../analysis/estimate'
 import { type Ranking, type RankingRow } from '../domain/ranking'
-import { totalStandardUncertainty } from '../analysis/total-standard-uncertainty'
+import { totalUncertainty } from '../analysis/total-uncertainty'
 
 /** One column of the downloaded ranking: header with its unit, and a typed cell. Text and spreadsheet are written from the same list. */
 export interface RankingColumn {
@@ -26,7 +26,7 @@ function numberColumns(
       header: `${name}, standard uncertainty [${unit}]`,
       value: (row) => {
         const found = estimate(row)
-        return found === null ? null : scaled(totalStandardUncertainty(found), factor)
+        return found === null ? null : scaled(totalUncertainty(found)?.standardUncertainty, factor)
       },
     },
     { header: `${name}, ${percent} interval, low [${unit}]`, value: (row) => scaled(interval(row)?.[0], factor) },
