@@ -5,7 +5,7 @@ import { type NewRig } from '../../lib/domain/rig'
  * any others, and every number on the screen is computed from them.
  */
 
-export const DEMO_PASSWORD = 'calder quay reactor'
+export const DEMO_PASSWORD = 'straw bronze violet blue'
 
 export const demoPeople = [
   { key: 'technician', email: 'technician@calderquay.example', displayName: 'Tove Brandt', role: 'technician' },
