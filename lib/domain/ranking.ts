@@ -77,3 +77,12 @@ export interface Ranking {
   /** one sentence that says what the numbers mean */
   readonly summary: string
 }
+
+export interface RankingOptions {
+  /** left out, the method's own */
+  readonly referenceTemperatureK?: number
+  /** runs that no lead has decided on yet are in the live ranking, marked so, unless this says no */
+  readonly includeProvisional?: boolean
+  /** an older version of the method, to look through */
+  readonly methodNumber?: number
+}
