@@ -95,7 +95,7 @@ function prepare(candidates: readonly RankCandidate[]): Prepared[] {
   })
 }
 
-/** Lower triangle L with L Lᵀ = matrix, row by row in one array. */
+// Lower triangle L with L Lᵀ = matrix, row by row in one array.
 function cholesky(matrix: readonly number[], size: number): number[] {
   const lower = new Array<number>(size * size).fill(0)
   for (let i = 0; i < size; i++) {
@@ -171,7 +171,7 @@ function givenTau(samples: readonly Prepared[], tau: number): Given {
   }
 }
 
-/** The spread of the samples on a grid with the weight that the estimates give each value of it (uniform prior on the spread). */
+// The spread of the samples on a grid with the weight that the estimates give each value of it (uniform prior on the spread).
 function spreadGrid(samples: readonly Prepared[]): { given: Given[]; cumulative: number[] } {
   let least = Number.POSITIVE_INFINITY
   let most = Number.NEGATIVE_INFINITY
