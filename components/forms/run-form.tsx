@@ -9,20 +9,13 @@ import { Notice } from '@/components/ui/notice'
 import { SelectField } from '@/components/ui/select-field'
 import { TextArea } from '@/components/ui/text-area'
 import { TextField } from '@/components/ui/text-field'
-import { FLOW_REFERENCES } from '@/lib/analysis/units/flow-reference'
 import { formatQuantity } from '@/lib/analysis/units/format-quantity'
 import { readRunForm } from '@/lib/domain/read-run-form'
-import {
-  openRunForm,
-  referenceFromKey,
-  referenceKey,
-  type RunFormChoices,
-  type RunFormValues,
-  runFormValuesSchema,
-} from '@/lib/domain/run-form'
+import { openRunForm, type RunFormChoices, type RunFormValues, runFormValuesSchema } from '@/lib/domain/run-form'
 import { speciesText } from '@/lib/domain/species-text'
 import { CautionList } from './caution-list'
 import { DraftLine } from './draft-line'
+import { flowReferenceChoices } from './flow-reference-choices'
 import { unsentDraft } from './draft-keeper'
 import { useDraft } from './use-draft'
 
@@ -278,7 +271,7 @@ export function RunForm({ choices, initial, isDraft, now, save }: RunFormProps) 
           label="Flows are counted at"
           unchosen="Not said yet"
           hint={reading.asksFlowReference ? undefined : 'A line can state its own, as in 60 mL/min (0 °C, 1013 mbar).'}
-          choices={referenceChoices(values.flowReference)}
+          choices={flowReferenceChoices(values.flowReference)}
           className="col-span-2"
         />
         <div className="col-span-2">
@@ -547,23 +540,6 @@ function share(moleFraction: number | null, isStandard: boolean): string {
   if (moleFraction === null) return standard
   const percent = 100 * moleFraction
   return `${percent >= 10 ? percent.toFixed(1) : percent.toPrecision(2)} %${isStandard ? `, ${standard}` : ''}`
-}
-
-/** The usual states, and the one in use when it is none of them. */
-function referenceChoices(current: string) {
-  const usual = FLOW_REFERENCES.map((state) => ({
-    value: referenceKey(state),
-    label: `${state.label} (${state.usedBy})`,
-  }))
-  const own = referenceFromKey(current)
-  if (own === null || usual.some(({ value }) => value === current)) return usual
-  return [
-    {
-      value: current,
-      label: `${formatQuantity(own.temperatureK, 'temperature')}, ${formatQuantity(own.pressurePa, 'pressure', { significantDigits: 6 })}`,
-    },
-    ...usual,
-  ]
 }
 
 function focusFirstFault(form: HTMLFormElement | null): void {
