@@ -18,6 +18,10 @@ const config: NextConfig = {
   typedRoutes: true,
   images: { unoptimized: true },
   agentRules: false,
+  // see the file: the original would ask by `eval`
+  turbopack: {
+    resolveAlias: { '@stdlib/assert-has-generator-support': { browser: './app/_has-generator-support.cjs' } },
+  },
   experimental: { serverActions: { bodySizeLimit: '1mb' } },
   headers: async () => [{ source: '/:path*', headers: securityHeaders }],
 }
