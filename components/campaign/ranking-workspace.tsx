@@ -103,7 +103,7 @@ export function RankingWorkspace(props: RankingWorkspaceProps) {
   const query = rankingQueryString(view)
   const drawableCount = rows.filter((entry) => entry.row.fit !== null).length
   return (
-    <div className="grid grid-cols-[minmax(0,1fr)] xl:grid-cols-[minmax(0,1fr)_416px]">
+    <div className="grid grid-cols-[minmax(0,1fr)] xl:grid-cols-[minmax(0,1fr)_388px]">
       <section aria-label="Ranking" className="min-w-0 border-line xl:border-r">
         <div className="flex flex-wrap items-center gap-x-4 gap-y-1 px-4 py-2 sm:px-6">
           <span>
@@ -146,14 +146,14 @@ export function RankingWorkspace(props: RankingWorkspaceProps) {
               <a
                 href={`/api/v1/campaigns/${campaignId}/ranking.csv?${query}`}
                 download
-                className="inline-block min-h-6"
+                className="inline-flex min-h-6 items-center px-0.5"
               >
                 CSV
               </a>{' '}
               <a
                 href={`/api/v1/campaigns/${campaignId}/ranking.xlsx?${query}`}
                 download
-                className="inline-block min-h-6"
+                className="inline-flex min-h-6 items-center px-0.5"
               >
                 XLSX
               </a>

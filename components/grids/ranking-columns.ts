@@ -85,7 +85,7 @@ function quantity(
     ...header(unit.label),
     colId,
     headerName,
-    width: 108,
+    width: 104,
     valueGetter: (parameters) => {
       const row = rowOf(parameters)
       const estimate = row ? read(row).estimate : null
@@ -156,7 +156,7 @@ function rankColumns(isNarrow: boolean): Column[] {
       ...numeric,
       colId: 'rank',
       headerName: 'Rank',
-      width: 68,
+      width: 64,
       pinned: isNarrow ? null : 'left',
       sort: 'asc',
       valueGetter: (parameters) => rowOf(parameters)?.rank ?? null,
@@ -170,7 +170,7 @@ function rankColumns(isNarrow: boolean): Column[] {
       type: [],
       colId: 'rankInterval',
       headerName: '90 % of draws',
-      width: 100,
+      width: 96,
       pinned: isNarrow ? null : 'left',
       valueGetter: (parameters) => rowOf(parameters)?.rankInterval?.[0] ?? null,
       cellRenderer: RankIntervalCell,
@@ -178,7 +178,7 @@ function rankColumns(isNarrow: boolean): Column[] {
     {
       colId: 'sample',
       headerName: 'Sample',
-      width: isNarrow ? 150 : 178,
+      width: isNarrow ? 150 : 170,
       pinned: 'left',
       filter: 'agTextColumnFilter',
       valueGetter: (parameters) => {
@@ -195,7 +195,7 @@ function rankColumns(isNarrow: boolean): Column[] {
 function rateGroups(ranking: Ranking): { first: Group; second: Group } {
   const celsius = formatFixed(ranking.referenceTemperatureK - 273.15, 1).replace('.0', '')
   const best = plain('probabilityBest', 'P(best)', '', 2, (row) => row.probabilityBest, {
-    width: 74,
+    width: 68,
     cellRenderer: (parameters: ICellRendererParams<RankingGridRow>) => {
       const probability = rowOf(parameters)?.probabilityBest ?? null
       return createElement(
@@ -251,7 +251,7 @@ function slopeGroup(ranking: Ranking, scale: IntervalScale | null): Group {
         type: [],
         colId: 'activationEnergyInterval',
         headerName: `${percent} % interval`,
-        width: 132,
+        width: 114,
         filter: false,
         valueGetter: (parameters) => rowOf(parameters)?.activationEnergyInterval?.[0] ?? null,
         cellRenderer: IntervalCell,
@@ -315,7 +315,7 @@ function stateGroup(ranking: Ranking): Group {
   }
 }
 
-const carbonColumn = plain('carbonBalance', 'Carbon', 'out/in', 2, (row) => row.carbonBalance, { width: 72 })
+const carbonColumn = plain('carbonBalance', 'Carbon', 'out/in', 2, (row) => row.carbonBalance, { width: 66 })
 
 /** Doubts and decisions; and the cells that people write. */
 function judgementColumns(permissions: RankingPermissions): { doubts: Column[]; written: Column[] } {
