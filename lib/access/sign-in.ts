@@ -11,7 +11,14 @@ import {
 import { type AccountRow, selectAccount, selectAccountByEmail, selectSession } from '../../db/queries/people'
 import { refuseEvenly } from '../auth/even-refusal'
 import { hashPassword, PASSWORD_SCHEME, verifyPassword } from '../auth/password'
-import { callerAddress, networkOf, restoreBudget, takeFromBudget, tooManyAttempts } from '../auth/rate-limit'
+import {
+  callerAddress,
+  networkOf,
+  restoreBudget,
+  returnToBudget,
+  takeFromBudget,
+  tooManyAttempts,
+} from '../auth/rate-limit'
 import { hashSecret, makeSecret } from '../auth/secret'
 import { logSecurityEvent } from '../auth/security-log'
 import { SESSION_LIFE_S } from '../auth/session-life'
@@ -105,6 +112,8 @@ async function openAccount(
   const fits = await verifyPassword(credentials.password, storedHash)
   if (account === null || !fits || account.disabledAt !== null) throw new AppError('not-signed-in', REFUSED)
   await db.transaction((tx) => clearFailedSignIns(tx, account.id))
+  await returnToBudget('sign-in-address', caller.address)
+  await returnToBudget('sign-in-network', networkOf(caller.address))
   await restoreBudget('sign-in-device', `${account.id} ${networkOf(caller.address)}`)
   return account
 }

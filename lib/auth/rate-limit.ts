@@ -1,6 +1,6 @@
 import 'server-only'
 import { isIP } from 'node:net'
-import { RateLimiterMemory, RateLimiterRes } from 'rate-limiter-flexible'
+import { RateLimiterMemory } from 'rate-limiter-flexible'
 import { AppError } from '../domain/errors'
 import { environment } from '../environment'
 
@@ -46,12 +46,19 @@ export async function takeFromBudget(name: Budget, key: string): Promise<void> {
   try {
     await limiter(name).consume(key)
   } catch (refusal) {
-    if (refusal instanceof RateLimiterRes) throw tooManyAttempts(refusal.msBeforeNext / 1000)
+    // Not by its class: bundled, the package is there twice, once as what we import and once as what it imports itself.
+    if (typeof refusal === 'object' && refusal !== null && 'msBeforeNext' in refusal)
+      throw tooManyAttempts(Number(refusal.msBeforeNext) / 1000)
     throw refusal
   }
 }
 
-/** Gives the budget of a key back, after a success. */
+/** Gives one back: a success costs nothing, so that a whole shift can sign in from behind one address. */
+export async function returnToBudget(name: Budget, key: string): Promise<void> {
+  await limiter(name).reward(key)
+}
+
+/** Gives the whole budget of a key back. */
 export async function restoreBudget(name: Budget, key: string): Promise<void> {
   await limiter(name).delete(key)
 }

@@ -20,13 +20,22 @@ function cookieName(name: string): string {
   return isOriginTrustworthy() ? `__Host-${name}` : `${name}-plain`
 }
 
+/** What is under a seal; nothing where it is broken, has run out, was made with another key, or never was one. */
+async function unseal(sealed: string, password: string, ttl: number): Promise<unknown> {
+  try {
+    return await unsealData(sealed, { password, ttl })
+  } catch (error) {
+    // Some broken seals are answered with an empty object, others are thrown; to us they are all one.
+    return error instanceof Error ? {} : Promise.reject(error)
+  }
+}
+
 async function readSealed(name: string, ttl: number): Promise<Readonly<Record<string, unknown>>> {
   const sealed = (await cookies()).get(cookieName(name))?.value
   if (sealed === undefined || sealed.length > 4_096) return {}
   for (const password of [environment.SESSION_KEY, environment.SESSION_KEY_PREVIOUS]) {
     if (password === undefined) continue
-    // Answers an empty object when the seal is broken, has run out, or was made with another key.
-    const content: unknown = await unsealData(sealed, { password, ttl })
+    const content = await unseal(sealed, password, ttl)
     if (typeof content === 'object' && content !== null && Object.keys(content).length > 0) return { ...content }
   }
   return {}

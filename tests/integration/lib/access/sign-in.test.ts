@@ -136,3 +136,9 @@ test('one address may try thirty times in five minutes, whatever names it tries'
   expect(outcomes.filter((one) => one === 'not-signed-in')).toHaveLength(30)
   expect(outcomes.slice(30)).toEqual(Array.from({ length: 10 }, () => 'too-many-requests'))
 })
+
+test('a whole shift signs in from one address: what succeeds costs nothing', async () => {
+  const { email } = await makePerson('researcher', { passwordHash })
+  const from: Caller = { address: '203.0.113.77', userAgent: '', knownPeople: [] }
+  for (let n = 0; n < 35; n += 1) expect(await attempt(email, TEST_PASSWORD, START, from), `sign-in ${n}`).toBe('in')
+})
