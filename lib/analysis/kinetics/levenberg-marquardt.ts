@@ -7,6 +7,8 @@ export interface NonlinearModel {
   readonly values: (parameters: readonly number[]) => readonly number[]
   /** a row a value, a column a parameter; numerical derivatives of high accuracy without it */
   readonly jacobian?: (parameters: readonly number[]) => readonly (readonly number[])[]
+  /** size of each parameter, for numerical derivatives of one that is or passes near zero */
+  readonly typicalSizes?: readonly number[]
 }
 
 /** Nonlinear least-squares fit. */
@@ -28,6 +30,7 @@ export interface NonlinearFit {
 const MAXIMUM_ITERATIONS = 500
 const STEP_TOLERANCE = 1e-13
 const REDUCTION_TOLERANCE = 1e-15
+const PERFECT_FIT = 1e-20
 
 /**
  * Nonlinear least squares by Levenberg and Marquardt.
@@ -59,7 +62,9 @@ export function fitNonlinear(
   if (weights !== null && (weights.length !== y.length || weights.some((w) => !(w > 0))))
     throw new AnalysisError('not-positive', 'There must be one weight above zero for each value.')
   const roots = y.map((_unused, i) => Math.sqrt(weights?.[i] ?? 1))
-  const jacobianAt = model.jacobian ?? ((parameters: readonly number[]) => numericalJacobian(model.values, parameters))
+  const jacobianAt =
+    model.jacobian ??
+    ((parameters: readonly number[]) => numericalJacobian(model.values, parameters, model.typicalSizes ?? null))
   const residualsAt = (parameters: readonly number[]): number[] => {
     const values = model.values(parameters)
     if (values.length !== y.length)
@@ -71,6 +76,7 @@ export function fitNonlinear(
   let cost = sumOfSquares(residuals)
   if (!Number.isFinite(cost))
     throw new AnalysisError('not-finite', 'The model has no value at the start values.', { start: [...start] })
+  const size = y.reduce((sum, value, i) => sum + value * value * (roots[i] ?? NaN) * (roots[i] ?? NaN), 0)
   let jacobian = weigh(jacobianAt(parameters), roots)
   const scale = columnLengths(jacobian).map((length) => (length > 0 ? length : 1))
   let damping = 1e-3
@@ -89,12 +95,15 @@ export function fitNonlinear(
     const predicted = predictedReduction(jacobian, residuals, step, cost)
     const gain = predicted > 0 ? (cost - trialCost) / predicted : trialCost < cost ? 1 : -1
     if (trialCost <= cost && Number.isFinite(trialCost)) {
+      // data without scatter: below this the sum of squares is rounding and falls for ever
+      const isPerfect = trialCost <= PERFECT_FIT * size
       const isFlat = cost - trialCost <= REDUCTION_TOLERANCE * cost
       parameters = trial
       residuals = trialResiduals
       cost = trialCost
       if (
         isSmall ||
+        isPerfect ||
         (isFlat &&
           damping < 1e-6 &&
           step.every((value, j) => Math.abs(value) <= 1e-9 * (Math.abs(parameters[j] ?? 0) + 1e-12)))

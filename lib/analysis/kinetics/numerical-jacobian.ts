@@ -8,14 +8,16 @@
  *
  * @param f - values at given parameters [any]
  * @param parameters - where the derivatives are wanted [any]
+ * @param typicalSizes - size of each parameter, so that one near zero still gets a useful step; its own value without it [unit of each parameter]
  * @returns matrix, a row a value and a column a parameter [unit of f over unit of the parameter]
  */
 export function numericalJacobian(
   f: (parameters: readonly number[]) => readonly number[],
   parameters: readonly number[],
+  typicalSizes: readonly number[] | null = null,
 ): number[][] {
   const columns = parameters.map((value, j) => {
-    const step = 2e-2 * Math.max(Math.abs(value), 1e-8)
+    const step = 2e-2 * Math.max(Math.abs(value), 0.1 * (typicalSizes?.[j] ?? 0), 1e-30)
     const slope = (h: number): number[] => {
       // the step as the machine holds it
       const up = value + h

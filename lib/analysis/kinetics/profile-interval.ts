@@ -99,9 +99,10 @@ function endOf(
 // The same model with one parameter held: the others keep their order.
 function holding(model: NonlinearModel, index: number, value: number): NonlinearModel {
   const whole = (others: readonly number[]) => [...others.slice(0, index), value, ...others.slice(index)]
-  const { jacobian } = model
+  const { jacobian, typicalSizes } = model
   return {
     values: (others) => model.values(whole(others)),
+    ...(typicalSizes === undefined ? {} : { typicalSizes: typicalSizes.filter((_unused, j) => j !== index) }),
     ...(jacobian === undefined
       ? {}
       : { jacobian: (others) => jacobian(whole(others)).map((row) => row.filter((_unused, j) => j !== index)) }),
