@@ -15,18 +15,17 @@ import {
   listPeople,
   listPersonNames,
 } from '@/lib/access/users'
-import { hashPassword } from '@/lib/auth/password'
 import { type NewToken } from '@/lib/domain/person'
 import { roles } from '@/lib/domain/role'
 import { actorOf } from '@/tests/support/actors'
 import { freshDatabase } from '@/tests/support/fresh-database'
-import { makePerson, TEST_PASSWORD } from '@/tests/support/make-person'
+import { hashForTests, makePerson, TEST_PASSWORD } from '@/tests/support/make-person'
 
 let opened: OpenDatabase
 let passwordHash: string
 beforeAll(async () => {
   opened = await freshDatabase()
-  passwordHash = await hashPassword(TEST_PASSWORD)
+  passwordHash = await hashForTests()
 })
 afterAll(() => opened.close())
 

@@ -6,18 +6,17 @@ import { actorOfSession } from '@/lib/access/actor'
 import { endOtherSessions, endSession, endSessionsOf, listSessions } from '@/lib/access/sessions'
 import { signIn, signOut, type Caller } from '@/lib/access/sign-in'
 import { changePassword, changePerson } from '@/lib/access/users'
-import { hashPassword } from '@/lib/auth/password'
 import { hashSecret } from '@/lib/auth/secret'
 import { AppError } from '@/lib/domain/errors'
 import { actorOf } from '@/tests/support/actors'
 import { freshDatabase } from '@/tests/support/fresh-database'
-import { makePerson, TEST_PASSWORD } from '@/tests/support/make-person'
+import { hashForTests, makePerson, TEST_PASSWORD } from '@/tests/support/make-person'
 
 let opened: OpenDatabase
 let passwordHash: string
 beforeAll(async () => {
   opened = await freshDatabase()
-  passwordHash = await hashPassword(TEST_PASSWORD)
+  passwordHash = await hashForTests()
 })
 afterAll(() => opened.close())
 

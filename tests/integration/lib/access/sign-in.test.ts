@@ -4,17 +4,16 @@ import { getDatabase, type OpenDatabase } from '@/db/client'
 import { users } from '@/db/schema'
 import { signIn, type Caller } from '@/lib/access/sign-in'
 import { changePerson } from '@/lib/access/users'
-import { hashPassword } from '@/lib/auth/password'
 import { appErrorOf } from '@/lib/domain/errors'
 import { actorOf } from '@/tests/support/actors'
 import { freshDatabase } from '@/tests/support/fresh-database'
-import { makePerson, TEST_PASSWORD } from '@/tests/support/make-person'
+import { hashForTests, makePerson, TEST_PASSWORD } from '@/tests/support/make-person'
 
 let opened: OpenDatabase
 let passwordHash: string
 beforeAll(async () => {
   opened = await freshDatabase()
-  passwordHash = await hashPassword(TEST_PASSWORD)
+  passwordHash = await hashForTests()
 })
 afterAll(() => opened.close())
 

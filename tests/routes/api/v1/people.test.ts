@@ -9,10 +9,9 @@ import { GET as getTokens, POST as postToken } from '@/app/api/v1/tokens/route'
 import { getDatabase, type OpenDatabase } from '@/db/client'
 import { idempotencyKeys } from '@/db/schema'
 import { signIn } from '@/lib/access/sign-in'
-import { hashPassword } from '@/lib/auth/password'
 import type * as session from '@/lib/auth/session'
 import { freshDatabase } from '@/tests/support/fresh-database'
-import { makePerson, TEST_PASSWORD } from '@/tests/support/make-person'
+import { hashForTests, makePerson, TEST_PASSWORD } from '@/tests/support/make-person'
 
 /* The one thing a route test cannot have is the framework's cookie jar. */
 const cookie = vi.hoisted((): { secret: string | null } => ({ secret: null }))
@@ -26,7 +25,7 @@ let opened: OpenDatabase
 let passwordHash: string
 beforeAll(async () => {
   opened = await freshDatabase()
-  passwordHash = await hashPassword(TEST_PASSWORD)
+  passwordHash = await hashForTests()
 })
 afterAll(() => opened.close())
 beforeEach(() => {
