@@ -15,12 +15,12 @@ import { rankingGridRows } from '@/components/grids/ranking-grid-row'
 import { formatFixed } from '@/components/numbers/format-fixed'
 import { rankingKeys, rankingQuery, rankingQueryString } from '@/components/server-state/ranking'
 import { savePreference } from '@/components/server-state/save-preference'
+import { useMediaQuery } from '@/components/ui/use-media-query'
 import { WorkingPanel } from '@/components/working/working-panel'
 import { arrheniusSeries } from './arrhenius-series'
 import { CellConflict } from './cell-conflict'
 import { RANKING_COLUMNS_PREFERENCE } from './ranking-columns-preference'
 import { useCellChanges, type ChangeCampaignSample } from './use-cell-changes'
-import { useMediaQuery } from './use-media-query'
 import { useRankingView } from './use-ranking-view'
 
 interface RankingWorkspaceProps {

@@ -47,11 +47,11 @@ function boundsOf(values: readonly number[], share: number, least: number): Boun
   return { low: low - margin, high: high + margin }
 }
 
-/** Ticks of a round step inside the bounds, at most `count`. */
+/** Ticks of a round step (1, 2 or 5 and a power of ten) inside the bounds, at most `count`. */
 export function roundTicks(low: number, high: number, count: number): number[] {
   const rough = (high - low) / Math.max(1, count)
   const power = 10 ** Math.floor(Math.log10(rough))
-  const step = [1, 2, 2.5, 5, 10].map((factor) => factor * power).find((candidate) => candidate >= rough) ?? rough
+  const step = [1, 2, 5, 10].map((factor) => factor * power).find((candidate) => candidate >= rough) ?? rough
   const first = Math.ceil(low / step - 1e-9)
   const last = Math.floor(high / step + 1e-9)
   return Array.from({ length: Math.max(0, last - first + 1) }, (_, index) => (first + index) * step)
@@ -259,7 +259,12 @@ export function buildArrheniusOption(input: ArrheniusOptionInput): ChartOption {
         axisLine: edge,
         splitLine: none,
         axisTick: { ...rule, customValues: xTicks },
-        axisLabel: { ...axisText, customValues: xTicks, formatter: (value: number) => formatFixed(value, xDecimals) },
+        axisLabel: {
+          ...axisText,
+          customValues: xTicks,
+          hideOverlap: true,
+          formatter: (value: number) => formatFixed(value, xDecimals),
+        },
         name: '1000 K / T',
         nameLocation: 'end',
         nameGap: 0,

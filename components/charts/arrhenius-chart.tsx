@@ -1,6 +1,7 @@
 'use client'
 
 import { useMemo } from 'react'
+import { useMediaQuery } from '@/components/ui/use-media-query'
 import { buildArrheniusOption, type ArrheniusSeries } from './arrhenius-chart-option'
 import { arrheniusSummary, arrheniusTable } from './arrhenius-text'
 import { ChartFrame } from './chart-frame'
@@ -29,9 +30,11 @@ export function ArrheniusChart({
   referenceTemperatureK = null,
 }: ArrheniusChartProps) {
   const colours = useThemeColours()
+  const isNarrow = useMediaQuery('(max-width: 640px)')
+  const hasFewTicks = isCompact || isNarrow
   const option = useMemo(
-    () => buildArrheniusOption({ series, window, colours, isCompact, referenceTemperatureK }),
-    [series, window, colours, isCompact, referenceTemperatureK],
+    () => buildArrheniusOption({ series, window, colours, isCompact: hasFewTicks, referenceTemperatureK }),
+    [series, window, colours, hasFewTicks, referenceTemperatureK],
   )
   const table = useMemo(() => arrheniusTable(series, titles[quantity]), [series, quantity])
   return (
@@ -41,7 +44,7 @@ export function ArrheniusChart({
       table={table}
       option={option}
       colours={colours}
-      heightClass={isCompact ? 'h-[410px]' : 'h-[560px]'}
+      heightClass={hasFewTicks ? 'h-[410px]' : 'h-[560px]'}
       caption={titles[quantity]}
     />
   )

@@ -25,7 +25,7 @@ export function rulerScale(window: TemperWindow, width: number, inset: number): 
   const toTemperatureK = (x: number) => 1_000 / (cold - ((x - inset) / span) * (cold - hot))
   const lowC = window.lowK - ZERO_CELSIUS_K
   const highC = window.highK - ZERO_CELSIUS_K
-  const majors = roundTicks(lowC, highC, Math.max(4, width / 110))
+  const majors = roundTicks(lowC, highC, Math.max(5, width / 110))
   const [first = 0, second = first + 10] = majors
   const step = second - first
   const minors = roundTicks(lowC, highC, ((highC - lowC) / step) * 2)

@@ -83,7 +83,7 @@ export function FitTable({ caption, fits, onOpen }: FitTableProps) {
         <tbody>
           {fits.map(({ name, fit }) => (
             <tr key={name} className="border-b border-line">
-              <th scope="row" className="px-2 py-1 text-left font-normal">
+              <th scope="row" className="px-2 py-1 text-left font-normal whitespace-nowrap">
                 {name}
               </th>
               <td className="px-2 py-1 text-right whitespace-nowrap">{quantity(fit, 'activationEnergyJPerMol')}</td>
