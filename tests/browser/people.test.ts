@@ -1,5 +1,7 @@
 import { AxeBuilder } from '@axe-core/playwright'
+import { readdirSync } from 'node:fs'
 import { request as httpRequest } from 'node:http'
+import path from 'node:path'
 import { type Page } from 'playwright-core'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { openBrowser, type BrowserSession } from '@/tests/support/browser'
@@ -263,6 +265,40 @@ describe.sequential('people', () => {
         const answer = await send('GET', spelling, { ...headers })
         expect(answer.body, `${spelling} ${JSON.stringify(headers)}`).not.toMatch(canary)
       }
+  })
+
+  test('without a cookie every page of the workspace sends to sign in, whichever pages there are', async () => {
+    const pages = readdirSync('app/(workspace)', { recursive: true, encoding: 'utf8' })
+      .filter((name) => path.basename(name) === 'page.tsx')
+      .map((name) =>
+        `/${path.dirname(name)}`
+          .split('/')
+          .filter((part) => part !== '.' && !/^\(.*\)$/.test(part))
+          .map((part) => part.replace(/^\[.*\]$/, 'none'))
+          .join('/'),
+      )
+    expect(pages.length).toBeGreaterThan(5)
+    for (const page of pages) {
+      const answer = await send('GET', page === '' ? '/' : page, {})
+      const to = String(answer.headers.location ?? '')
+      expect([answer.status, to.replace(origin, '').replace(/\?.*/, '')], page).toEqual([307, '/sign-in'])
+    }
+  })
+
+  test('a page that nobody touches for half an hour leaves the session, and comes back after signing in', async () => {
+    const { context } = admin
+    const page = await context.newPage()
+    await page.clock.install()
+    await page.goto(`${origin}/settings/people`)
+    const cookie = await cookieOf(admin)
+    await page.clock.fastForward('29:00')
+    await page.mouse.move(200, 200)
+    await page.clock.fastForward('29:00')
+    expect((await send('GET', '/api/v1/me', { Cookie: cookie })).status).toBe(200)
+    await page.clock.fastForward('02:00')
+    await page.waitForURL(/\/sign-in\?next=%2Fsettings%2Fpeople$/)
+    expect((await send('GET', '/api/v1/me', { Cookie: cookie })).status).toBe(401)
+    await page.close()
   })
 
   test('every answer has the content policy, and pages broke none of it', async () => {
