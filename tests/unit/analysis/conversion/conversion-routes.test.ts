@@ -51,7 +51,7 @@ describe('C56 expansion: N2 + 3 H2, 25 % nitrogen', () => {
     closeTo(moleFractionAt(0.25, -1, 0.25, -2, conversion), fraction, 1e-10)
     closeTo(conversionBySingleReaction(moleFractionAt(0.25, -1, 0.25, -2, conversion), 0.25, -2), conversion, 1e-12)
     // 1 − y/y0 forgets that the gas shrinks: not reproduced
-    closeTo(1 - fraction / 0.25, naive, 1e-9)
+    closeTo(1 - fraction / 0.25, naive)
   })
   it('ammonia at X = 0.2 is 11.1 %', () => closeTo(moleFractionAt(0, 2, 0.25, -2, 0.2), 0.11111111111, 1e-10))
 })
