@@ -16,10 +16,11 @@ import {
   listPersonNames,
 } from '@/lib/access/users'
 import { type NewToken } from '@/lib/domain/person'
-import { roles } from '@/lib/domain/role'
+import { roles, type Actor } from '@/lib/domain/role'
 import { actorOf } from '@/tests/support/actors'
 import { freshDatabase } from '@/tests/support/fresh-database'
 import { hashForTests, makePerson, TEST_PASSWORD } from '@/tests/support/make-person'
+import { makeRun } from '@/tests/support/make-run'
 
 let opened: OpenDatabase
 let passwordHash: string
@@ -252,7 +253,31 @@ describe('a token', () => {
   })
 })
 
-test('somebody without memberships is offered no campaigns', async () => {
-  expect(await listCampaignNames(actorOf('researcher'))).toEqual([])
-  expect(await (await getDatabase()).select().from(members)).toEqual([])
+describe('membership', () => {
+  test('is read at each request: added, changed and taken away, it counts at the next one', async () => {
+    const db = await getDatabase()
+    const { campaignId } = await makeRun(db, 'membership')
+    await makeRun(db, 'elsewhere')
+    const person = await makePerson('researcher')
+    const { secret } = await signIn({ email: person.email, password: TEST_PASSWORD }, caller(), START)
+    const now = async () => {
+      const actor = await actorOfSession(secret, after(1))
+      if (actor === null) throw new Error('the session does not open the door')
+      return { actor, names: (await listCampaignNames(actor)).map((campaign) => campaign.id) }
+    }
+    expect(await now()).toMatchObject({ actor: { memberships: {} }, names: [] })
+    await db.insert(members).values({ campaignId, userId: person.id, role: 'technician' })
+    expect(await now()).toMatchObject({ actor: { memberships: { [campaignId]: 'technician' } }, names: [campaignId] })
+    await db.update(members).set({ role: 'lead' }).where(eq(members.userId, person.id))
+    expect(await now()).toMatchObject({ actor: { memberships: { [campaignId]: 'lead' } }, names: [campaignId] })
+    await db.delete(members).where(eq(members.userId, person.id))
+    expect(await now()).toMatchObject({ actor: { memberships: {} }, names: [] })
+  })
+
+  test('is not needed by an admin, and a bound token sees its one campaign', async () => {
+    const names = async (actor: Actor) => (await listCampaignNames(actor)).map((campaign) => campaign.code)
+    expect(await names(admin)).toEqual(['elsewhere', 'membership'])
+    const bound = actorOf('admin', { tokenScopes: ['read'], tokenCampaignId: 'membership-campaign' })
+    expect(await names(bound)).toEqual(['membership'])
+  })
 })
