@@ -73,8 +73,8 @@ export function buildTimeTraceOption(input: TimeTraceInput): ChartOption {
   const ticks = roundTicks(0, end, input.isCompact ? 5 : 12)
   const highestConversion = input.injections.reduce((most, entry) => Math.max(most, entry.conversion ?? 0), 0)
   const conversionTop = highestConversion > 0 ? highestConversion * 100 * 1.35 : 1
-  const conversionTicks = roundTicks(0, conversionTop, 3)
-  const temperatureTicks = roundTicks(axis.min, axis.max, 4).filter((tick) => tick > axis.min)
+  const conversionTicks = roundTicks(0, conversionTop, 4)
+  const temperatureTicks = roundTicks(axis.min, axis.max, 5).filter((tick) => tick > axis.min)
   const none = { show: false }
   const rule = { show: true, lineStyle: { color: colours.lineStrong } }
   return {
