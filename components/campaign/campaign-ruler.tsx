@@ -9,24 +9,31 @@ import { rankingQuery } from '@/components/server-state/ranking'
 import { useRankingView } from './use-ranking-view'
 
 const neverChanges = () => () => {}
+const room = <div className="h-[62px]" />
 
-/** The ruler under the campaign's title, on every one of its pages; the reference can be moved where something follows it. */
+/**
+ * The ruler under the campaign's title, on every one of its pages; the reference can be moved where something follows it.
+ * It asks for the ranking only once the page below has brought its own: a question asked before would keep that answer out.
+ */
 export function CampaignRuler({ campaignId }: { campaignId: string }) {
-  const [view, setView] = useRankingView()
-  const path = usePathname()
-  const { data } = useQuery(rankingQuery(campaignId, view))
-  // the layout is rendered before the page below has brought the ranking; the first pass in the browser must look the same
   const isInBrowser = useSyncExternalStore(
     neverChanges,
     () => true,
     () => false,
   )
+  return isInBrowser ? <RulerOfRanking campaignId={campaignId} /> : room
+}
+
+function RulerOfRanking({ campaignId }: { campaignId: string }) {
+  const [view, setView] = useRankingView()
+  const path = usePathname()
+  const { data } = useQuery(rankingQuery(campaignId, view))
   const window = useMemo(
     () => temperWindow(data ? [...data.holdTemperaturesK, data.referenceTemperatureK] : []),
     [data],
   )
   const follows = path.endsWith(`/campaigns/${campaignId}`) || path.endsWith('/slopes')
-  if (!data || !isInBrowser) return <div className="h-[62px]" />
+  if (!data) return room
   if (data.holdTemperaturesK.length === 0) return null
   const own = data.methodReferenceTemperatureK ?? null
   return (
