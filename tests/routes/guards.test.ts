@@ -1,10 +1,8 @@
-import { readdirSync } from 'node:fs'
-import path from 'node:path'
-import { pathToFileURL } from 'node:url'
 import { afterAll, beforeAll, describe, expect, test, vi } from 'vitest'
 import { type OpenDatabase } from '@/db/client'
 import { signIn } from '@/lib/access/sign-in'
 import type * as session from '@/lib/auth/session'
+import { findActions, findHandlers } from '@/tests/support/find-handlers'
 import { freshDatabase } from '@/tests/support/fresh-database'
 import { makePerson, TEST_PASSWORD } from '@/tests/support/make-person'
 
@@ -29,9 +27,6 @@ vi.mock('next/headers', () => ({
 }))
 
 const ORIGIN = 'http://localhost:3000'
-const ROOT = path.resolve(import.meta.dirname, '../..')
-const METHODS = ['GET', 'HEAD', 'POST', 'PUT', 'PATCH', 'DELETE'] as const
-
 /** Answer without anybody signed in, each for its reason. */
 const PUBLIC_HANDLERS: Readonly<Record<string, string>> = {
   'POST app/api/v1/tokens/route.ts': 'takes e-mail address and password in its body',
@@ -42,29 +37,8 @@ const PUBLIC_HANDLERS: Readonly<Record<string, string>> = {
   'POST app/(public)/sign-out/route.ts': 'ends a session, if there is one',
 }
 
-const files = readdirSync(path.join(ROOT, 'app'), { recursive: true, encoding: 'utf8' }).map((name) => `app/${name}`)
-
-interface Entry {
-  readonly name: string
-  readonly call: (...given: unknown[]) => Promise<unknown>
-}
-async function exportsOf(file: string): Promise<Entry[]> {
-  const exported: Record<string, unknown> = await import(pathToFileURL(path.join(ROOT, file)).href)
-  return Object.entries(exported).flatMap(([name, value]) =>
-    typeof value === 'function' ? [{ name, call: async (...given) => Reflect.apply(value, undefined, given) }] : [],
-  )
-}
-
-const handlers: { name: string; method: string; call: Entry['call'] }[] = []
-for (const file of files.filter((name) => name.endsWith('/route.ts')).sort())
-  for (const entry of await exportsOf(file))
-    if (METHODS.some((method) => method === entry.name))
-      handlers.push({ name: `${entry.name} ${file}`, method: entry.name, call: entry.call })
-
-const actions: (Entry & { isPublic: boolean })[] = []
-for (const file of files.filter((name) => name.endsWith('actions.ts')).sort())
-  for (const entry of await exportsOf(file))
-    actions.push({ name: `${entry.name} ${file}`, call: entry.call, isPublic: file.startsWith('app/(public)/') })
+const handlers = await findHandlers()
+const actions = (await findActions()).map((one) => ({ ...one, isPublic: one.file.startsWith('app/(public)/') }))
 
 let opened: OpenDatabase
 let secret: string
