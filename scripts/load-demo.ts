@@ -14,7 +14,7 @@ import {
   demoSamples,
   type DemoRun,
 } from '../db/demo/demo-campaign'
-import { actorOfSession } from '../lib/access/actor'
+import { actorOfSession } from '../lib/access/actor-of-secret'
 import { addMember, createCampaign, getCurrentMethod, saveMethod } from '../lib/access/campaigns'
 import { createReaction } from '../lib/access/reactions'
 import { createRig } from '../lib/access/rigs'

@@ -1,7 +1,7 @@
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { getDatabase, type OpenDatabase } from '@/db/client'
 import { oneTimeCodes, users } from '@/db/schema'
-import { actorOfSession } from '@/lib/access/actor'
+import { actorOfSession } from '@/lib/access/actor-of-secret'
 import { completeSetUp, ensureSetUpCode, isSetUpNeeded, makeAdminByCommand } from '@/lib/access/set-up'
 import { type Caller } from '@/lib/access/sign-in'
 import { freshDatabase } from '@/tests/support/fresh-database'
