@@ -8,6 +8,7 @@ import { formatFixed } from '@/components/numbers/format-fixed'
 import { practicalUnits } from '@/components/numbers/practical-units'
 import { SelectField } from '@/components/ui/select-field'
 import { ValueWithUncertainty } from '@/components/ui/value-with-uncertainty'
+import { pText } from './p-text'
 
 interface ComparisonProps {
   readonly ranking: Ranking
@@ -19,11 +20,6 @@ interface ComparedLine {
   readonly unit: string
   readonly found: EstimateDifference | null
   readonly isRatio: boolean
-}
-
-function pText(pValue: number | null): string {
-  if (pValue === null) return '–'
-  return pValue < 0.0001 ? '< 0.0001' : formatFixed(pValue, 4)
 }
 
 /** Differences of two samples, as the table below shows them. */

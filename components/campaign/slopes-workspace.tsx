@@ -12,6 +12,7 @@ import { rankingQuery } from '@/components/server-state/ranking'
 import { WorkingPanel } from '@/components/working/working-panel'
 import { arrheniusSeries, type PlottedQuantity } from './arrhenius-series'
 import { Comparison } from './comparison'
+import { SlopePairs } from './slope-pairs'
 import { useRankingView } from './use-ranking-view'
 
 const quantities: readonly { readonly value: PlottedQuantity; readonly label: string }[] = [
@@ -46,6 +47,7 @@ export function SlopesWorkspace({ campaignId }: { campaignId: string }) {
       ),
     [rows, shownIds],
   )
+  const ranked = useMemo(() => rows.map((entry) => entry.row), [rows])
   if (!ranking) {
     return (
       <p className="px-4 py-6 sm:px-6" role={error ? 'alert' : 'status'}>
@@ -107,7 +109,9 @@ export function SlopesWorkspace({ campaignId }: { campaignId: string }) {
         <h2 className="mt-5 mb-0">Lines</h2>
         <FitTable caption="Arrhenius lines" fits={fits} onOpen={(fit, key) => setWorking(fit.workings[key] ?? null)} />
         <h2 className="mt-5 mb-1">Compare two samples</h2>
-        <Comparison ranking={ranking} rows={rows.map((entry) => entry.row)} />
+        <Comparison ranking={ranking} rows={ranked} />
+        <h2 className="mt-5 mb-1">All pairs</h2>
+        <SlopePairs rows={ranked} confidenceLevel={ranking.confidenceLevel} />
       </div>
       <aside aria-label="Working" className="min-w-0 border-line px-4 py-3.5 max-xl:border-t sm:px-5 xl:border-l">
         {working ? (

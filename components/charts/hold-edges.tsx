@@ -117,7 +117,7 @@ export function HoldEdges({ holds, startS, endS, width, height, onMove }: HoldEd
               }}
               onPointerCancel={() => setMoving(null)}
             >
-              <rect x={x - 6} y={top} width="12" height={Math.max(1, bottom - top)} fill="transparent" />
+              <rect x={x - 8} y={top} width="16" height={Math.max(1, bottom - top)} fill="transparent" />
               <line
                 x1={x}
                 x2={x}
