@@ -246,6 +246,14 @@ export const CAUTIONS = {
     tag: ({ value }) => `blank ${percent(value)}`,
     sentence: ({ value, limit }) => `The blank makes up to ${percent(value)} of the rate (limit ${percent(limit)}).`,
   },
+  'no-site-count': {
+    severity: 'caution',
+    unit: '-',
+    source: 'common practice',
+    tag: () => 'no site count',
+    sentence: () =>
+      'No site count is recorded for this sample, so that it has no turnover frequency and no place in a ranking by it. Add a site count to the sample, or rank by the rate per mass.',
+  },
   'few-injections': {
     severity: 'caution',
     unit: '-',

@@ -16,6 +16,7 @@ import {
 import { selectCurrentReadingSets, selectReductions, type StoredReduction } from '../../../db/queries/results'
 import { AnalysisError } from '../../analysis/analysis-error'
 import { reduceRun } from '../../analysis/reduction/reduce-run'
+import { type SiteCountInput } from '../../analysis/reduction/run-input'
 import { type RunReduction } from '../../analysis/reduction/run-reduction'
 import { AppError } from '../../domain/errors'
 import { methodSettingsSchema, type MethodSettings } from '../../domain/method'
@@ -28,6 +29,8 @@ export interface ReducedRun {
   /** content key of the result; null while something is missing */
   readonly key: string | null
   readonly reduction: RunReduction | null
+  /** sites of the bed in the tube; null where none are counted */
+  readonly siteCount: SiteCountInput | null
   /** what stands in the way, in a sentence; empty when nothing does */
   readonly notReadyReason: string
 }
@@ -116,7 +119,6 @@ export async function methodInForce(db: Executor, campaignId: string, number?: n
 export async function reduceRuns(
   campaignId: string,
   runIds: readonly string[],
-  change: (settings: MethodSettings) => MethodSettings = (settings) => settings,
   methodNumber?: number,
 ): Promise<ReducedCampaign> {
   const db = await getDatabase()
@@ -124,8 +126,7 @@ export async function reduceRuns(
   const campaign = await selectCampaignRecords(db, campaignId)
   if (campaign === undefined)
     throw new AppError('not-found', 'There is nothing here under this address, or not for you.')
-  const version = await methodInForce(db, campaignId, methodNumber)
-  const method = { ...version, settings: change(version.settings) }
+  const method = await methodInForce(db, campaignId, methodNumber)
   const records = await selectRunRecords(db, runIds)
   const first = records.reduce((least, run) => Math.min(least, run.startedAt.getTime()), Infinity)
   const last = records.reduce((most, run) => Math.max(most, run.startedAt.getTime()), -Infinity)
@@ -157,14 +158,15 @@ export async function reduceRuns(
   for (const run of records) {
     const entry = prepared.get(run.runId)
     if (entry === undefined) {
-      runs.push({ run, key: null, reduction: null, notReadyReason: missing.get(run.runId) ?? '' })
+      runs.push({ run, key: null, reduction: null, siteCount: null, notReadyReason: missing.get(run.runId) ?? '' })
       continue
     }
+    const { siteCount } = entry.withoutReadings
     const outcome = await kept.getOrCompute(entry.key, () => compute(db, entry, method.id, engine))
     runs.push(
       'reduction' in outcome
-        ? { run, key: entry.key, reduction: outcome.reduction, notReadyReason: '' }
-        : { run, key: null, reduction: null, notReadyReason: outcome.refusal },
+        ? { run, key: entry.key, reduction: outcome.reduction, siteCount, notReadyReason: '' }
+        : { run, key: null, reduction: null, siteCount, notReadyReason: outcome.refusal },
     )
   }
   return { campaign, method, runs }

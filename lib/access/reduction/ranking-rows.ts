@@ -1,0 +1,546 @@
+import 'server-only'
+import exp from '@stdlib/math-base-special-exp'
+import ln from '@stdlib/math-base-special-ln'
+import { AnalysisError } from '../../analysis/analysis-error'
+import { fitArrhenius, type ArrheniusPoint } from '../../analysis/arrhenius/fit-arrhenius'
+import { type Caution } from '../../analysis/caution'
+import { mayCountWith, raiseCaution } from '../../analysis/cautions'
+import { type Estimate } from '../../analysis/estimate'
+import { type SiteCountInput } from '../../analysis/reduction/run-input'
+import { type ArrheniusFit, type Point, type RunReduction } from '../../analysis/reduction/run-reduction'
+import { rankSamples, type RankResult } from '../../analysis/ranking/rank-samples'
+import { intervalOf, totalUncertainty } from '../../analysis/total-uncertainty'
+import { type Working, type WorkingSymbol } from '../../analysis/working'
+import { type CampaignSample } from '../../domain/campaign'
+import { type MethodSettings } from '../../domain/method'
+import { type RankingRow, type RankingRun } from '../../domain/ranking'
+import { type RunDecision, type RunState } from '../../domain/run'
+import { type ReducedRun } from './reduce-runs'
+
+export interface RankingRequest {
+  readonly samples: readonly CampaignSample[]
+  readonly runs: readonly ReducedRun[]
+  readonly settings: MethodSettings
+  readonly referenceTemperatureK: number
+  readonly includeProvisional: boolean
+}
+
+/** Why a run is not in its sample's line; empty when it is. */
+function whyLeftOut(entry: ReducedRun, includeProvisional: boolean): string {
+  const { run, reduction, notReadyReason } = entry
+  if (run.kind !== 'catalyst') return 'a blank: nothing to rank'
+  if (reduction === null) return notReadyReason
+  if (run.decision === 'set-aside') return 'set aside by the lead'
+  if (reduction.fit === null) return reduction.noFitReason
+  if (run.decision === 'counts') return ''
+  if (!includeProvisional)
+    return run.decision === 'repeat'
+      ? 'to be repeated; provisional runs are switched off'
+      : 'not decided yet; provisional runs are switched off'
+  if (run.decision === null && !reduction.mayCount) return `does not count until a lead decides: ${gravest(reduction)}`
+  return ''
+}
+
+function allCautions(reduction: RunReduction): Caution[] {
+  return [...reduction.cautions, ...(reduction.fit?.cautions ?? [])]
+}
+
+function gravest(reduction: RunReduction): string {
+  return allCautions(reduction).find((caution) => !mayCountWith([caution]))?.sentence ?? 'a grave caution stands.'
+}
+
+function rankingRun(entry: ReducedRun, includeProvisional: boolean): RankingRun {
+  const reason = whyLeftOut(entry, includeProvisional)
+  return {
+    runId: entry.run.runId,
+    code: entry.run.code,
+    state: entry.run.state as RunState,
+    decision: entry.run.decision as RunDecision | null,
+    isIncluded: reason === '',
+    reason,
+  }
+}
+
+/** Points of a run as its own line saw them: what a person or a rule left out there is left out here, with the same reason. */
+function linePoints(reduction: RunReduction): ArrheniusPoint[] {
+  const seen = new Map((reduction.fit?.points ?? []).map((point) => [point.holdNumber, point]))
+  return reduction.points.flatMap((point) => {
+    const inFit = seen.get(point.hold.number)
+    if (point.rateMolPerKgS === null || inFit === undefined) return []
+    return [
+      {
+        runCode: reduction.runCode,
+        holdNumber: point.hold.number,
+        temperatureK: point.temperatureK,
+        quantity: point.rateMolPerKgS,
+        isUsed: inFit.isUsed,
+        reason: inFit.reason,
+      },
+    ]
+  })
+}
+
+/** Spread from one packed bed to another: it belongs to the sample's number beside the scatter of the line, and shrinks with the number of beds. */
+function withBetweenLoading(estimate: Estimate, standardDeviation: number): Estimate {
+  const own = estimate.randomStandardUncertainty
+  if (own === null || standardDeviation === 0) return estimate
+  const variance = own * own + standardDeviation * standardDeviation
+  const nu = estimate.degreesOfFreedom
+  return {
+    ...estimate,
+    randomStandardUncertainty: Math.sqrt(variance),
+    degreesOfFreedom: nu === null || own === 0 ? null : (nu * variance * variance) / (own * own * own * own),
+  }
+}
+
+/** From the logarithm of a positive number to the number: parts become relative ones times the value. */
+function exponential(lnEstimate: Estimate): Estimate {
+  const value = exp(lnEstimate.value)
+  const own = lnEstimate.randomStandardUncertainty
+  return {
+    value,
+    randomStandardUncertainty: own === null ? null : own * value,
+    degreesOfFreedom: lnEstimate.degreesOfFreedom,
+    sharedEffects: Object.fromEntries(
+      Object.entries(lnEstimate.sharedEffects).map(([id, effect]) => [id, effect * value]),
+    ),
+  }
+}
+
+function expInterval(lnEstimate: Estimate, level: number): readonly [number, number] | null {
+  const interval = intervalOf(lnEstimate, level)
+  return interval === null ? null : [exp(interval[0]), exp(interval[1])]
+}
+
+/** ln of the turnover frequency: the rate over the sites, whose count is one error for all temperatures. */
+function lnPerSite(lnRate: Estimate, sites: SiteCountInput): Estimate {
+  return {
+    ...lnRate,
+    value: lnRate.value - ln(sites.molPerKg),
+    sharedEffects: {
+      ...lnRate.sharedEffects,
+      [sites.sourceId]: (lnRate.sharedEffects[sites.sourceId] ?? 0) - sites.relativeStandardUncertainty,
+    },
+  }
+}
+
+const usedPoints = (reduction: RunReduction): Point[] => {
+  const used = new Set((reduction.fit?.points ?? []).filter((point) => point.isUsed).map((point) => point.holdNumber))
+  return reduction.points.filter((point) => used.has(point.hold.number))
+}
+
+const mean = (values: readonly number[]): number | null =>
+  values.length === 0 ? null : values.reduce((total, value) => total + value, 0) / values.length
+
+/** Temperature at which a run reaches a conversion, between two measured holds: ln X is close to straight in 1/T. Null outside them. */
+function temperatureAtConversion(points: readonly Point[], target: number): number | null {
+  const rising = points
+    .flatMap((point) => {
+      const conversion = point.conversion?.value ?? 0
+      return conversion > 0 ? [{ x: 1 / point.temperatureK.value, y: ln(conversion) }] : []
+    })
+    .sort((a, b) => b.x - a.x)
+  const goal = ln(target)
+  for (let i = 0; i + 1 < rising.length; i++) {
+    const cold = rising[i]
+    const hot = rising[i + 1]
+    if (cold === undefined || hot === undefined || cold.y === hot.y || cold.x === hot.x) continue
+    if (cold.y <= goal && goal <= hot.y) return 1 / (cold.x + ((goal - cold.y) / (hot.y - cold.y)) * (hot.x - cold.x))
+  }
+  return null
+}
+
+/** Carbon selectivities of a run at a conversion, by interpolation between measured points only. */
+function selectivityAtConversion(points: readonly Point[], target: number): Record<string, number> {
+  const sorted = points
+    .flatMap((point) => (point.conversion === null ? [] : [{ conversion: point.conversion.value, point }]))
+    .sort((a, b) => a.conversion - b.conversion)
+  for (let i = 0; i + 1 < sorted.length; i++) {
+    const low = sorted[i]
+    const high = sorted[i + 1]
+    if (low === undefined || high === undefined || low.conversion === high.conversion) continue
+    if (low.conversion > target || target > high.conversion) continue
+    const share = (target - low.conversion) / (high.conversion - low.conversion)
+    const result: Record<string, number> = {}
+    for (const species of Object.keys(low.point.carbonSelectivity).sort()) {
+      const a = low.point.carbonSelectivity[species]
+      const b = high.point.carbonSelectivity[species]
+      if (a !== undefined && b !== undefined) result[species] = a.value + share * (b.value - a.value)
+    }
+    return result
+  }
+  return {}
+}
+
+function symbolOf(symbol: string, meaning: string, estimate: Estimate, unit: string, factor: number): WorkingSymbol {
+  const total = totalUncertainty(estimate)
+  return {
+    symbol,
+    meaning,
+    value: estimate.value * factor,
+    unit,
+    standardUncertainty: total === null ? null : total.standardUncertainty * factor,
+    uncertaintyKind: total === null ? 'none' : Object.keys(estimate.sharedEffects).length > 0 ? 'shared' : 'own',
+  }
+}
+
+const plain = (symbol: string, meaning: string, value: number | null, unit: string): WorkingSymbol => ({
+  symbol,
+  meaning,
+  value,
+  unit,
+  standardUncertainty: null,
+  uncertaintyKind: 'none',
+})
+
+interface SampleNumbers {
+  readonly fit: ArrheniusFit
+  readonly lnRate: Estimate
+  readonly lnTurnover: Estimate | null
+  readonly activationEnergy: Estimate
+  readonly lnPreExponential: Estimate
+  readonly loadingCount: number
+}
+
+function rowWorkings(
+  sampleCode: string,
+  numbers: SampleNumbers,
+  sites: SiteCountInput | null,
+  settings: MethodSettings,
+  others: {
+    readonly runs: readonly RunReduction[]
+    readonly temperatureForConversionK: number | null
+    readonly carbonBalance: number | null
+    readonly decayPerH: number | null
+  },
+): Record<string, Working> {
+  const { fit, lnRate, lnTurnover, loadingCount } = numbers
+  const base = fit.workings
+  const beds = `${loadingCount} packed bed${loadingCount === 1 ? '' : 's'}`
+  const spread = (share: number, of: string) =>
+    `Spread between packed beds, ${Math.round(share * 1000) / 10} % of ${of} a bed over ${beds}, is in the uncertainty (method setting; common practice).`
+  const workings: Record<string, Working> = {}
+  const energy = base['activationEnergyJPerMol']
+  if (energy !== undefined)
+    workings['activationEnergyJPerMol'] = {
+      ...energy,
+      result: symbolOf('E_a', energy.result.meaning, numbers.activationEnergy, 'kJ mol⁻¹', 1e-3),
+      notes: [spread(settings.betweenLoadingActivationEnergy, 'E_a'), ...energy.notes],
+    }
+  const lnA = base['lnPreExponential']
+  if (lnA !== undefined)
+    workings['lnPreExponential'] = {
+      ...lnA,
+      result: symbolOf('ln A', lnA.result.meaning, numbers.lnPreExponential, 'ln(mol kg⁻¹ s⁻¹)', 1),
+      notes: [spread(settings.betweenLoadingRate, 'the rate'), ...lnA.notes],
+    }
+  const rate = base['lnRateAtReference']
+  const rateResult = symbolOf('r', 'rate at the reference', exponential(lnRate), 'µmol g⁻¹ s⁻¹', 1e3)
+  if (rate !== undefined) {
+    workings['rateMolPerKgS'] = {
+      ...rate,
+      result: rateResult,
+      notes: [spread(settings.betweenLoadingRate, 'the rate'), ...rate.notes],
+    }
+    if (lnTurnover !== null && sites !== null)
+      workings['turnoverFrequencyPerS'] = {
+        ...rate,
+        title: `Turnover frequency of ${sampleCode} at the reference`,
+        formula: 'TOF = r / n_s',
+        symbols: [
+          rateResult,
+          {
+            ...plain('n_s', `surface sites by ${sites.method}`, sites.molPerKg * 1e3, 'µmol g⁻¹'),
+            standardUncertainty: sites.molPerKg * sites.relativeStandardUncertainty * 1e3,
+            uncertaintyKind: 'shared',
+          },
+        ],
+        result: symbolOf('TOF', 'turnover frequency', exponential(lnTurnover), 's⁻¹', 1),
+        source: 'M. Boudart, Chem. Rev. 95 (1995) 661 (turnover rates)',
+        notes: [
+          'The site count is one error for all temperatures: it moves ln A and the turnover frequency, not E_a.',
+          spread(settings.betweenLoadingRate, 'the rate'),
+        ],
+      }
+  }
+  const codes = others.runs.map((run) => run.runCode)
+  const common = {
+    assumptions: [],
+    source: 'common practice',
+    from: codes.map((code) => `${code}: points in the line`),
+    leftOut: [],
+    notes: [],
+  }
+  if (others.temperatureForConversionK !== null)
+    workings['temperatureForConversionK'] = {
+      ...common,
+      title: `Temperature at which ${sampleCode} converts ${settings.targetConversion * 100} %`,
+      formula: '1/T = 1/T_1 + (ln X − ln X_1)/(ln X_2 − ln X_1) · (1/T_2 − 1/T_1)',
+      symbols: [plain('X', 'target conversion of the method', settings.targetConversion * 100, '%')],
+      result: plain('T', 'temperature, at the run’s own contact time', others.temperatureForConversionK - 273.15, '°C'),
+      assumptions: [
+        'Between the two neighbouring holds ln X is straight in 1/T; nothing is said outside the measured range.',
+      ],
+    }
+  if (others.carbonBalance !== null)
+    workings['carbonBalance'] = {
+      ...common,
+      title: `Carbon balance of ${sampleCode}`,
+      formula: 'B_C = Σ n_C F_out / Σ n_C F_in',
+      symbols: others.runs.map((run) => plain('B_C', `mean of ${run.runCode}`, run.meanCarbonBalance, '')),
+      result: plain('B_C', 'mean of the runs in the line', others.carbonBalance, ''),
+    }
+  if (others.decayPerH !== null)
+    workings['decayPerH'] = {
+      ...common,
+      title: `Loss of activity of ${sampleCode}`,
+      formula: 'k_d = −ln(r_returned / r_first) / Δt',
+      symbols: others.runs.flatMap((run) =>
+        run.returnedHold === null
+          ? []
+          : [
+              plain(
+                'r_returned / r_first',
+                `${run.runCode}, hold ${run.returnedHold.holdNumber} against hold ${run.returnedHold.returnsTo}`,
+                run.returnedHold.ratio.value,
+                '',
+              ),
+            ],
+      ),
+      result: plain('k_d', 'loss per hour on stream, mean of the runs', others.decayPerH * 100, '% h⁻¹'),
+    }
+  return workings
+}
+
+const emptyNumbers = {
+  rank: null,
+  rankInterval: null,
+  probabilityBest: null,
+  activationEnergyJPerMol: null,
+  activationEnergyInterval: null,
+  lnPreExponential: null,
+  lnPreExponentialInterval: null,
+  rateMolPerKgS: null,
+  rateInterval: null,
+  turnoverFrequencyPerS: null,
+  turnoverFrequencyInterval: null,
+  temperatureForConversionK: null,
+  selectivity: {},
+  carbonBalance: null,
+  decayPerH: null,
+  distinctTemperatures: 0,
+  lowestTemperatureK: null,
+  highestTemperatureK: null,
+  fit: null,
+  workings: {},
+} as const
+
+/** Same doubt of several runs once; notes stay on the run's own page. */
+function rowCautions(
+  included: readonly ReducedRun[],
+  leftOut: readonly ReducedRun[],
+  own: readonly Caution[],
+): Caution[] {
+  const found: Caution[] = [...own]
+  for (const { reduction, run } of included)
+    if (reduction !== null)
+      for (const caution of allCautions(reduction))
+        if (caution.severity !== 'note')
+          found.push(
+            included.length > 1
+              ? { ...caution, tag: `${run.code}: ${caution.tag}`, sentence: `${run.code}: ${caution.sentence}` }
+              : caution,
+          )
+  for (const { reduction, run } of leftOut)
+    if (reduction !== null)
+      for (const caution of allCautions(reduction))
+        if (!mayCountWith([caution]))
+          found.push({ ...caution, tag: `${run.code}: ${caution.tag}`, sentence: `${run.code}: ${caution.sentence}` })
+  const seen = new Set<string>()
+  return found.filter((caution) => {
+    const key = `${caution.code} ${caution.tag}`
+    if (seen.has(key)) return false
+    seen.add(key)
+    return true
+  })
+}
+
+interface Prepared {
+  readonly row: RankingRow
+  readonly numbers: SampleNumbers | null
+  readonly merit: Estimate | null
+}
+
+function prepareSample(sample: CampaignSample, request: RankingRequest): Prepared {
+  const { settings, referenceTemperatureK, includeProvisional } = request
+  const entries = request.runs.filter((entry) => entry.run.sampleId === sample.sampleId)
+  const runs = entries.map((entry) => rankingRun(entry, includeProvisional))
+  const included = entries.filter((_, index) => runs[index]?.isIncluded === true)
+  const leftOut = entries.filter((_, index) => runs[index]?.isIncluded !== true)
+  const head = {
+    sampleId: sample.sampleId,
+    sampleCode: sample.sampleCode,
+    sampleName: sample.sampleName,
+    kind:
+      entries.length > 0 && entries.every((entry) => entry.run.kind !== 'catalyst')
+        ? ('blank' as const)
+        : ('catalyst' as const),
+    runs,
+    isProvisional: included.some((entry) => entry.run.decision !== 'counts'),
+    isShortlisted: sample.isShortlisted,
+    priority: sample.priority,
+    remark: sample.remark,
+    version: sample.version,
+  }
+  const reductions = included.flatMap((entry) => (entry.reduction === null ? [] : [entry.reduction]))
+  const nothing = (): Prepared => ({
+    row: { ...head, ...emptyNumbers, cautions: rowCautions(included, leftOut, []) },
+    numbers: null,
+    merit: null,
+  })
+  if (reductions.length === 0) return nothing()
+  let fit: ArrheniusFit
+  try {
+    fit = fitArrhenius({
+      quantity: 'rate',
+      points: reductions.flatMap(linePoints),
+      referenceTemperatureK,
+      confidenceLevel: settings.confidenceLevel,
+      subject: sample.sampleCode,
+      betweenRunVariance: settings.betweenLoadingRate * settings.betweenLoadingRate,
+    })
+  } catch (error) {
+    if (error instanceof AnalysisError) return nothing()
+    throw error
+  }
+  const loadingCount = new Set(included.map((entry) => entry.run.loadingId)).size
+  const perBed = 1 / Math.sqrt(loadingCount)
+  const lnRate = withBetweenLoading(fit.lnRateAtReference, settings.betweenLoadingRate * perBed)
+  const sites = included.find((entry) => entry.siteCount !== null)?.siteCount ?? null
+  const numbers: SampleNumbers = {
+    fit,
+    lnRate,
+    lnTurnover: sites === null ? null : lnPerSite(lnRate, sites),
+    activationEnergy: withBetweenLoading(
+      fit.activationEnergyJPerMol,
+      settings.betweenLoadingActivationEnergy * fit.activationEnergyJPerMol.value * perBed,
+    ),
+    lnPreExponential: withBetweenLoading(fit.lnPreExponential, settings.betweenLoadingRate * perBed),
+    loadingCount,
+  }
+  const level = settings.confidenceLevel
+  const perRun = reductions.map((reduction) => usedPoints(reduction))
+  const temperatures = perRun.flatMap((points) => temperatureAtConversion(points, settings.targetConversion) ?? [])
+  const temperatureForConversionK = mean(temperatures)
+  const selectivities = perRun.map((points) => selectivityAtConversion(points, settings.targetConversion))
+  const species = [...new Set(selectivities.flatMap((entry) => Object.keys(entry)))].sort()
+  const carbonBalance = mean(reductions.flatMap((reduction) => reduction.meanCarbonBalance ?? []))
+  const decayPerH = mean(reductions.flatMap((reduction) => reduction.returnedHold?.lossPerH ?? []))
+  const own: Caution[] = [
+    ...(sites === null && settings.rankedBy === 'turnover-frequency'
+      ? [raiseCaution('no-site-count', { value: null, limit: null })]
+      : []),
+    ...(reductions.length > 1 ? fit.cautions.filter((caution) => caution.severity !== 'note') : []),
+    ...(reductions.length === 1 && fit.isReferenceExtrapolated
+      ? fit.cautions.filter((caution) => caution.code === 'reference-extrapolated')
+      : []),
+  ]
+  const lnMerit = settings.rankedBy === 'rate' ? numbers.lnRate : numbers.lnTurnover
+  const rateAtReference = exponential(numbers.lnRate)
+  const row: RankingRow = {
+    ...head,
+    ...emptyNumbers,
+    activationEnergyJPerMol: numbers.activationEnergy,
+    activationEnergyInterval: intervalOf(numbers.activationEnergy, level),
+    lnPreExponential: numbers.lnPreExponential,
+    lnPreExponentialInterval: intervalOf(numbers.lnPreExponential, level),
+    rateMolPerKgS: rateAtReference,
+    rateInterval: expInterval(numbers.lnRate, level),
+    turnoverFrequencyPerS: numbers.lnTurnover === null ? null : exponential(numbers.lnTurnover),
+    turnoverFrequencyInterval: numbers.lnTurnover === null ? null : expInterval(numbers.lnTurnover, level),
+    temperatureForConversionK,
+    selectivity: Object.fromEntries(
+      species.map((name) => [name, mean(selectivities.flatMap((entry) => entry[name] ?? [])) ?? Number.NaN]),
+    ),
+    carbonBalance,
+    decayPerH,
+    distinctTemperatures: fit.distinctTemperatures,
+    lowestTemperatureK: fit.lowestTemperatureK,
+    highestTemperatureK: fit.highestTemperatureK,
+    cautions: rowCautions(included, leftOut, own),
+    fit,
+    workings: rowWorkings(sample.sampleCode, numbers, sites, settings, {
+      runs: reductions,
+      temperatureForConversionK,
+      carbonBalance,
+      decayPerH,
+    }),
+  }
+  // outside its own range a line says nothing to rank by
+  const mayRank = lnMerit !== null && lnMerit.randomStandardUncertainty !== null && !fit.isReferenceExtrapolated
+  return { row, numbers, merit: mayRank ? lnMerit : null }
+}
+
+const ratioText = (value: number) => (value >= 10 ? String(Math.round(value)) : value.toFixed(2))
+
+/** One sentence that says what the ranks mean. */
+function summaryOf(ranks: RankResult, codeOf: (id: string) => string, celsius: string, figure: string): string {
+  if (ranks.samples.length === 0)
+    return 'Nothing can be ranked yet: a sample needs a run with a line and its uncertainty.'
+  const first = ranks.samples[0]
+  if (ranks.samples.length === 1 || first === undefined)
+    return `${first === undefined ? '' : codeOf(first.id)} stands alone: a ranking needs two samples.`
+  const close = ranks.neighbours.filter(({ ratioInterval }) => ratioInterval[0] < 1 && ratioInterval[1] > 1)
+  const lead =
+    first.probabilityBest >= 0.95
+      ? `${codeOf(first.id)} has the highest ${figure} at ${celsius} (probability ${first.probabilityBest > 0.99 ? 'above 0.99' : first.probabilityBest.toFixed(2)}).`
+      : `No sample is the best beyond doubt; ${codeOf(first.id)} leads with probability ${first.probabilityBest.toFixed(2)}.`
+  if (close.length === 0) return `${lead} Every sample is told apart from its neighbour in the ranking at ${celsius}.`
+  const pairs = close.map(
+    ({ betterId, worseId, ratio, ratioInterval }) =>
+      `${codeOf(betterId)} and ${codeOf(worseId)} (ratio ${ratioText(ratio)}, ${ratioText(ratioInterval[0])} to ${ratioText(ratioInterval[1])})`,
+  )
+  return `${lead} Cannot be told apart at ${celsius}: ${pairs.join('; ')}.`
+}
+
+/** Rows of the ranking, ranked ones first, and the sentence that goes with them. Same input, same bits. */
+export function rankingRows(request: RankingRequest): { rows: RankingRow[]; summary: string } {
+  const prepared = request.samples.map((sample) => prepareSample(sample, request))
+  const perBed = (entry: Prepared) => (entry.numbers === null ? 0 : 1 / Math.sqrt(entry.numbers.loadingCount))
+  const ranks = rankSamples(
+    prepared.flatMap((entry) =>
+      entry.merit === null || entry.numbers === null
+        ? []
+        : [
+            {
+              id: entry.row.sampleId,
+              lnMerit: {
+                ...entry.merit,
+                // the spread between beds is drawn apart, so that it is not widened by the line's few degrees of freedom
+                randomStandardUncertainty: entry.numbers.fit.lnRateAtReference.randomStandardUncertainty,
+                degreesOfFreedom: entry.numbers.fit.lnRateAtReference.degreesOfFreedom,
+              },
+              betweenLoadingStandardDeviation: request.settings.betweenLoadingRate * perBed(entry),
+            },
+          ],
+    ),
+    { draws: request.settings.draws, seed: request.settings.seed },
+  )
+  const rankOf = new Map(ranks.samples.map((sample) => [sample.id, sample]))
+  const rows = prepared
+    .map(({ row }): RankingRow => {
+      const found = rankOf.get(row.sampleId)
+      return found === undefined
+        ? row
+        : { ...row, rank: found.rank, rankInterval: found.rankInterval, probabilityBest: found.probabilityBest }
+    })
+    .sort(
+      (a, b) =>
+        (a.rank ?? Infinity) - (b.rank ?? Infinity) ||
+        (a.sampleCode < b.sampleCode ? -1 : a.sampleCode > b.sampleCode ? 1 : 0),
+    )
+  const codeOf = (id: string) => request.samples.find((sample) => sample.sampleId === id)?.sampleCode ?? id
+  const celsius = `${Math.round((request.referenceTemperatureK - 273.15) * 10) / 10} °C`
+  const figure = request.settings.rankedBy === 'rate' ? 'rate per mass' : 'turnover frequency'
+  return { rows, summary: summaryOf(ranks, codeOf, celsius, figure) }
+}
