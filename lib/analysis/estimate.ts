@@ -18,7 +18,15 @@ export interface SharedSource {
   /** for example `flow:<rig>`, `mass:<loading>`, `calibration:<id>:CH4`, `sites:<site count>`, `thermocouple:<rig>` */
   readonly id: string
   readonly kind:
-    'flow' | 'mass' | 'response-factor' | 'site-count' | 'thermocouple' | 'pressure' | 'particle' | 'thermochemistry'
+    | 'flow'
+    | 'mass'
+    | 'response-factor'
+    | 'site-count'
+    | 'thermocouple'
+    | 'pressure'
+    | 'particle'
+    | 'thermochemistry'
+    | 'inlet'
   readonly label: string
   /** one standard uncertainty, relative unless `unit` says otherwise */
   readonly standardUncertainty: number

@@ -1,3 +1,4 @@
+import { type EnteredThermochemistry } from '../equilibrium/thermochemistry'
 import { type SharedSource } from '../estimate'
 
 /** Species by formula (`CO2`, `H2`, …), as the reaction and the calibrations name them. */
@@ -73,6 +74,8 @@ export interface ReactionInput {
   readonly carbonNumber: Readonly<Record<Species, number>>
   /** NASA-7 name of each species where the built-in thermochemistry serves; user-given data otherwise */
   readonly standardReactionEnthalpyJPerMol: readonly (number | null)[]
+  /** entered with the reaction, for species the built-in table does not hold */
+  readonly thermochemistry?: Readonly<Record<Species, EnteredThermochemistry>>
 }
 
 export interface LoadingInput {
@@ -136,7 +139,7 @@ export interface RunInput {
   readonly method: ReductionMethod
   readonly holdEdits: readonly HoldEdit[]
   readonly exclusions: readonly Exclusion[]
-  /** flow controllers' shared source; its effect on rates is minus the relative error, on conversion none */
+  /** flow controllers' shared source; for plus one standard uncertainty the true flow is larger: rates go up by as much, conversion stays */
   readonly flowSourceId: string
   readonly thermocoupleSourceId: string
   readonly sharedSources: readonly SharedSource[]
