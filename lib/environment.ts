@@ -38,6 +38,8 @@ type Parsed = z.infer<typeof environmentSchema>
 
 /** What the process was started with. `SESSION_KEY` and `PEPPER` are made and kept in the data folder when not given. */
 export type Environment = Omit<Parsed, 'SESSION_KEY' | 'PEPPER'> & {
+  /** Whether this is the built program; tests and scripts run the sources as they stand. */
+  readonly IS_BUNDLED: boolean
   readonly SESSION_KEY: string
   readonly PEPPER: string
 }
@@ -106,6 +108,8 @@ const kept = () => (secrets ??= keepSecrets(values().DATA_DIR))
 
 /** The one reader of `process.env`. Read on first use, so that importing it during a build neither fails nor makes a folder. */
 export const environment: Environment = {
+  // the build writes the value in; elsewhere nothing sets it
+  IS_BUNDLED: process.env.NEXT_RUNTIME !== undefined,
   get NODE_ENV() {
     return values().NODE_ENV
   },

@@ -23,7 +23,8 @@ function step(title, command, args) {
 
 step('Building the application', 'node_modules/.bin/next', ['build'])
 step(`Loading the demo campaign into ${path.relative(process.cwd(), dataDir) || dataDir}`, process.execPath, [
-  '--conditions=react-server',
+  '--require',
+  './scripts/allow-server-only.cjs',
   '--import',
   'tsx',
   'scripts/load-demo.ts',

@@ -30,11 +30,15 @@ function demoData(): string {
   if (existsSync(path.join(folder, 'loaded'))) return folder
   rmSync(folder, { recursive: true, force: true })
   mkdirSync(CACHE, { recursive: true })
-  const done = spawnSync(process.execPath, ['--conditions=react-server', '--import', 'tsx', 'scripts/load-demo.ts'], {
-    cwd: ROOT,
-    env: { ...process.env, NODE_ENV: 'production', DATA_DIR: folder, APP_ORIGIN: 'http://localhost:3000' },
-    encoding: 'utf8',
-  })
+  const done = spawnSync(
+    process.execPath,
+    ['--require', './scripts/allow-server-only.cjs', '--import', 'tsx', 'scripts/load-demo.ts'],
+    {
+      cwd: ROOT,
+      env: { ...process.env, NODE_ENV: 'production', DATA_DIR: folder, APP_ORIGIN: 'http://localhost:3000' },
+      encoding: 'utf8',
+    },
+  )
   if (done.status !== 0) throw new Error(`the demo campaign did not load:\n${done.stdout}\n${done.stderr}`)
   return folder
 }

@@ -1,0 +1,81 @@
+import 'server-only'
+import { and, asc, eq } from 'drizzle-orm'
+import { alias } from 'drizzle-orm/pg-core'
+import { detectionSchema, problemSchema, type Upload, type UploadState } from '@/lib/domain/intake'
+import { type Executor } from '../executor'
+import { uploads, users } from '../schema'
+import { inScope, type Scope } from '../scope'
+
+const author = alias(users, 'author')
+
+const columns = {
+  id: uploads.id,
+  campaignId: uploads.campaignId,
+  runId: uploads.runId,
+  sha256: uploads.sha256,
+  byteCount: uploads.byteCount,
+  fileName: uploads.fileName,
+  state: uploads.state,
+  kind: uploads.kind,
+  detection: uploads.detection,
+  problems: uploads.problems,
+  failure: uploads.failure,
+  columnMapId: uploads.columnMapId,
+  createdByName: author.displayName,
+  createdAt: uploads.createdAt,
+  confirmedAt: uploads.confirmedAt,
+  version: uploads.version,
+}
+
+function uploadOf(row: {
+  [K in keyof typeof columns]: K extends 'detection' | 'problems'
+    ? unknown
+    : K extends 'createdAt'
+      ? Date
+      : K extends 'confirmedAt'
+        ? Date | null
+        : K extends 'byteCount' | 'version'
+          ? number
+          : K extends 'kind' | 'failure' | 'columnMapId'
+            ? string | null
+            : string
+}): Upload {
+  return {
+    ...row,
+    state: row.state as UploadState,
+    kind: row.kind as Upload['kind'],
+    detection: row.detection === null ? null : detectionSchema.parse(row.detection),
+    problems: problemSchema.array().parse(row.problems),
+    createdAt: row.createdAt.toISOString(),
+    confirmedAt: row.confirmedAt?.toISOString() ?? null,
+  }
+}
+
+/** Files of a run, in the order they were added. */
+export async function selectUploads(db: Executor, scope: Scope, runId: string): Promise<Upload[]> {
+  const rows = await db
+    .select(columns)
+    .from(uploads)
+    .innerJoin(author, eq(author.id, uploads.createdBy))
+    .where(and(eq(uploads.runId, runId), inScope(uploads.campaignId, scope)))
+    .orderBy(asc(uploads.createdAt), asc(uploads.id))
+  return rows.map(uploadOf)
+}
+
+export async function selectUpload(db: Executor, scope: Scope, id: string): Promise<Upload | null> {
+  const rows = await db
+    .select(columns)
+    .from(uploads)
+    .innerJoin(author, eq(author.id, uploads.createdBy))
+    .where(and(eq(uploads.id, id), inScope(uploads.campaignId, scope)))
+  return rows[0] === undefined ? null : uploadOf(rows[0])
+}
+
+/** The file of a run with these very bytes, if it was added before. */
+export async function selectUploadIdByHash(db: Executor, runId: string, sha256: string): Promise<string | null> {
+  const rows = await db
+    .select({ id: uploads.id })
+    .from(uploads)
+    .where(and(eq(uploads.runId, runId), eq(uploads.sha256, sha256)))
+  return rows[0]?.id ?? null
+}
