@@ -1,5 +1,5 @@
 import { type Caution } from '../caution'
-import { GAS_CONSTANT_J_PER_MOL_K } from '../units/constants'
+import { heatCapacityOrLeast } from '../equilibrium/least-heat-capacity'
 import { adiabaticRise } from './adiabatic-rise'
 import { flammabilityCautions } from './flammability-cautions'
 import { gasHazardCautions } from './gas-hazard-cautions'
@@ -18,7 +18,8 @@ export const BED_PER_PARTICLE_LIMIT = 50
 /** Share of the rig's limit from which the distance is pointed out. */
 const NEAR_LIMIT = 0.9
 const FEED_SUM_TOLERANCE = 0.005
-const MONATOMIC = ['He', 'Ne', 'Ar', 'Kr', 'Xe']
+/** Temperature for heat capacities where none was planned [K]: low, since heat capacities rise with temperature. */
+const COLDEST_USUAL_K = 298.15
 
 /**
  * Everything to point out about a planned run before it starts: fire, poison, deposits, heat, the rig's limits and the bed.
@@ -87,13 +88,14 @@ function heatCautions(input: PlannedRunInput): Caution[] {
   const total = input.feed.reduce((sum, { moleFraction }) => sum + moleFraction, 0)
   if (enthalpy === null || !(share > 0 && share <= 1) || !(total > 0)) return []
   const stated = input.feedHeatCapacityJPerMolK ?? null
-  const heatCapacity = stated !== null && stated > 0 ? stated : lowestHeatCapacity(input.feed, total)
+  const feedHeat = feedHeatCapacity(input, total)
+  const heatCapacity = stated !== null && stated > 0 ? stated : feedHeat.valueJPerMolK
   const rise = adiabaticRise(share, enthalpy, heatCapacity)
   if (!(rise > ADIABATIC_RISE_LIMIT_K)) return []
-  const basis =
-    stated !== null && stated > 0
-      ? ''
-      : ', taken with the lowest heat capacity such gases can have and so too high rather than too low'
+  const isLeast = !(stated !== null && stated > 0) && feedHeat.isLeast
+  const basis = isLeast
+    ? ', taken with the lowest heat capacity its gases can have and so too high rather than too low'
+    : ''
   return [
     caution(
       'adiabatic-rise',
@@ -108,13 +110,16 @@ function heatCautions(input: PlannedRunInput): Caution[] {
   ]
 }
 
-// 5/2 R for monatomic gases and 7/2 R for all others: no gas has less, so the rise is never understated.
-function lowestHeatCapacity(feed: PlannedRunInput['feed'], total: number): number {
-  const inR = feed.reduce(
-    (sum, { species, moleFraction }) => sum + moleFraction * (MONATOMIC.includes(species) ? 2.5 : 3.5),
-    0,
-  )
-  return (inR / total) * GAS_CONSTANT_J_PER_MOL_K
+// At the lowest planned temperature, where heat capacities are least, so the rise is not understated.
+function feedHeatCapacity({ feed, temperatureRangeK }: PlannedRunInput, total: number) {
+  const parts = feed.map(({ species, moleFraction }) => ({
+    moleFraction,
+    heat: heatCapacityOrLeast(species, temperatureRangeK?.low ?? COLDEST_USUAL_K),
+  }))
+  return {
+    valueJPerMolK: parts.reduce((sum, { moleFraction, heat }) => sum + moleFraction * heat.valueJPerMolK, 0) / total,
+    isLeast: parts.some(({ moleFraction, heat }) => moleFraction > 0 && heat.isLeast),
+  }
 }
 
 function bedCautions({ particleDiameterM, tubeInnerDiameterM, bedLengthM }: PlannedRunInput): Caution[] {

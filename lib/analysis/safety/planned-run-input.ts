@@ -14,7 +14,7 @@ export interface PlannedRunInput {
   /** per mole of key reactant, negative when heat is released */
   readonly reactionEnthalpyJPerMol?: number | null
   readonly keyReactant: Species
-  /** of the feed, at the temperature of the run; without it the lowest heat capacity that such gases can have is used */
+  /** of the feed, at the temperature of the run; without it tabulated ones, and the lowest possible for gases that are not tabulated */
   readonly feedHeatCapacityJPerMolK?: number | null
   readonly particleDiameterM?: number | null
   readonly tubeInnerDiameterM?: number | null

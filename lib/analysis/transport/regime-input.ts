@@ -23,7 +23,7 @@ export interface RegimeInput {
   readonly loading: LoadingInput
   /** largest temperature difference seen in the bed; null when it was not measured */
   readonly measuredBedSpanK?: number | null
-  /** molar heat capacity by species at the temperature of the point [J mol-1 K-1]; the lowest possible one is used for a species that is not in it */
+  /** molar heat capacity by species at the temperature of the point [J mol-1 K-1]; tabulated ones otherwise */
   readonly heatCapacityJPerMolK?: Readonly<Record<Species, number>>
 }
 

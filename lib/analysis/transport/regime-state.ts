@@ -2,6 +2,7 @@ import { type Species } from '../reduction/run-input'
 import { GAS_CONSTANT_J_PER_MOL_K } from '../units/constants'
 import { molarMass } from '../units/molar-mass'
 import { AnalysisError } from '../analysis-error'
+import { heatCapacityOrLeast } from '../equilibrium/least-heat-capacity'
 import { diffusionVolume } from './diffusion-volume'
 import { FULLER_RELATIVE_STANDARD_UNCERTAINTY, fullerDiffusivity } from './fuller-diffusivity'
 import { gasViscosity, mixtureThermalConductivity, mixtureViscosity } from './gas-viscosity'
@@ -62,7 +63,6 @@ export const REGIME_DEFAULTS = {
 /** Relative standard uncertainty of a film coefficient at low Reynolds number: the correlations scatter by about this much. */
 const FILM_RELATIVE_STANDARD_UNCERTAINTY = 0.3
 const CONDUCTIVITY_RELATIVE_STANDARD_UNCERTAINTY = 0.15
-const MONATOMIC = ['He', 'Ne', 'Ar', 'Kr', 'Xe']
 
 /**
  * Gas, particle and bed properties at one point, with what had to be assumed.
@@ -287,9 +287,8 @@ function gasProperties(
         moleFraction: fraction,
         molarMassKgPerMol,
         viscosityPaS: gasViscosity(input.temperatureK, molarMassKgPerMol, parameters),
-        // no gas has less: 5/2 R for monatomic gases, 7/2 R for all others, so a film never looks better than it is
         heatCapacityJPerMolK:
-          input.heatCapacityJPerMolK?.[species] ?? (MONATOMIC.includes(species) ? 2.5 : 3.5) * GAS_CONSTANT_J_PER_MOL_K,
+          input.heatCapacityJPerMolK?.[species] ?? heatCapacityOrLeast(species, input.temperatureK).valueJPerMolK,
       },
     ]
   })

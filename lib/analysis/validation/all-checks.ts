@@ -1,5 +1,6 @@
 import { ARRHENIUS_CHECKS } from './arrhenius-checks'
 import { type Check } from './check'
+import { EQUILIBRIUM_CHECKS } from './equilibrium-checks'
 import { REACTOR_CHECKS } from './reactor-checks'
 import { STATISTICS_CHECKS } from './statistics-checks'
 import { TRANSPORT_CHECKS } from './transport-checks'
@@ -8,6 +9,7 @@ import { TRANSPORT_CHECKS } from './transport-checks'
 export const ALL_CHECKS: readonly Check[] = [
   ...ARRHENIUS_CHECKS,
   ...STATISTICS_CHECKS,
+  ...EQUILIBRIUM_CHECKS,
   ...REACTOR_CHECKS,
   ...TRANSPORT_CHECKS,
 ].toSorted((a, b) => (a.id < b.id ? -1 : a.id > b.id ? 1 : 0))

@@ -1,7 +1,6 @@
 import cbrt from '@stdlib/math-base-special-cbrt'
 import exp from '@stdlib/math-base-special-exp'
 import ln from '@stdlib/math-base-special-ln'
-import { adiabaticRise } from '../safety/adiabatic-rise'
 import { mixtureFlammableLimit } from '../safety/mixture-flammable-limit'
 import { fitWeightedLine } from '../statistics/weighted-line'
 import {
@@ -296,14 +295,6 @@ export const TRANSPORT_CHECKS: readonly Check[] = [
         ]),
       ),
     ],
-  },
-  {
-    id: 'C67',
-    title: 'Adiabatic rise, 1 % CO in air at 500 K',
-    source: 'polynomials of NASA TM-4513',
-    provenance: 'computed',
-    published: '',
-    items: [item('rise', 'K', 94.84076, () => adiabaticRise(0.01, -283_657, 29.9087), 1e-5)],
   },
   {
     id: 'C70',

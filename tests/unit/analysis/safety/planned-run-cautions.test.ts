@@ -89,8 +89,18 @@ describe('cautions for a planned run', () => {
       'pyrophoric',
       'standing-sentence',
     ])
-    // 0.1 × 165 kJ over (0.5 × 5/2 + 0.5 × 7/2) R = 24.943 J mol-1 K-1
-    expect(find({}, 'adiabatic-rise')?.value).toBeCloseTo(661.5, 1)
+    // 0.1 × 165 kJ over 0.1 × 45.2 (CO2) + 0.4 × 29.3 (H2) + 0.5 × 20.79 (Ar) J/(mol K) at 510 K: NIST heat capacities
+    expect(find({}, 'adiabatic-rise')?.value).toBeGreaterThan(610)
+    expect(find({}, 'adiabatic-rise')?.value).toBeLessThan(625)
+    expect(find({}, 'adiabatic-rise')?.sentence).not.toContain('lowest heat capacity')
+    // 0.1 × 165 kJ over (0.5 × 5/2 + 0.5 × 7/2) R
+    const unknown = [
+      { species: 'CO2', moleFraction: 0.1 },
+      { species: 'C9H9', moleFraction: 0.4 },
+      { species: 'Ar', moleFraction: 0.5 },
+    ]
+    expect(find({ feed: unknown }, 'adiabatic-rise')?.sentence).toContain('lowest heat capacity its gases can have')
+    expect(find({ feedHeatCapacityJPerMolK: 33 }, 'adiabatic-rise')?.value).toBeCloseTo(500, 9)
   })
   it('are grave for carbon monoxide over cold nickel', () => {
     expect(find({ temperatureRangeK: { low: 400, high: 600 } }, 'carbonyl')?.severity).toBe('grave')
