@@ -234,6 +234,9 @@ function basisConflict(unit: Unit, options: QuantityOptions): string | null {
 }
 
 function unknownUnit(alias: string, dimension: Dimension): string {
+  // grams of product per gram of catalyst and hour: a mass for a mass, which no table turns into an amount
+  if (dimension === 'rate-per-mass' && unitFromAlias(alias, 'frequency') !== null)
+    return `“${alias}” is a mass per mass and time, or a rate per site; give the amount made per mass of catalyst, like ${EXAMPLES[dimension]}, by dividing by the molar mass.`
   return `“${alias}” is not a unit of ${dimension.replaceAll('-', ' ')} known here; write it like ${EXAMPLES[dimension]}.`
 }
 

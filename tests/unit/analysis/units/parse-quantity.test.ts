@@ -237,6 +237,7 @@ describe('the rest of the trade', () => {
     ['1 µmol/g s', 'rate-per-mass'],
     ['1 Mol/kg/s', 'rate-per-mass'],
     ['1 mol gmetal-1 h-1', 'rate-per-mass'],
+    ['1 g gcat-1 h-1', 'rate-per-mass'],
     ['3 M', 'length'],
     ['abc', 'mass'],
     ['', 'mass'],
