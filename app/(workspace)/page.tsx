@@ -1,7 +1,159 @@
+import Link from 'next/link'
+import { routeOf } from '@/app/_route-of'
+import { RunsTable } from '@/components/run/runs-table'
+import { DataTable } from '@/components/ui/data-table'
+import { EmptyState } from '@/components/ui/empty-state'
+import { LinkButton } from '@/components/ui/link-button'
+import { PageBody } from '@/components/ui/page-body'
 import { PageHead } from '@/components/ui/page-head'
+import { Section } from '@/components/ui/section'
+import { SetUpSteps } from '@/components/shell/set-up-steps'
+import { requireActor } from '@/lib/access/actor'
+import { listCalibrations } from '@/lib/access/calibrations'
+import { listCampaigns } from '@/lib/access/campaigns'
+import { listReactions } from '@/lib/access/reactions'
+import { listRigs } from '@/lib/access/rigs'
+import { listRuns } from '@/lib/access/runs'
+import { listSamples } from '@/lib/access/samples'
+import { type Actor } from '@/lib/domain/role'
+import { type RunSummary } from '@/lib/domain/run'
+import { can } from '@/lib/policy/can'
 
 export const metadata = { title: 'Start' }
 
-export default function StartPage() {
-  return <PageHead title="Start" />
+/** Runs that wait for this person: files to add or a run to hand in, and for a lead what has to be decided. */
+function waitingFor(actor: Actor, runs: readonly RunSummary[]) {
+  return {
+    toFill: runs.filter((run) => run.state === 'open' && run.fileCount === 0 && can.addFiles(actor, run)),
+    toHandIn: runs.filter((run) => run.state === 'open' && run.fileCount > 0 && can.handIn(actor, run)),
+    toDecide: runs.filter((run) => run.state === 'handed-in' && can.decide(actor, run.campaignId, run)),
+  }
+}
+
+export default async function StartPage() {
+  const actor = await requireActor()
+  const campaigns = await listCampaigns(actor)
+  if (!can.readHouse(actor))
+    return (
+      <>
+        <PageHead title="Start" />
+        <PageBody>
+          <EmptyState title="Guest">
+            Published editions of the campaigns you were invited to are shown here. None has been published yet.
+          </EmptyState>
+        </PageBody>
+      </>
+    )
+  const [reactions, rigs, calibrations, samples, runs] = await Promise.all([
+    listReactions(actor),
+    listRigs(actor),
+    listCalibrations(actor),
+    listSamples(actor),
+    listRuns(actor),
+  ])
+  const zones = new Map(rigs.map((rig) => [rig.id, rig.timeZone]))
+  const zoneOf = (run: RunSummary) => zones.get(run.rigId) ?? 'UTC'
+  const { toFill, toHandIn, toDecide } = waitingFor(actor, runs)
+  const isSetUp =
+    reactions.length > 0 &&
+    rigs.length > 0 &&
+    calibrations.length > 0 &&
+    samples.length > 0 &&
+    campaigns.length > 0 &&
+    runs.length > 0
+  return (
+    <>
+      <PageHead
+        title="Start"
+        actions={campaigns.length === 0 ? null : <LinkButton href="/runs/new">Log a run</LinkButton>}
+      />
+      <PageBody>
+        {isSetUp ? null : (
+          <SetUpSteps
+            steps={[
+              {
+                name: 'Reaction',
+                href: routeOf('/reactions/new'),
+                isDone: reactions.length > 0,
+                words: 'Equations and key reactant; equilibrium comes from built-in thermochemistry.',
+              },
+              {
+                name: 'Rig',
+                href: routeOf('/rigs/new'),
+                isDone: rigs.length > 0,
+                words: 'Channels, clock, limits, and the state its flow controllers count at. An admin enters it.',
+              },
+              {
+                name: 'Calibration',
+                href: routeOf('/calibrations'),
+                isDone: calibrations.length > 0,
+                words: 'Drop the analyser’s table of response factors.',
+              },
+              {
+                name: 'Sample',
+                href: routeOf('/samples/new'),
+                isDone: samples.length > 0,
+                words: 'What is tested; a site count gives turnover frequencies.',
+              },
+              {
+                name: 'Campaign',
+                href: routeOf('/campaigns/new'),
+                isDone: campaigns.length > 0,
+                words: 'Samples compared in one reaction under one method. A lead makes it.',
+              },
+              {
+                name: 'Run',
+                href: routeOf('/runs/new'),
+                isDone: runs.length > 0,
+                words: 'Log it, add the rig log and the analyser file, look at the points.',
+              },
+            ]}
+          />
+        )}
+        {toDecide.length > 0 ? (
+          <Section title="Waiting for your decision">
+            <RunsTable runs={toDecide} timeZoneOf={zoneOf} empty="" caption="Runs waiting for your decision" />
+          </Section>
+        ) : null}
+        {toHandIn.length > 0 ? (
+          <Section title="To hand in">
+            <RunsTable runs={toHandIn} timeZoneOf={zoneOf} empty="" caption="Runs to hand in" />
+          </Section>
+        ) : null}
+        {toFill.length > 0 ? (
+          <Section title="Files to add">
+            <RunsTable runs={toFill} timeZoneOf={zoneOf} empty="" caption="Runs without files" />
+          </Section>
+        ) : null}
+        {campaigns.length > 0 ? (
+          <Section title="My campaigns">
+            <DataTable
+              caption="My campaigns"
+              rows={campaigns}
+              rowKey={(row) => row.id}
+              columns={[
+                {
+                  key: 'name',
+                  head: 'Campaign',
+                  isRowHead: true,
+                  cell: (row) => <Link href={routeOf(`/campaigns/${row.id}`)}>{row.name}</Link>,
+                },
+                { key: 'laboratory', head: 'Laboratory', cell: (row) => row.laboratory },
+                { key: 'samples', head: 'Samples', isNumber: true, cell: (row) => row.sampleCount },
+                { key: 'runs', head: 'Runs', isNumber: true, cell: (row) => row.runCount },
+                {
+                  key: 'waiting',
+                  head: 'Waiting',
+                  unit: 'for a decision',
+                  isNumber: true,
+                  cell: (row) => row.waitingCount,
+                },
+                { key: 'role', head: 'My part', cell: (row) => row.myRole },
+              ]}
+            />
+          </Section>
+        ) : null}
+      </PageBody>
+    </>
+  )
 }
