@@ -14,7 +14,7 @@ export const metadata = { title: 'Campaigns' }
 export default async function CampaignsPage() {
   const actor = await requireActor()
   const campaigns = await listCampaigns(actor)
-  const add = can.createCampaign(actor) ? (
+  const add = can.makeCampaign(actor) ? (
     <LinkButton href="/campaigns/new" kind={campaigns.length === 0 ? 'main' : 'plain'}>
       New campaign
     </LinkButton>

@@ -16,7 +16,7 @@ export const metadata = { title: 'New campaign' }
 
 export default async function NewCampaignPage() {
   const actor = await requireActor()
-  if (!can.createCampaign(actor)) notFound()
+  if (!can.makeCampaign(actor)) notFound()
   const [reactions, samples] = await Promise.all([listReactions(actor), listSamples(actor)])
   return (
     <>
