@@ -21,7 +21,7 @@ export function arrheniusSummary(series: readonly ArrheniusSeries[]): string {
     const out = entry.fit.points.length - used
     return `${entry.code}: ${ea} from ${used} holds, ${celsius(entry.fit.lowestTemperatureK, 0)} to ${celsius(entry.fit.highestTemperatureK, 0)} °C${out > 0 ? `, ${out} left out` : ''}`
   })
-  return `${sentences.join('; ')}. Bars are one standard uncertainty; bands are pointwise and hold own scatter only; hollow points are not in the line.`
+  return `Lines: ${sentences.join('; ')} (± of the line alone). Bars are one standard uncertainty; bands are pointwise and hold own scatter only; hollow points are not in the line.`
 }
 
 function mapHalf(half: number | null): number | null {

@@ -6,11 +6,13 @@ import { temperCssColour, type TemperWindow } from '@/components/charts/temper-s
 import { formatFixed } from '@/components/numbers/format-fixed'
 import { ValueWithUncertainty } from '@/components/ui/value-with-uncertainty'
 import { CautionTag } from '@/components/working/caution-tag'
+import { type Ranking } from '@/lib/domain/ranking'
 import { type IntervalScale } from './interval-scale'
 import { type RankingGridRow } from './ranking-grid-row'
 
 /** What the cells need beside their row. */
 export interface RankingCellContext {
+  readonly ranking: Ranking
   readonly rankedCount: number
   readonly scale: IntervalScale | null
   readonly window: TemperWindow

@@ -17,6 +17,7 @@ import { type TemperWindow } from '@/components/charts/temper-scale'
 import { type Ranking, type RankingRow } from '@/lib/domain/ranking'
 import { type Working } from '@/lib/analysis/working'
 import { GridProvider, gridTheme } from './grid-provider'
+import { derivedWorking } from './derived-working'
 import { intervalScale } from './interval-scale'
 import { type RankingCellContext } from './ranking-cells'
 import { cellChange, type RankingCellChange } from './ranking-cell-change'
@@ -55,7 +56,8 @@ const columnDefaults: ColDef<RankingGridRow> = {
   minWidth: 48,
   cellClassRules: {
     'has-working': (parameters) =>
-      parameters.colDef.colId !== undefined && workingOf(parameters.data?.row, parameters.colDef.colId) !== null,
+      parameters.colDef.colId !== undefined &&
+      workingOf(parameters.context?.ranking, parameters.data?.row, parameters.colDef.colId) !== null,
   },
 }
 /** above this many rows the grid scrolls inside a fixed height, so that not every row is in the page at once */
@@ -63,9 +65,10 @@ const ROWS_SHOWN_WHOLE = 40
 const runHref = (runId: string) => `/runs/${runId}`
 
 /** The derivation of the number in this cell, where the result carries one. */
-function workingOf(row: RankingRow | undefined, colId: string): Working | null {
+function workingOf(ranking: Ranking | undefined, row: RankingRow | undefined, colId: string): Working | null {
+  if (!ranking || !row) return null
   const key = workingKeyOf(colId)
-  return row?.workings[key] ?? row?.fit?.workings[key] ?? null
+  return row.workings[key] ?? row.fit?.workings[key] ?? derivedWorking(ranking, row, colId)
 }
 
 function savable(state: GridState): GridState {
@@ -105,13 +108,14 @@ export function RankingGrid(props: RankingGridProps) {
   const defaultColDef = useMemo(() => ({ ...columnDefaults, floatingFilter: props.hasFilterRow }), [props.hasFilterRow])
   const context = useMemo<RankingCellContext>(
     () => ({
+      ranking,
       rankedCount: ranking.rows.filter((row) => row.rank !== null).length,
       scale,
       window: props.window,
       canDecide: permissions.canDecide,
       runHref,
     }),
-    [ranking.rows, scale, props.window, permissions.canDecide],
+    [ranking, scale, props.window, permissions.canDecide],
   )
   // read once: afterwards the grid itself is the place where the state lives
   const [initialState] = useState<GridState>(() => ({
@@ -123,7 +127,7 @@ export function RankingGrid(props: RankingGridProps) {
 
   const openWorking = (event: CellClickedEvent<RankingGridRow> | CellKeyDownEvent<RankingGridRow>) => {
     const row = event.data?.row
-    const working = workingOf(row, event.column.getColId())
+    const working = workingOf(ranking, row, event.column.getColId())
     if (row && working) onOpenWorking(row, working)
   }
   const onCellKeyDown = (event: CellKeyDownEvent<RankingGridRow> | FullWidthCellKeyDownEvent<RankingGridRow>) => {

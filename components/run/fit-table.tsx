@@ -120,7 +120,8 @@ export function FitTable({ caption, fits, onOpen }: FitTableProps) {
         </tbody>
       </table>
       <p className="mt-1 mb-0 text-[12.5px] text-ink-3">
-        ± is half of the {Math.round(level * 100)} % interval; the errors that all points share are in it.
+        ± is half of the {Math.round(level * 100)} % interval of the line; errors that all its points share are in it.
+        The ranking adds the spread between packed beds.
       </p>
     </div>
   )

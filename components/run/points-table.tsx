@@ -1,6 +1,7 @@
 'use client'
 
 import { type Estimate } from '@/lib/analysis/estimate'
+import { type Caution } from '@/lib/analysis/caution'
 import { type Point } from '@/lib/analysis/reduction/run-reduction'
 import { temperCssColour, type TemperWindow } from '@/components/charts/temper-scale'
 import { formatFixed } from '@/components/numbers/format-fixed'
@@ -132,6 +133,22 @@ function Cell({
   )
 }
 
+const isDoubt = (caution: Caution) => caution.severity !== 'note'
+
+/** Notes say the same of many holds: each is written once, with its holds. */
+export function notesOfHolds(points: readonly Point[]): { tag: string; sentence: string; holds: number[] }[] {
+  const notes = new Map<string, { tag: string; sentence: string; holds: number[] }>()
+  for (const point of points) {
+    for (const caution of point.cautions.filter((entry) => !isDoubt(entry))) {
+      // numbers differ from hold to hold, so notes are told apart by what they are about
+      const note = notes.get(caution.code) ?? { tag: caution.tag, sentence: caution.sentence, holds: [] }
+      note.holds.push(point.hold.number)
+      notes.set(caution.code, note)
+    }
+  }
+  return [...notes.values()]
+}
+
 /** One row a hold: both conversion routes, rates, and what is doubtful; each number opens its working. */
 export function PointsTable({ points, window, picked, onPick }: PointsTableProps) {
   const columns = numberColumns(mainProduct(points))
@@ -218,7 +235,7 @@ export function PointsTable({ points, window, picked, onPick }: PointsTableProps
                 </td>
                 <td className="px-1.5 py-1 text-left">
                   <span className="flex flex-wrap items-center gap-1">
-                    {point.cautions.map((caution, index) => (
+                    {point.cautions.filter(isDoubt).map((caution, index) => (
                       <CautionTag key={`${caution.code}-${index}`} caution={caution} />
                     ))}
                     {point.excluded === null || hold.returnsTo !== null ? null : (

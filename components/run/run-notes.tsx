@@ -10,6 +10,19 @@ export interface RunEvent {
   readonly reason: string
 }
 
+/** Actions of the audit trail on a run, in words; one that is new here is shown by its name. */
+const actionWords: Readonly<Record<string, string>> = {
+  'run.create': 'logged the run',
+  'run.change': 'changed what was logged',
+  'run.hand-in': 'handed it in',
+  'run.decide': 'decided',
+  'run.leave-out': 'left something out',
+  'run.put-back': 'put something back',
+  'run.move-window': 'moved a window',
+  'run.give-window-back': 'restored a window',
+  'run.remark': 'wrote a remark',
+}
+
 /** What people did to the run's numbers, newest first; the campaign's history holds the rest for its leads. */
 export function runEvents(
   decisions: readonly RunDecisionRecord[],
@@ -31,7 +44,7 @@ export function runEvents(
           key: `history-${entry.seq}`,
           at: entry.at,
           by: entry.actorName,
-          what: entry.action.replaceAll('.', ': ').replaceAll('-', ' '),
+          what: actionWords[entry.action] ?? entry.action.replaceAll('.', ', ').replaceAll('-', ' '),
           reason: entry.reason,
         }))
       : [

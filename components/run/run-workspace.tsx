@@ -19,7 +19,7 @@ import { CautionList } from '@/components/working/caution-list'
 import { WorkingPanel } from '@/components/working/working-panel'
 import { FitTable, type NamedFit } from './fit-table'
 import { MoveHoldDialog } from './move-hold-dialog'
-import { PointsTable, workingOfPoint, type PickedNumber } from './points-table'
+import { notesOfHolds, PointsTable, workingOfPoint, type PickedNumber } from './points-table'
 import { ReasonDialog } from './reason-dialog'
 import { type RunActions, type RunPermissions } from './run-actions'
 
@@ -175,6 +175,7 @@ export function RunWorkspace(props: RunWorkspaceProps) {
                 setHasPicked(true)
               }}
             />
+            <HoldNotes points={reduction.points} />
             {permissions.canLeaveOut && point ? (
               <HoldActions
                 point={point}
@@ -251,6 +252,32 @@ export function RunWorkspace(props: RunWorkspaceProps) {
     </div>
   )
 }
+
+function HoldNotes({ points }: { points: readonly Point[] }) {
+  const notes = points.flatMap((point) =>
+    point.cautions
+      .filter((caution) => caution.severity === 'note')
+      .map((caution) => ({ holdNumber: point.hold.number, caution })),
+  )
+  if (notes.length === 0) return null
+  return (
+    <details className="mt-1.5">
+      <summary className="inline-block min-h-6 cursor-pointer text-[12.5px] text-ink-2 touch:min-h-11">
+        Notes: {notesOfHolds(points).map(noteText).join('; ')}
+      </summary>
+      <ul className="m-0 mt-1 list-none space-y-0.5 p-0 text-[12.5px]">
+        {notes.map((note, index) => (
+          <li key={index}>
+            <span className="text-ink-3">Hold {note.holdNumber}</span> {note.caution.sentence}
+          </li>
+        ))}
+      </ul>
+    </details>
+  )
+}
+
+const noteText = (note: { tag: string; holds: readonly number[] }) =>
+  `${note.tag} (hold${note.holds.length === 1 ? '' : 's'} ${note.holds.join(', ')})`
 
 function HoldActions({
   point,

@@ -4,6 +4,7 @@ import { useEffect, useRef, useState } from 'react'
 import { Button } from '@/components/ui/button'
 import { type Working } from '@/lib/analysis/working'
 import { Formula } from './formula'
+import { withSourceWords } from './source-words'
 import { symbolUncertainty, symbolValue, workingText } from './working-text'
 
 interface WorkingPanelProps {
@@ -22,7 +23,7 @@ function Lines({ title, lines }: { title: string; lines: readonly string[] }) {
       <dt className="mt-2.5 text-[12.5px] text-ink-3">{title}</dt>
       {lines.map((line, index) => (
         <dd key={index} className="m-0 mt-px">
-          {line}
+          {withSourceWords(line)}
         </dd>
       ))}
     </>
@@ -72,7 +73,10 @@ export function WorkingPanel({ working, usedBy = [], onClose, takesFocus = false
                 <Formula text={symbol.symbol} />
               </th>
               <td className="py-px">
-                {symbolValue(symbol)} <span className="text-ink-2">{symbol.meaning}</span>
+                {symbolValue(symbol)}{' '}
+                <span className="text-ink-2">
+                  <Formula text={symbol.meaning} />
+                </span>
               </td>
               <td className="pl-3 text-right text-[12.5px] whitespace-nowrap text-ink-3">
                 {symbolUncertainty(symbol)}

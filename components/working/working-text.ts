@@ -1,3 +1,4 @@
+import { withSourceWords } from './source-words'
 import { type Working, type WorkingSymbol } from '@/lib/analysis/working'
 import { estimateAsText, formatEstimate, setFigures, type EstimateText } from '@/lib/domain/format-estimate'
 
@@ -37,7 +38,7 @@ export function symbolUncertainty(symbol: WorkingSymbol): string {
 }
 
 const list = (title: string, lines: readonly string[]) =>
-  lines.length > 0 ? [title, ...lines.map((line) => `  ${line}`)] : []
+  lines.length > 0 ? [title, ...lines.map((line) => `  ${withSourceWords(line)}`)] : []
 
 /** The whole derivation as plain text, for a notebook or a mail. */
 export function workingText(working: Working): string {

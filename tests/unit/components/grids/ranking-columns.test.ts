@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import { derivedWorking } from '@/components/grids/derived-working'
 import { intervalScale } from '@/components/grids/interval-scale'
 import {
   buildRankingColumns,
@@ -80,6 +81,25 @@ describe('ranking columns', () => {
     expect(formatProbability(0)).toBe('< 0.01')
     expect(formatProbability(0.5)).toBe('0.50')
     expect(formatProbability(null)).toBe('–')
+  })
+})
+
+describe('working of a number that follows from the whole ranking', () => {
+  it('says how ranks were drawn', () => {
+    const row = ranking.rows[1]
+    if (!row) throw new Error('the example has it')
+    const working = derivedWorking(ranking, row, 'probabilityBest')
+    expect(working?.title).toBe('Rank of CQ-106')
+    expect(working?.symbols.find((symbol) => symbol.symbol === 'N')?.value).toBe(20_000)
+    expect(working?.result.value).toBe(2)
+  })
+  it('says at which conversion a selectivity stands, and nothing where there is no number', () => {
+    const [row, blank] = [ranking.rows[0], ranking.rows[7]]
+    if (!row || !blank) throw new Error('the example has them')
+    expect(derivedWorking(ranking, row, 'selectivity.CH4')?.result.value).toBeCloseTo(95.2, 9)
+    expect(derivedWorking(ranking, blank, 'selectivity.CH4')).toBeNull()
+    expect(derivedWorking(ranking, blank, 'rank')).toBeNull()
+    expect(derivedWorking(ranking, row, 'remark')).toBeNull()
   })
 })
 

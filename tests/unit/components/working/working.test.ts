@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { formulaParts } from '@/components/working/formula-parts'
+import { withSourceWords } from '@/components/working/source-words'
 import { symbolUncertainty, symbolValue, workingText } from '@/components/working/working-text'
 import { exampleRunResult } from '../../../support/example-run-result'
 
@@ -15,15 +16,36 @@ const symbol = {
 describe('formula', () => {
   it('sets what follows an underscore as a subscript', () => {
     expect(formulaParts('r = F_A0 · X / W')).toEqual([
-      { text: 'r = F', isSubscript: false },
-      { text: 'A0', isSubscript: true },
-      { text: ' · X / W', isSubscript: false },
+      { text: 'r = F', place: 'line' },
+      { text: 'A0', place: 'subscript' },
+      { text: ' · X / W', place: 'line' },
     ])
     expect(formulaParts('y_{CH4, out}')).toEqual([
-      { text: 'y', isSubscript: false },
-      { text: 'CH4, out', isSubscript: true },
+      { text: 'y', place: 'line' },
+      { text: 'CH4, out', place: 'subscript' },
     ])
-    expect(formulaParts('a / b')).toEqual([{ text: 'a / b', isSubscript: false }])
+    expect(formulaParts('a / b')).toEqual([{ text: 'a / b', place: 'line' }])
+  })
+  it('sets what follows a caret as a superscript', () => {
+    expect(formulaParts('(p_i/p_i0)^a_i')).toEqual([
+      { text: '(p', place: 'line' },
+      { text: 'i', place: 'subscript' },
+      { text: '/p', place: 'line' },
+      { text: 'i0', place: 'subscript' },
+      { text: ')', place: 'line' },
+      { text: 'ai', place: 'superscript' },
+    ])
+  })
+})
+
+describe('shared sources', () => {
+  it('are called what people call them', () => {
+    expect(
+      withSourceWords(
+        'Shared parts: flow:a049d6bb-4c88-413f-95e2-471e30064c0e 1.0 %, calibration:4024ce74-365a-414f-8bbb-6fb113ae47ab:CH4 0.96 %, inlet:R-0008 −0.31 %.',
+      ),
+    ).toBe('Shared parts: flow controllers 1.0 %, response factor (CH4) 0.96 %, inlet composition (R-0008) −0.31 %.')
+    expect(withSourceWords('feed: R-0008-analysis.xlsx, rows 2 to 8')).toBe('feed: R-0008-analysis.xlsx, rows 2 to 8')
   })
 })
 
