@@ -27,7 +27,7 @@ export const FEED_DRIFT_LIMIT = 0.02
  * @throws {AnalysisError} not-positive for an analysis not above zero
  */
 export function feedDrift(before: FeedAnalysis, after: FeedAnalysis, limit: number = FEED_DRIFT_LIMIT): FeedDrift {
-  if (!(before.value > 0) || !(after.value > 0))
+  if (![before.value, after.value].every((value) => value > 0 && Number.isFinite(value)))
     throw new AnalysisError('not-positive', 'Both feed analyses must be above zero.')
   const ratio = after.value / before.value
   const standardUncertainty =

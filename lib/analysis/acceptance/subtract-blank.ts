@@ -43,11 +43,15 @@ export const BLANK_SHARE = { noticeable: 0.05, tooLarge: 0.2 } as const
  * @param points - at least 1 blank point: temperature [K] > 0, consumption [mol s-1], standard uncertainty [mol s-1] >= 0
  * @param temperatureK - where the blank is wanted [K]
  * @returns consumption with standard uncertainty [mol s-1]
- * @throws {AnalysisError} too-few-points without a point | not-positive for a temperature not above zero
+ * @throws {AnalysisError} too-few-points without a point | not-finite | not-positive for a temperature not above zero
  */
 export function blankAt(points: readonly BlankPoint[], temperatureK: number): BlankAt {
   if (points.some((point) => !(point.temperatureK > 0)) || !(temperatureK > 0))
     throw new AnalysisError('not-positive', 'Temperatures must be above zero.')
+  if (
+    ![temperatureK, ...points.flatMap((point) => [point.temperatureK, point.consumptionMolPerS])].every(Number.isFinite)
+  )
+    throw new AnalysisError('not-finite', 'Temperatures and consumptions of a blank must be finite numbers.')
   const sorted = points.toSorted((a, b) => a.temperatureK - b.temperatureK)
   const first = sorted[0]
   const last = sorted[sorted.length - 1]
@@ -100,7 +104,7 @@ export function subtractBlank(
   catalystMassKg: number,
   blank: BlankAt,
 ): BlankCorrectedRate {
-  if (!(catalystMassKg > 0))
+  if (!(catalystMassKg > 0) || !Number.isFinite(catalystMassKg))
     throw new AnalysisError('not-positive', 'The catalyst mass must be above zero.', { catalystMassKg })
   const blankRate = blank.consumptionMolPerS / catalystMassKg
   const blankUncertainty = blank.standardUncertaintyMolPerS / catalystMassKg

@@ -106,6 +106,11 @@ export function fitCalibrationLine(
  * @returns amount with standard uncertainty and n − 2 or n − 3 degrees of freedom [amount], or a sentence why there is none
  */
 export function amountFromResponse(line: CalibrationLine, meanResponse: number, replicates = 1): InverseReading {
+  if (!Number.isFinite(meanResponse) || !((line.coefficients[1] ?? 0) !== 0))
+    return {
+      ok: false,
+      sentence: 'The response is no number, or the calibration is flat: no amount can be read from it.',
+    }
   const amount = rootOf(line, meanResponse)
   if (amount === null)
     return {

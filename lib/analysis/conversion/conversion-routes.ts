@@ -24,10 +24,11 @@ export interface Measured {
  * @param inlet - flow of the key reactant in the feed [mol s-1] > 0
  * @param outlet - flow of the key reactant at the outlet [mol s-1]
  * @returns conversion with standard uncertainty [-]
- * @throws {AnalysisError} not-positive for an inlet flow not above zero
+ * @throws {AnalysisError} not-finite | not-positive for an inlet flow not above zero
  */
 export function conversionByFlow(inlet: Measured, outlet: Measured): RouteConversion {
   requirePositive(inlet.value, 'flow of the key reactant in the feed')
+  requireFinite(outlet.value)
   const left = outlet.value / inlet.value
   return { value: 1 - left, standardUncertainty: Math.abs(left) * root(inlet, outlet) }
 }
@@ -45,7 +46,7 @@ export function conversionByFlow(inlet: Measured, outlet: Measured): RouteConver
  * @param standard - mole fraction of the standard at the outlet [-] > 0
  * @param standardInFeed - and in the feed [-] > 0
  * @returns conversion with standard uncertainty [-]
- * @throws {AnalysisError} not-positive
+ * @throws {AnalysisError} not-finite | not-positive
  */
 export function conversionByInternalStandard(
   key: Measured,
@@ -56,6 +57,7 @@ export function conversionByInternalStandard(
   requirePositive(keyInFeed.value, 'key reactant in the feed')
   requirePositive(standard.value, 'internal standard at the outlet')
   requirePositive(standardInFeed.value, 'internal standard in the feed')
+  requireFinite(key.value)
   const left = (key.value / keyInFeed.value) * (standardInFeed.value / standard.value)
   return { value: 1 - left, standardUncertainty: Math.abs(left) * root(key, keyInFeed, standard, standardInFeed) }
 }
@@ -72,7 +74,7 @@ export function conversionByInternalStandard(
  * @param keyMoleFractionInFeed - in the feed [-] > 0
  * @param molesPerMoleOfKey - Σν/|ν_A| over the species on this basis [-]
  * @returns conversion [-]
- * @throws {AnalysisError} not-positive | out-of-range where the fraction cannot come from this reaction
+ * @throws {AnalysisError} not-finite | not-positive | out-of-range where the fraction cannot come from this reaction
  * @example nitrogen 0.25 in N2 + 3 H2 and 0.23684210526 at the outlet: X = 0.1
  */
 export function conversionBySingleReaction(
@@ -81,6 +83,7 @@ export function conversionBySingleReaction(
   molesPerMoleOfKey: number,
 ): number {
   requirePositive(keyMoleFractionInFeed, 'key reactant in the feed')
+  requireFinite(keyMoleFraction, molesPerMoleOfKey)
   const expansion = keyMoleFractionInFeed * molesPerMoleOfKey
   const denominator = keyMoleFractionInFeed + expansion * keyMoleFraction
   if (!(denominator > 0))
@@ -132,7 +135,7 @@ export interface SeenProduct extends Measured {
  * @param keyInFeed - mole fraction of the key reactant in the feed [-] > 0
  * @param outletPerInlet - F_out/F_in, for example y_S0/y_S of a standard [-] > 0
  * @returns conversion with standard uncertainty [-]
- * @throws {AnalysisError} not-positive
+ * @throws {AnalysisError} not-finite | not-positive
  */
 export function conversionByProducts(
   products: readonly SeenProduct[],
@@ -141,6 +144,7 @@ export function conversionByProducts(
 ): RouteConversion {
   requirePositive(keyInFeed.value, 'key reactant in the feed')
   requirePositive(outletPerInlet.value, 'ratio of outlet to inlet flow')
+  for (const product of products) requireFinite(product.value, product.inFeed, product.keyPerMole)
   let made = 0
   let gross = 0
   let own = 0
@@ -166,7 +170,7 @@ export function conversionByProducts(
  * @param productCarbon - carbon in the products [any]
  * @param keyCarbon - carbon in the key reactant left, same unit [any]
  * @returns conversion with standard uncertainty [-]
- * @throws {AnalysisError} not-positive when no carbon is seen
+ * @throws {AnalysisError} not-finite | not-positive when no carbon is seen
  */
 export function conversionByNormalising(productCarbon: Measured, keyCarbon: Measured): RouteConversion {
   const total = productCarbon.value + keyCarbon.value
@@ -222,6 +226,12 @@ function root(...parts: readonly Measured[]): number {
   return Math.sqrt(parts.reduce((sum, { relativeStandardUncertainty: u }) => sum + u * u, 0))
 }
 
+function requireFinite(...values: readonly number[]): void {
+  if (values.some((value) => !Number.isFinite(value)))
+    throw new AnalysisError('not-finite', 'A measured composition or flow is not a finite number.', { values })
+}
+
 function requirePositive(value: number, name: string): void {
+  requireFinite(value)
   if (!(value > 0)) throw new AnalysisError('not-positive', `The ${name} must be above zero.`, { value })
 }

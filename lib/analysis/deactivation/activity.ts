@@ -93,7 +93,7 @@ export interface BracketedActivity {
 /**
  * Activity between returns to a reference condition, relative to the first.
  *
- * ln a(t) straight between neighbouring brackets; outside, the line of the nearest pair
+ * ln a(t) straight between neighbouring brackets; outside, for at most one window, the line of the nearest pair
  *
  * Uncertainty: both neighbours and the first bracket, taken as independent. The interpolated activity assumes steady loss between returns.
  * Source: common practice (bracketing); propagation JCGM 100:2008, equation 10.
@@ -101,12 +101,17 @@ export interface BracketedActivity {
  * @param brackets - at least 2 returns in time order: time [s], rate [any] > 0, relative standard uncertainty [-]
  * @param timeS - when the activity is wanted [s]
  * @returns activity [-] with relative standard uncertainty [-]
- * @throws {AnalysisError} too-few-points | not-positive for a rate not above zero | out-of-range when not in time order
+ * @throws {AnalysisError} too-few-points | not-finite | not-positive for a rate not above zero | out-of-range when not in time order, or more than one window outside
  */
 export function bracketedActivity(brackets: readonly Bracket[], timeS: number): BracketedActivity {
   const first = brackets[0]
   if (first === undefined || brackets.length < 2)
     throw new AnalysisError('too-few-points', 'Bracketing needs at least two returns.')
+  if (
+    !Number.isFinite(timeS) ||
+    brackets.some((bracket) => !Number.isFinite(bracket.timeS) || !Number.isFinite(bracket.rate))
+  )
+    throw new AnalysisError('not-finite', 'Times and rates of the returns must be finite numbers.')
   for (const [i, bracket] of brackets.entries()) {
     if (!(bracket.rate > 0))
       throw new AnalysisError('not-positive', 'The rate at a return must be above zero.', { index: i })
@@ -123,6 +128,14 @@ export function bracketedActivity(brackets: readonly Bracket[], timeS: number): 
   const index = timeS > (brackets[brackets.length - 1]?.timeS ?? NaN) ? brackets.length - 1 : next
   const [before, after] = [brackets[index - 1] ?? first, brackets[index] ?? first]
   const share = (timeS - before.timeS) / (after.timeS - before.timeS)
+  if (!(share >= -1 && share <= 2))
+    throw new AnalysisError(
+      'out-of-range',
+      'This time lies more than one window outside the returns; nothing bounds the activity there.',
+      {
+        timeS,
+      },
+    )
   const lnActivity = (1 - share) * ln(before.rate / first.rate) + share * ln(after.rate / first.rate)
   // weights of each bracket in ln a: the first enters with −1, and may itself be the one before
   const weight = new Map<Bracket, number>()

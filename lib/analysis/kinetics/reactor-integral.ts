@@ -51,7 +51,8 @@ export function plugFlowIntegral(order: number, conversion: number, expansion = 
  * @example n = 1, X = 0.3, ε = 0.5: 0.492857142857
  */
 export function stirredTankIntegral(order: number, conversion: number, expansion = 0): number {
-  requireConversion(conversion, order)
+  // a gradientless reactor works at its outlet: at full conversion only an order of zero still has a rate
+  requireConversion(conversion, order === 0 ? 0 : 1)
   requireExpansion(expansion, conversion)
   return conversion * pow((1 + expansion * conversion) / (1 - conversion), order)
 }
@@ -70,7 +71,8 @@ export function stirredTankIntegral(order: number, conversion: number, expansion
  * @throws {AnalysisError} not-positive when a concentration is not possible
  */
 export function batchIntegral(order: number, startMolPerM3: number, nowMolPerM3: number): number {
-  if (!(startMolPerM3 > 0) || !(nowMolPerM3 > 0 || (nowMolPerM3 === 0 && order < 1)))
+  const isPossible = Number.isFinite(startMolPerM3) && startMolPerM3 > 0 && Number.isFinite(nowMolPerM3)
+  if (!isPossible || !(nowMolPerM3 > 0 || (nowMolPerM3 === 0 && order < 1)))
     throw new AnalysisError('not-positive', 'Concentrations must be above zero.', { startMolPerM3, nowMolPerM3 })
   if (order === 1) return ln(startMolPerM3 / nowMolPerM3)
   return (pow(nowMolPerM3, 1 - order) - pow(startMolPerM3, 1 - order)) / (order - 1)
@@ -164,6 +166,6 @@ function requireConversion(conversion: number, order: number): void {
 }
 
 function requireExpansion(expansion: number, conversion: number): void {
-  if (!(expansion > -1) || !(1 + expansion * conversion > 0))
+  if (!Number.isFinite(expansion) || !(expansion > -1) || !(1 + expansion * conversion > 0))
     throw new AnalysisError('out-of-range', 'The expansion must be above −1.', { expansion })
 }

@@ -28,10 +28,11 @@ const COLDEST_USUAL_K = 298.15
  * codes, the safety data sheet and a competent or licensed person decide.
  * Source: see the single cautions.
  *
- * @param input - the planned run: feed as mole fractions [-], temperatures [K], absolute pressure [Pa], limits of the rig [Pa, K], reaction enthalpy [J mol-1], lengths [m]
+ * @param planned - the planned run: feed as mole fractions [-], temperatures [K], absolute pressure [Pa], limits of the rig [Pa, K], reaction enthalpy [J mol-1], lengths [m]
  * @returns cautions, grave ones first, the standing sentence last [-]
  */
-export function plannedRunCautions(input: PlannedRunInput): Caution[] {
+export function plannedRunCautions(planned: PlannedRunInput): Caution[] {
+  const input = withoutNonNumbers(planned)
   const cautions = [
     ...rigCautions(input),
     ...flammabilityCautions(input),
@@ -42,6 +43,29 @@ export function plannedRunCautions(input: PlannedRunInput): Caution[] {
   ]
   const weight = { grave: 0, caution: 1, note: 2 }
   return [...cautions.sort((a, b) => weight[a.severity] - weight[b.severity]), standing()]
+}
+
+// A field that holds no number yet counts as not filled in.
+function withoutNonNumbers(planned: PlannedRunInput): PlannedRunInput {
+  const known = (value: number | null | undefined) =>
+    value !== null && value !== undefined && Number.isFinite(value) ? value : null
+  const low = known(planned.temperatureRangeK?.low)
+  const high = known(planned.temperatureRangeK?.high)
+  return {
+    ...planned,
+    feed: planned.feed.filter(({ moleFraction }) => Number.isFinite(moleFraction)),
+    temperatureRangeK: low === null || high === null ? null : { low, high },
+    pressurePa: known(planned.pressurePa),
+    rigLimits: {
+      maximumPressurePa: known(planned.rigLimits.maximumPressurePa),
+      maximumTemperatureK: known(planned.rigLimits.maximumTemperatureK),
+    },
+    reactionEnthalpyJPerMol: known(planned.reactionEnthalpyJPerMol),
+    feedHeatCapacityJPerMolK: known(planned.feedHeatCapacityJPerMolK),
+    particleDiameterM: known(planned.particleDiameterM),
+    tubeInnerDiameterM: known(planned.tubeInnerDiameterM),
+    bedLengthM: known(planned.bedLengthM),
+  }
 }
 
 function standing(): Caution {

@@ -55,8 +55,10 @@ export const HIGHEST_CREDIBLE_DISPERSION = 1.1
  * @throws {AnalysisError} not-positive for a metal content not above zero
  */
 export function dispersion(sitesMolPerKg: number, metalMolPerKg: number): number {
-  if (!(metalMolPerKg > 0))
-    throw new AnalysisError('not-positive', 'The metal content must be above zero.', { metalMolPerKg })
+  if (!(metalMolPerKg > 0) || !Number.isFinite(sitesMolPerKg) || !Number.isFinite(metalMolPerKg))
+    throw new AnalysisError('not-positive', 'The metal content must be a number above zero, and the sites a number.', {
+      metalMolPerKg,
+    })
   return sitesMolPerKg / metalMolPerKg
 }
 
@@ -75,7 +77,7 @@ export function dispersion(sitesMolPerKg: number, metalMolPerKg: number): number
  * @example platinum of dispersion 1: 1.12 nm
  */
 export function meanDiameter(dispersionValue: number, metal: string): number | null {
-  if (!(dispersionValue > 0))
+  if (!(dispersionValue > 0) || !Number.isFinite(dispersionValue))
     throw new AnalysisError('not-positive', 'The dispersion must be above zero.', { dispersionValue })
   const entry = Object.hasOwn(METALS, metal) ? METALS[metal] : undefined
   const weight = Object.hasOwn(ATOMIC_WEIGHTS_G_PER_MOL, metal) ? ATOMIC_WEIGHTS_G_PER_MOL[metal] : undefined
@@ -111,8 +113,10 @@ export function ratePerSite(
   sitesMolPerKg: number,
   sitesRelative: number,
 ): RatePerSite {
-  if (!(sitesMolPerKg > 0))
-    throw new AnalysisError('not-positive', 'The site count must be above zero.', { sitesMolPerKg })
+  if (!(sitesMolPerKg > 0) || !Number.isFinite(sitesMolPerKg) || !Number.isFinite(rateMolPerKgS))
+    throw new AnalysisError('not-positive', 'The site count must be a number above zero, and the rate a number.', {
+      sitesMolPerKg,
+    })
   return {
     ratePerS: rateMolPerKgS / sitesMolPerKg,
     relativeStandardUncertainty: Math.sqrt(rateRelative * rateRelative + sitesRelative * sitesRelative),

@@ -173,5 +173,6 @@ export function thieleModuliOfTwoSizes(
 }
 
 function requireModulus(value: number): void {
-  if (!(value >= 0)) throw new AnalysisError('not-positive', 'A modulus must be zero or more.', { value })
+  if (!(value >= 0) || !Number.isFinite(value))
+    throw new AnalysisError('not-positive', 'A modulus must be a number, zero or more.', { value })
 }

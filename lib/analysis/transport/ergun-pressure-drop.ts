@@ -20,11 +20,13 @@ export interface BedFlow {
  *
  * @param bed - particle diameter [m] > 0, void fraction [-] between 0 and 1, superficial velocity [m s-1], density [kg m-3], viscosity [Pa s], length [m]
  * @returns pressure drop [Pa]
- * @throws {AnalysisError} not-positive when the diameter is not above zero | out-of-range when the void fraction is not between 0 and 1
+ * @throws {AnalysisError} not-finite | not-positive when the diameter is not above zero | out-of-range when the void fraction is not between 0 and 1
  * @example 0.8 mm, 0.4, 1 mm/s, water, 1 m: 1338.8671875 Pa
  */
 export function ergunPressureDrop(bed: BedFlow): number {
   const { particleDiameterM: d, bedVoidFraction: void_, superficialVelocityMPerS: u } = bed
+  if (Object.values(bed).some((value) => !Number.isFinite(value)))
+    throw new AnalysisError('not-finite', 'Every number of the bed must be finite.', { ...bed })
   if (!(d > 0))
     throw new AnalysisError('not-positive', 'The particle diameter must be above zero.', { particleDiameterM: d })
   if (!(void_ > 0 && void_ < 1))

@@ -59,5 +59,6 @@ export function fullerDiffusivity1966(pair: GasPair): number {
 
 function requirePositive(pair: GasPair): void {
   for (const [name, value] of Object.entries(pair))
-    if (!(value > 0)) throw new AnalysisError('not-positive', `${name} must be above zero.`, { name, value })
+    if (!(value > 0) || !Number.isFinite(value))
+      throw new AnalysisError('not-positive', `${name} must be above zero.`, { name, value })
 }

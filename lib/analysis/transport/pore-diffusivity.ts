@@ -16,7 +16,7 @@ import { BOLTZMANN_CONSTANT_J_PER_K, GAS_CONSTANT_J_PER_MOL_K } from '../units/c
  * @throws {AnalysisError} not-positive when an input is not above zero
  */
 export function knudsenDiffusivity(poreRadiusM: number, temperatureK: number, molarMassKgPerMol: number): number {
-  if (!(poreRadiusM > 0) || !(temperatureK > 0) || !(molarMassKgPerMol > 0))
+  if ([poreRadiusM, temperatureK, molarMassKgPerMol].some((value) => !(value > 0) || !Number.isFinite(value)))
     throw new AnalysisError('not-positive', 'Pore radius, temperature and molar mass must be above zero.', {
       poreRadiusM,
       temperatureK,

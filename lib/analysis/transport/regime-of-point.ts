@@ -63,11 +63,12 @@ interface Draft {
  * an input is missing. Inputs not entered are assumed from {@link REGIME_DEFAULTS} and named in the criterion.
  * Source: Mears, Ind. Eng. Chem. Process Des. Dev. 10 (1971) 541; Weisz and Prater, Adv. Catal. 6 (1954) 143; see the single criteria.
  *
- * @param input - temperature [K], pressure [Pa], flow [mol s-1], composition [-], observed rate [mol kg-1 s-1], orders [-], energies [J mol-1] and loading [SI] of the point
+ * @param given - temperature [K], pressure [Pa], flow [mol s-1], composition [-], observed rate [mol kg-1 s-1], orders [-], energies [J mol-1] and loading [SI] of the point
  * @returns criteria in a fixed order [-], and the effectiveness factor [-] of a first-order sphere
- * @throws {AnalysisError} not-positive when temperature, pressure or flow is not above zero | unknown-species when a species is no formula
+ * @throws {AnalysisError} not-positive when temperature, pressure or flow is not above zero | not-finite | unknown-species when a species is no formula
  */
-export function regimeOfPoint(input: RegimeInput): RegimeReport {
+export function regimeOfPoint(given: RegimeInput): RegimeReport {
+  const input = withoutNonNumbers(given)
   const state = regimeState(input)
   const pore = poreDraft(input, state)
   const drafts = [
@@ -81,6 +82,34 @@ export function regimeOfPoint(input: RegimeInput): RegimeReport {
     spanDraft(input),
   ]
   return { criteria: drafts.map(judge), effectiveness: effectivenessOf(pore), state }
+}
+
+// A length or property that is no number above zero counts as not entered; it is then assumed and named, or missing.
+function withoutNonNumbers(given: RegimeInput): RegimeInput {
+  const known = (value: number | null | undefined) =>
+    value !== null && value !== undefined && Number.isFinite(value) ? value : null
+  const positive = (value: number | null) => (value !== null && Number.isFinite(value) && value > 0 ? value : null)
+  const share = (value: number | null) => (value !== null && value > 0 && value < 1 ? value : null)
+  const { loading } = given
+  return {
+    ...given,
+    orderInKeyReactant: known(given.orderInKeyReactant),
+    activationEnergyJPerMol: known(given.activationEnergyJPerMol),
+    reactionEnthalpyJPerMol: known(given.reactionEnthalpyJPerMol),
+    measuredBedSpanK: known(given.measuredBedSpanK),
+    loading: {
+      ...loading,
+      diluentMassKg: known(loading.diluentMassKg) ?? 0,
+      particleDiameterM: positive(loading.particleDiameterM),
+      tubeInnerDiameterM: positive(loading.tubeInnerDiameterM),
+      bedLengthM: positive(loading.bedLengthM),
+      particleDensityKgPerM3: positive(loading.particleDensityKgPerM3),
+      poreFraction: share(loading.poreFraction),
+      tortuosity: positive(loading.tortuosity),
+      meanPoreRadiusM: positive(loading.meanPoreRadiusM),
+      bedVoidFraction: share(loading.bedVoidFraction),
+    },
+  }
 }
 
 // Observed rate per particle volume and what its uncertainty is made of; null without a rate.
@@ -367,13 +396,15 @@ function spanDraft(input: RegimeInput): Draft {
 
 // Value against limit on a logarithmic scale, with the uncertainty of the value.
 function judge(draft: Draft): RegimeCriterion {
-  const { value, limit, relative, ...rest } = draft
+  const { limit, relative, ...rest } = draft
+  // impossible inputs, such as a composition beyond the feed, leave no value rather than a wrong one
+  const value = draft.value !== null && Number.isFinite(draft.value) && draft.value >= 0 ? draft.value : null
   const log10StandardUncertainty =
     value === null ? null : Math.sqrt(relative.reduce((sum, u) => sum + u * u, 0)) / ln(10)
   const assumed = draft.assumed.filter(
     (entry, index, all) => all.findIndex(({ name }) => name === entry.name) === index,
   )
-  const missing = [...new Set(draft.missing)]
+  const missing = value === null && draft.missing.length === 0 ? ['possible input'] : [...new Set(draft.missing)]
   const margin = value === null || limit === null ? null : marginOf(value, limit, draft.mustBe)
   const verdict = value === 0 && draft.mustBe === 'below' ? 'pass' : verdictOf(margin, log10StandardUncertainty)
   return {
@@ -385,7 +416,7 @@ function judge(draft: Draft): RegimeCriterion {
     margin,
     log10StandardUncertainty,
     verdict,
-    sentence: sentenceOf(draft, verdict, assumed, missing),
+    sentence: sentenceOf({ ...draft, value }, verdict, assumed, missing),
   }
 }
 
@@ -424,7 +455,7 @@ function sentenceOf(
 }
 
 function effectivenessOf(pore: Draft): RegimeReport['effectiveness'] {
-  if (pore.value === null) return null
+  if (pore.value === null || !Number.isFinite(pore.value) || pore.value < 0) return null
   const factor = 1 + Math.sqrt(pore.relative.reduce((sum, u) => sum + u * u, 0))
   return {
     value: effectivenessFromObserved(pore.value).effectiveness,

@@ -73,7 +73,7 @@ const CONDUCTIVITY_RELATIVE_STANDARD_UNCERTAINTY = 0.15
  *
  * @param input - the point [SI]
  * @returns properties [SI]
- * @throws {AnalysisError} not-positive when temperature, pressure or flow is not above zero | unknown-species when a species is no formula
+ * @throws {AnalysisError} not-positive when temperature, pressure or flow is not above zero | not-finite | unknown-species when a species is no formula
  */
 export function regimeState(input: RegimeInput): RegimeState {
   for (const [name, value] of [
@@ -81,8 +81,13 @@ export function regimeState(input: RegimeInput): RegimeState {
     ['pressure', input.pressurePa],
     ['flow', input.totalFlowMolPerS],
   ] as const)
-    if (!(value > 0))
-      throw new AnalysisError('not-positive', `The ${name} of the point must be above zero.`, { name, value })
+    if (!(value > 0) || !Number.isFinite(value))
+      throw new AnalysisError('not-positive', `The ${name} of the point must be a number above zero.`, { name, value })
+  const others = [input.conversion, input.loading.catalystMassKg, ...Object.values(input.inletMoleFraction)]
+  if (others.some((value) => !Number.isFinite(value) || value < -1))
+    throw new AnalysisError('not-finite', 'Conversion, catalyst mass and composition of the point must be numbers.', {
+      others,
+    })
   const moleFraction = meanComposition(input)
   const concentration = input.pressurePa / (GAS_CONSTANT_J_PER_MOL_K * input.temperatureK)
   const { loading } = input
@@ -294,7 +299,7 @@ function gasProperties(
   })
   const total = gases.reduce((sum, gas) => sum + gas.moleFraction, 0)
   // a mixture in which more than a twentieth has no known properties is not estimated
-  if (!(total > 0.95)) return null
+  if (!(total > 0.95 && total < 1.05)) return null
   return {
     massKgPerMol: gases.reduce((sum, gas) => sum + gas.moleFraction * gas.molarMassKgPerMol, 0) / total,
     viscosityPaS: mixtureViscosity(gases),

@@ -26,7 +26,7 @@ export function wilkeLeeDiffusivity(
   b: LennardJones & { readonly molarMassKgPerMol: number },
 ): number {
   for (const value of [temperatureK, pressurePa, a.molarMassKgPerMol, b.molarMassKgPerMol])
-    if (!(value > 0))
+    if (!(value > 0) || !Number.isFinite(value))
       throw new AnalysisError('not-positive', 'Temperature, pressure and molar masses must be above zero.', { value })
   const root = Math.sqrt(2_000 / (1 / a.molarMassKgPerMol + 1 / b.molarMassKgPerMol))
   const diameter = (a.diameterAngstrom + b.diameterAngstrom) / 2
