@@ -36,7 +36,7 @@ export function ChartFrame(props: ChartFrameProps) {
   return (
     <figure className="m-0 min-w-0">
       {props.caption ? <div className="text-[12px] text-ink-2">{props.caption}</div> : null}
-      <div className={`relative ${props.heightClass}`}>
+      <div className={`relative overflow-hidden ${props.heightClass}`}>
         <div role="img" aria-label={props.label} aria-describedby={summaryId} className="absolute inset-0">
           <ChartCanvas
             option={props.option}
