@@ -40,7 +40,9 @@ export function RunsTable({
           head: 'Sample',
           cell: (run) => (
             <>
-              <Link href={`/samples/${run.sampleId}`}>{run.sampleCode}</Link>{' '}
+              <Link href={`/samples/${run.sampleId}`} className="underline underline-offset-2">
+                {run.sampleCode}
+              </Link>{' '}
               <span className="text-ink-2">{run.kind === 'catalyst' ? run.sampleName : run.kind}</span>
             </>
           ),
