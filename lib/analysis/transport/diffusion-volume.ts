@@ -1,3 +1,4 @@
+import { AnalysisError } from '../analysis-error'
 import { elementCount } from '../element-count'
 
 /** Diffusion volumes of simple molecules [cm3 mol-1]. Source: Poling, Prausnitz and O'Connell, The Properties of Gases and Liquids, 5th edition, table 11-1. */
@@ -45,18 +46,28 @@ const RING = -18.3
  *
  * @param species - formula, or `air` [-]
  * @param rings - aromatic or heterocyclic rings in the molecule [-]
- * @returns diffusion volume [cm3 mol-1]; null where an element has no increment
- * @throws {AnalysisError} unknown-species when the text is not a formula
+ * @returns diffusion volume [cm3 mol-1]; null where an element has no increment, or the text is no formula
  * @example CH4 is 25.14
  */
 export function diffusionVolume(species: string, rings = 0): number | null {
   const tabulated = Object.hasOwn(MOLECULES, species) ? MOLECULES[species] : undefined
   if (tabulated !== undefined) return tabulated
+  const atoms = atomsOf(species)
+  if (atoms === null) return null
   let sum = rings * RING
-  for (const [element, count] of Object.entries(elementCount(species))) {
+  for (const [element, count] of Object.entries(atoms)) {
     const increment = Object.hasOwn(ATOMS, element) ? ATOMS[element] : undefined
     if (increment === undefined) return null
     sum += count * increment
   }
   return sum
+}
+
+function atomsOf(species: string): Readonly<Record<string, number>> | null {
+  try {
+    return elementCount(species)
+  } catch (error) {
+    if (error instanceof AnalysisError) return null
+    throw error
+  }
 }

@@ -37,7 +37,8 @@ export interface RegimeReport {
   readonly criteria: readonly RegimeCriterion[]
   /** effectiveness factor of a first-order sphere that fits the observed rate, with the range that one standard uncertainty of the modulus spans; null when it cannot be said */
   readonly effectiveness: { readonly value: number; readonly low: number; readonly high: number } | null
-  readonly state: RegimeState
+  /** null when temperature, pressure, flow, mass, conversion or composition of the point are no usable numbers */
+  readonly state: RegimeState | null
 }
 
 /** What a criterion is made of, before it is judged. */
@@ -60,15 +61,16 @@ interface Draft {
  * Whether transport falsifies the rate at one point: every usual criterion with value, limit, margin, assumed inputs and verdict.
  *
  * Verdict: pass or fail when the decimal logarithm of value over limit is larger than its standard uncertainty, cannot tell otherwise or when
- * an input is missing. Inputs not entered are assumed from {@link REGIME_DEFAULTS} and named in the criterion.
+ * an input is missing or impossible; it never throws, so that one odd point does not keep a run from being reduced. Inputs not entered are assumed from {@link REGIME_DEFAULTS} and named in the criterion.
  * Source: Mears, Ind. Eng. Chem. Process Des. Dev. 10 (1971) 541; Weisz and Prater, Adv. Catal. 6 (1954) 143; see the single criteria.
  *
  * @param given - temperature [K], pressure [Pa], flow [mol s-1], composition [-], observed rate [mol kg-1 s-1], orders [-], energies [J mol-1] and loading [SI] of the point
  * @returns criteria in a fixed order [-], and the effectiveness factor [-] of a first-order sphere
- * @throws {AnalysisError} not-positive when temperature, pressure or flow is not above zero | not-finite | unknown-species when a species is no formula
  */
 export function regimeOfPoint(given: RegimeInput): RegimeReport {
-  const input = withoutNonNumbers(given)
+  const missing = missingOfPoint(given)
+  // nothing is computed from an impossible point: stand-ins only keep the list of criteria, each without a value
+  const input = withoutNonNumbers(missing.length === 0 ? given : { ...given, ...STAND_INS })
   const state = regimeState(input)
   const pore = poreDraft(input, state)
   const drafts = [
@@ -81,7 +83,36 @@ export function regimeOfPoint(given: RegimeInput): RegimeReport {
     dilutionDraft(input, state),
     spanDraft(input),
   ]
+  if (missing.length > 0)
+    return {
+      criteria: drafts.map((draft) => judge({ ...draft, value: null, missing: [...missing, ...draft.missing] })),
+      effectiveness: null,
+      state: null,
+    }
   return { criteria: drafts.map(judge), effectiveness: effectivenessOf(pore), state }
+}
+
+const STAND_INS = {
+  temperatureK: 300,
+  pressurePa: 100_000,
+  totalFlowMolPerS: 1e-6,
+  conversion: 0,
+  inletMoleFraction: {},
+} as const
+
+function missingOfPoint(given: RegimeInput): string[] {
+  const isPositive = (value: number) => Number.isFinite(value) && value > 0
+  const fractions = Object.values(given.inletMoleFraction)
+  return [
+    ...(isPositive(given.temperatureK) ? [] : ['temperature']),
+    ...(isPositive(given.pressurePa) ? [] : ['pressure']),
+    ...(isPositive(given.totalFlowMolPerS) ? [] : ['flow']),
+    ...(isPositive(given.loading.catalystMassKg) ? [] : ['catalyst mass']),
+    ...(Number.isFinite(given.conversion) && given.conversion > -1 && given.conversion <= 1
+      ? []
+      : ['possible conversion']),
+    ...(fractions.every((value) => Number.isFinite(value) && value >= 0) ? [] : ['composition of the feed']),
+  ]
 }
 
 // A length or property that is no number above zero counts as not entered; it is then assumed and named, or missing.

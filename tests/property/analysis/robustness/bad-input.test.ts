@@ -267,7 +267,7 @@ describe('bad input gives a typed error or an explicit null, never NaN', () => {
             bedVoidFraction: v.e,
           },
         })
-        return [report, state.keyConcentrationMolPerM3 === 0]
+        return [report, state?.keyConcentrationMolPerM3 === 0]
       },
       1_000,
     )

@@ -1,5 +1,4 @@
 import { describe, expect, it } from 'vitest'
-import { AnalysisError } from '@/lib/analysis/analysis-error'
 import { type RegimeInput } from '@/lib/analysis/transport/regime-input'
 import { regimeOfPoint } from '@/lib/analysis/transport/regime-of-point'
 
@@ -121,7 +120,7 @@ describe('regime of a point', () => {
 
   it('keeps gases it does not know out of what they do not touch', () => {
     const odd: RegimeInput = { ...sieved, inletMoleFraction: { CO2: 0.12, H2: 0.6, SiH4: 0.28 } }
-    expect(regimeOfPoint(odd).state.unknownSpecies).toEqual(['SiH4'])
+    expect(regimeOfPoint(odd).state?.unknownSpecies).toEqual(['SiH4'])
     expect(find(odd, 'film-mass')?.verdict).toBe('cannot-tell')
     expect(find(odd, 'pore-diffusion')?.value).not.toBeNull()
   })
@@ -133,8 +132,25 @@ describe('regime of a point', () => {
     expect([undiluted?.value, undiluted?.margin, undiluted?.verdict]).toEqual([0, null, 'pass'])
   })
 
-  it('refuses an impossible point', () => {
-    expect(() => regimeOfPoint({ ...sieved, temperatureK: 0 })).toThrow(AnalysisError)
-    expect(() => regimeOfPoint({ ...sieved, totalFlowMolPerS: NaN })).toThrow(AnalysisError)
+  it('has no value for an impossible point, and says why', () => {
+    for (const change of [{ temperatureK: 0 }, { totalFlowMolPerS: NaN }, { pressurePa: NaN }, { conversion: 2 }]) {
+      const report = regimeOfPoint({ ...sieved, ...change })
+      expect(report.criteria.every(({ verdict, value }) => verdict === 'cannot-tell' && value === null)).toBe(true)
+      expect(report.state).toBeNull()
+    }
+    expect(find({ ...sieved, pressurePa: NaN }, 'wall-flow')?.sentence).toBe(
+      'Flow along the wall: cannot tell without pressure.',
+    )
+  })
+
+  it('does without species that are no formula', () => {
+    const report = regimeOfPoint({
+      ...sieved,
+      keyReactant: 'toluene',
+      inletMoleFraction: { toluene: 0.1, H2: 0.9 },
+      stoichiometry: { toluene: -1, H2: -1, coke: 1 },
+    })
+    expect(report.state?.unknownSpecies).toContain('toluene')
+    expect(report.criteria[0]?.verdict).toBe('cannot-tell')
   })
 })
