@@ -1,4 +1,5 @@
 import { showOrNotFound } from '@/app/_show-or-not-found'
+import { CalibrationDrop } from '@/components/forms/calibration-drop'
 import { CalibrationForm } from '@/components/forms/calibration-form'
 import { DataTable } from '@/components/ui/data-table'
 import { Fold } from '@/components/ui/fold'
@@ -74,6 +75,13 @@ export default async function CalibrationsPage() {
             },
           ]}
         />
+        {can.makeCalibration(actor) ? (
+          <Section title="Response factors">
+            <div className="max-w-[46rem]">
+              <CalibrationDrop rigs={rigs.map(({ id, code }) => ({ value: id, label: code }))} />
+            </div>
+          </Section>
+        ) : null}
         {can.makeCalibration(actor) ? (
           <Section title="Add another kind" note="Flow controller, balance, thermocouple, gauge, cylinder">
             <div className="max-w-[46rem]">
