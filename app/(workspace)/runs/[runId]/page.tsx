@@ -106,8 +106,10 @@ export default async function RunPage({ params }: RunPageProps) {
         of={`on ${run.sampleCode}, ${run.sampleName}`}
         meta={
           <>
-            <Link href={routeOf(`/campaigns/${run.campaignId}`)}>{run.campaignCode}</Link> ·{' '}
-            {runConditions(run, rig.timeZone)}
+            <Link href={routeOf(`/campaigns/${run.campaignId}`)} className="underline underline-offset-2">
+              {run.campaignCode}
+            </Link>{' '}
+            · {runConditions(run, rig.timeZone)}
           </>
         }
         actions={
