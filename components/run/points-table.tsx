@@ -140,10 +140,11 @@ export function notesOfHolds(points: readonly Point[]): { tag: string; sentence:
   const notes = new Map<string, { tag: string; sentence: string; holds: number[] }>()
   for (const point of points) {
     for (const caution of point.cautions.filter((entry) => !isDoubt(entry))) {
-      // numbers differ from hold to hold, so notes are told apart by what they are about
-      const note = notes.get(caution.code) ?? { tag: caution.tag, sentence: caution.sentence, holds: [] }
-      note.holds.push(point.hold.number)
-      notes.set(caution.code, note)
+      // numbers differ from hold to hold, so notes are told apart by their words; the digit of a formula (CH4) belongs to the word
+      const key = `${caution.code} ${caution.tag.replace(/(?<![A-Za-z])[−-]?\d+(\.\d+)?/g, '#')}`
+      const note = notes.get(key) ?? { tag: caution.tag, sentence: caution.sentence, holds: [] }
+      if (!note.holds.includes(point.hold.number)) note.holds.push(point.hold.number)
+      notes.set(key, note)
     }
   }
   return [...notes.values()]

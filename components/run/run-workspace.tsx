@@ -46,7 +46,9 @@ const isSameInstant = (a: number, b: number) => Math.abs(a - b) < 0.5
 
 /** First shown: the rate in the middle of the run, where conversion is neither tiny nor large. */
 function firstPicked(points: readonly Point[]): PickedNumber | null {
-  const withWorking = points.filter((point) => workingOfPoint(point, 'rateMolPerKgS') !== null)
+  const withWorking = points.filter(
+    (point) => point.rateMolPerKgS !== null && workingOfPoint(point, 'rateMolPerKgS') !== null,
+  )
   const middle = withWorking[Math.floor((withWorking.length - 1) / 2)]
   return middle ? { holdNumber: middle.hold.number, key: 'rateMolPerKgS' } : null
 }
