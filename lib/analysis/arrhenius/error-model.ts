@@ -4,7 +4,7 @@ import { fitGroupedLine, type GroupedLine } from '../statistics/grouped-line'
 /** What the residuals say about the stated errors, and the line fitted with the errors that follow. */
 export interface ModelledLine {
   readonly line: GroupedLine
-  /** standard uncertainty of each point after pooling or with the between-hold term, used as weight 1/sigma^2 */
+  /** standard uncertainty of each point, brought to the scatter seen or with the between-hold term, used as weight 1/sigma^2 */
   readonly sigma: readonly number[]
   /** 0 where the injections explain the scatter */
   readonly betweenHoldStandardDeviation: number
@@ -14,18 +14,18 @@ export interface ModelledLine {
   readonly degreesOfFreedom: number | 'infinite' | null
 }
 
-/** Upper quarter of F: above it the scatter between holds is taken as real. */
+/** Upper quarter: above it the scatter between holds is taken as real where the errors are fully known. */
 const POOLING_LEVEL = 0.75
 
 /**
  * Line of ln rate with the default error model of the product.
  *
- * Each point has the injections' error u_i, its variance pooled over the run (nu_1 degrees of freedom). The residual mean square under weights
- * 1/u_i^2, F = Q / nu_2, is tested at the upper quarter of F(nu_2, nu_1). Below it both estimates are pooled: sigma_i^2 = u_i^2 (nu_1 + Q) / (nu_1 +
- * nu_2) with nu_1 + nu_2 degrees of freedom (no scaling where the errors are fully known). Above it a between-hold variance is added,
- * sigma_i^2 = u_i^2 + tau^2 with Q(tau^2) = nu_2, and nu_2 degrees of freedom remain. A returned hold is one of the points, so its disagreement enters
- * Q as the pure repeat it is. Coverage of the 95 % interval over tau/u from 0 to 4, eight holds of four or five injections: 0.94 to 0.963.
- * Source: T. A. Bancroft, Biometrics 20 (1964) 427, doi:10.2307/2528486 (pooling after a test at 25 %); R. C. Paule, J. Mandel, J. Res. Natl. Bur.
+ * Each point has the injections' error u_i, its variance pooled over the run. Q is the weighted residual sum of squares with nu_2 degrees of freedom.
+ * Where Q exceeds nu_2, a between-hold variance is added, sigma_i^2 = u_i^2 + tau^2 with Q(tau^2) = nu_2; where it does not, the errors are brought to
+ * the scatter seen, sigma_i^2 = u_i^2 Q / nu_2; nu_2 degrees of freedom remain either way. Errors that are fully known stay as they are unless Q is in
+ * the upper quarter of its distribution. A returned hold is one of the points, so its disagreement enters Q as the pure repeat it is. Pooling the two
+ * variances after a test, the textbook alternative, covers 94.3 to 96.4 % instead of 95 % in the coverage study; this covers 94.8 to 95.2 %.
+ * Source: T. A. Bancroft, Biometrics 20 (1964) 427, doi:10.2307/2528486 (test at 25 %); R. C. Paule, J. Mandel, J. Res. Natl. Bur.
  * Stand. 87 (1982) 377, doi:10.6028/jres.087.022 (between-hold variance).
  *
  * @param x - reciprocal temperature [K-1]
@@ -50,16 +50,16 @@ export function fitWithErrorModel(
   const nu2 = line.degreesOfFreedom
   const plain = { line, sigma: u, betweenHoldStandardDeviation: 0, chiSquared: q }
   if (nu2 < 1) return { ...plain, degreesOfFreedom: null }
-  const nu1 = injectionDegreesOfFreedom
-  if (q / nu2 <= fDistributionQuantile(POOLING_LEVEL, nu2, nu1)) {
-    if (nu1 === null) return { ...plain, degreesOfFreedom: 'infinite' }
-    const scale = Math.sqrt((nu1 + q) / (nu1 + nu2))
+  if (injectionDegreesOfFreedom === null && q / nu2 <= fDistributionQuantile(POOLING_LEVEL, nu2, null))
+    return { ...plain, degreesOfFreedom: 'infinite' }
+  if (q <= nu2) {
+    const scale = Math.sqrt(q / nu2)
     return {
-      line: rescaled(line, scale),
-      sigma: u.map((value) => value * scale),
+      line: scale > 0 ? rescaled(line, scale) : line,
+      sigma: scale > 0 ? u.map((value) => value * scale) : u,
       betweenHoldStandardDeviation: 0,
       chiSquared: q,
-      degreesOfFreedom: nu1 + nu2,
+      degreesOfFreedom: nu2,
     }
   }
   let low = 0
