@@ -10,7 +10,7 @@ const word = z
   .string()
   .min(1)
   .max(100)
-  // eslint-disable-next-line no-control-regex -- the database cannot store a zero character, so nothing can be found by one
+   
   .regex(/^[^\u0000]+$/)
 
 /** Lists without a filter. */

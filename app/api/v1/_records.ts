@@ -25,7 +25,14 @@ import {
   type RunRemark,
   type RunSummary,
 } from '@/lib/domain/run'
-import { newLotSchema, newSampleSchema, newSiteCountSchema, type Lot, type Sample, type SiteCount } from '@/lib/domain/sample'
+import {
+  newLotSchema,
+  newSampleSchema,
+  newSiteCountSchema,
+  type Lot,
+  type Sample,
+  type SiteCount,
+} from '@/lib/domain/sample'
 import { instantSchema } from '@/lib/domain/text'
 
 // What the API answers, one schema a record; the same names stand in openapi.json. Each is held to its domain type by the compiler

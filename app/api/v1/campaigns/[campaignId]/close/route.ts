@@ -1,0 +1,15 @@
+import { closeCampaign } from '@/lib/access/campaigns'
+import { withdrawalSchema } from '@/lib/domain/run'
+import { pathIds } from '../../../_path-id'
+import { answer, handle, readJson, versionFromIfMatch } from '../../../_respond'
+
+/** Ends the work in a campaign. */
+export async function POST(request: Request, context: { params: Promise<{ campaignId: string }> }): Promise<Response> {
+  return handle(request, async (actor) => {
+    const { campaignId } = await pathIds(context)
+    const version = versionFromIfMatch(request, campaignId)
+    const { reason } = await readJson(request, withdrawalSchema)
+    const campaign = await closeCampaign(actor, campaignId, reason, version)
+    return answer(campaign, { record: campaign })
+  })
+}
