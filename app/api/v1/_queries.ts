@@ -10,7 +10,7 @@ const word = z
   .string()
   .min(1)
   .max(100)
-   
+
   .regex(/^[^\u0000]+$/)
 
 /** Lists without a filter. */

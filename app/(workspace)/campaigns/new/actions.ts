@@ -11,6 +11,7 @@ import { FormReader } from '@/lib/domain/form-reader'
 
 export async function createCampaignAction(_previous: FormState, data: FormData): Promise<FormState> {
   const answer = await answerAction(async () => {
+    const founder = await requireActor()
     const form = new FormReader(data)
     const input = {
       code: form.required('code', 'Give a short code, for example CQ-METH-1.'),
@@ -20,7 +21,7 @@ export async function createCampaignAction(_previous: FormState, data: FormData)
       description: form.text('description'),
     }
     form.finish()
-    const campaign = await createCampaign(await requireActor(), newCampaignSchema.parse(input))
+    const campaign = await createCampaign(founder, newCampaignSchema.parse(input))
     // the new membership is read afresh
     const actor = await requireActor()
     for (const sampleId of form.texts('sampleIds')) await addSampleToCampaign(actor, campaign.id, sampleId)

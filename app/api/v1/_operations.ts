@@ -1,0 +1,344 @@
+import { z } from 'zod'
+import { newCalibrationSchema, calibrationChangeSchema } from '@/lib/domain/calibration'
+import {
+  campaignChangeSchema,
+  campaignSampleChangeSchema,
+  newCampaignSchema,
+  newMemberSchema,
+} from '@/lib/domain/campaign'
+import { columnMapSpecificationSchema, newColumnMapSchema } from '@/lib/domain/column-map'
+import { newMethodSchema } from '@/lib/domain/method'
+import { newPersonSchema, personChangeSchema, tokenRequestSchema } from '@/lib/domain/person'
+import { newReactionSchema, reactionChangeSchema } from '@/lib/domain/reaction'
+import { newRigSchema, rigChangeSchema } from '@/lib/domain/rig'
+import { campaignRoleSchema, type TokenScope } from '@/lib/domain/role'
+import {
+  decisionSchema,
+  exclusionSchema,
+  holdEditSchema,
+  loadingChangeSchema,
+  newRunSchema,
+  remarkSchema,
+  runChangeSchema,
+  withdrawalSchema,
+} from '@/lib/domain/run'
+import { newLotSchema, newSampleSchema, newSiteCountSchema, sampleChangeSchema } from '@/lib/domain/sample'
+import { idSchema, reasonSchema } from '@/lib/domain/text'
+import {
+  calibrationListQuery,
+  campaignListQuery,
+  columnMapListQuery,
+  lastRunQuery,
+  loadingListQuery,
+  plainListQuery,
+  runListQuery,
+} from './_queries'
+import { rankingRequestSchema } from './_ranking-request'
+import {
+  calibrationRecord,
+  campaignRecord,
+  campaignSampleRecord,
+  columnMapRecord,
+  decisionRecord,
+  exclusionRecord,
+  historyRecord,
+  holdEditRecord,
+  listed,
+  loadingRecord,
+  lotRecord,
+  memberRecord,
+  methodRecord,
+  reactionRecord,
+  remarkRecord,
+  rigRecord,
+  runRecord,
+  runSummaryRecord,
+  sampleRecord,
+  siteCountRecord,
+} from './_records'
+
+export interface Operation {
+  readonly method: 'get' | 'post' | 'patch' | 'put' | 'delete'
+  /** with `{name}` for the parts that are ids */
+  readonly path: string
+  readonly summary: string
+  /** what a token must be allowed; null for what needs no sign-in */
+  readonly scope: TokenScope | null
+  readonly query?: z.ZodType
+  readonly body?: z.ZodType
+  /** other than JSON: what the body is */
+  readonly bodyType?: 'multipart/form-data'
+  readonly answer?: z.ZodType
+  readonly answerType?: string
+  readonly status?: number
+  /** the edit names the version it was made from in If-Match */
+  readonly isVersioned?: boolean
+}
+
+const items = <T extends z.ZodType>(row: T) => z.strictObject({ items: z.array(row) })
+type More = Partial<Omit<Operation, 'method' | 'path' | 'summary' | 'scope'>>
+const get = (path: string, summary: string, more: More = {}): Operation => ({
+  method: 'get',
+  path,
+  summary,
+  scope: 'read',
+  ...more,
+})
+const post = (path: string, summary: string, more: More & { readonly scope?: TokenScope | null } = {}): Operation => ({
+  method: 'post',
+  path,
+  summary,
+  scope: 'write',
+  status: 201,
+  ...more,
+})
+const patch = (path: string, summary: string, more: More = {}): Operation => ({
+  method: 'patch',
+  path,
+  summary,
+  scope: 'write',
+  isVersioned: true,
+  ...more,
+})
+
+/** A list with its creation, and one of it with its edit: the shape most records share. */
+function records(
+  path: string,
+  id: string,
+  name: string,
+  schemas: {
+    readonly query: z.ZodType
+    readonly row: z.ZodType
+    readonly one: z.ZodType
+    readonly create: z.ZodType
+    readonly edit: z.ZodType
+  },
+  scope: TokenScope = 'write',
+): Operation[] {
+  return [
+    get(`/${path}`, `List ${name}s`, { query: schemas.query, answer: listed(schemas.row) }),
+    post(`/${path}`, `Make a ${name}`, { body: schemas.create, answer: schemas.one, scope }),
+    get(`/${path}/{${id}}`, `Read a ${name}`, { answer: schemas.one }),
+    patch(`/${path}/{${id}}`, `Change a ${name}`, { body: schemas.edit, answer: schemas.one }),
+  ]
+}
+
+/** Every operation of the API. A test holds this list against the handlers on disk, both ways. */
+export const operations: readonly Operation[] = [
+  get('/openapi.json', 'This description', { scope: null } as More),
+  get('/me', 'Who the caller is, with their parts in campaigns'),
+  get('/tokens', 'List tokens, without their secrets'),
+  post('/tokens', 'A token for e-mail address and password; its secret is in this answer only', {
+    body: tokenRequestSchema,
+    scope: null,
+  }),
+  { method: 'delete', path: '/tokens/{tokenId}', summary: 'Revoke a token', scope: 'write', status: 204 },
+  get('/people', 'List people, for admins'),
+  post('/people', 'Make a person and the invitation that lets them choose a password', { body: newPersonSchema }),
+  get('/people/{userId}', 'Read a person, for admins'),
+  patch('/people/{userId}', 'Change role, or close and open the account', {
+    body: personChangeSchema.omit({ version: true }),
+  }),
+  post('/people/{userId}/invitations', 'A new invitation; older ones are worthless from then on'),
+  {
+    method: 'delete',
+    path: '/people/{userId}/sessions',
+    summary: 'End all sessions of a person',
+    scope: 'write',
+    status: 204,
+  },
+  get('/drafts/{form}', 'What was typed into a form and not sent yet'),
+  { method: 'put', path: '/drafts/{form}', summary: 'Keep what is typed', scope: 'write' },
+  { method: 'delete', path: '/drafts/{form}', summary: 'Forget what was typed', scope: 'write', status: 204 },
+  get('/preferences/{key}', 'A preference of the caller, such as the columns of a grid'),
+  { method: 'put', path: '/preferences/{key}', summary: 'Keep a preference', scope: 'write' },
+
+  ...records('reactions', 'reactionId', 'reaction', {
+    query: plainListQuery,
+    row: reactionRecord,
+    one: reactionRecord,
+    create: newReactionSchema,
+    edit: reactionChangeSchema,
+  }),
+  ...records('rigs', 'rigId', 'rig', {
+    query: plainListQuery,
+    row: rigRecord,
+    one: rigRecord,
+    create: newRigSchema,
+    edit: rigChangeSchema,
+  }),
+  get('/rigs/{rigId}/last-run', 'The run that started last on the rig', {
+    query: lastRunQuery,
+    answer: z.strictObject({ run: runRecord.nullable() }),
+  }),
+  ...records('calibrations', 'calibrationId', 'calibration', {
+    query: calibrationListQuery,
+    row: calibrationRecord,
+    one: calibrationRecord,
+    create: newCalibrationSchema,
+    edit: calibrationChangeSchema,
+  }),
+  post('/calibrations/files', 'Calibrations from dropped tables of response factors', {
+    bodyType: 'multipart/form-data',
+    answer: items(calibrationRecord),
+  }),
+  get('/column-maps', 'List column maps', { query: columnMapListQuery, answer: listed(columnMapRecord) }),
+  post('/column-maps', 'Keep the next version of a column map', { body: newColumnMapSchema, answer: columnMapRecord }),
+  get('/column-maps/{columnMapId}', 'Read a column map', { answer: columnMapRecord }),
+
+  ...records(
+    'samples',
+    'sampleId',
+    'sample',
+    { query: plainListQuery, row: sampleRecord, one: sampleRecord, create: newSampleSchema, edit: sampleChangeSchema },
+    'intake',
+  ),
+  get('/samples/{sampleId}/lots', 'Lots of a sample', { answer: items(lotRecord) }),
+  post('/samples/{sampleId}/lots', 'Add a lot', { body: newLotSchema, answer: lotRecord, scope: 'intake' }),
+  get('/samples/{sampleId}/site-counts', 'Site counts of a sample', { answer: items(siteCountRecord) }),
+  post('/samples/{sampleId}/site-counts', 'Add a site count; results that rest on it follow', {
+    body: newSiteCountSchema,
+    answer: siteCountRecord,
+  }),
+  get('/loadings', 'List packed beds', { query: loadingListQuery, answer: listed(loadingRecord) }),
+  get('/loadings/{loadingId}', 'Read a packed bed', { answer: loadingRecord }),
+  patch('/loadings/{loadingId}', 'Change what was written of a packed bed', {
+    body: loadingChangeSchema,
+    answer: loadingRecord,
+  }),
+
+  ...records('campaigns', 'campaignId', 'campaign', {
+    query: campaignListQuery,
+    row: campaignRecord,
+    one: campaignRecord,
+    create: newCampaignSchema,
+    edit: campaignChangeSchema,
+  }),
+  post('/campaigns/{campaignId}/close', 'End the work in a campaign', {
+    body: withdrawalSchema,
+    answer: campaignRecord,
+    status: 200,
+    isVersioned: true,
+  }),
+  post('/campaigns/{campaignId}/reopen', 'Open a closed campaign again', {
+    body: withdrawalSchema,
+    answer: campaignRecord,
+    status: 200,
+    isVersioned: true,
+  }),
+  get('/campaigns/{campaignId}/members', 'People of a campaign', { answer: items(memberRecord) }),
+  post('/campaigns/{campaignId}/members', 'Give somebody a part in the campaign', {
+    body: newMemberSchema,
+    answer: memberRecord,
+  }),
+  {
+    ...patch('/campaigns/{campaignId}/members/{userId}', 'Give somebody another role', {
+      body: z.strictObject({ role: campaignRoleSchema }),
+      answer: memberRecord,
+    }),
+    isVersioned: false,
+  },
+  {
+    method: 'delete',
+    path: '/campaigns/{campaignId}/members/{userId}',
+    summary: 'End somebody’s part',
+    scope: 'write',
+    status: 204,
+  },
+  get('/campaigns/{campaignId}/methods', 'Versions of the method, newest first', { answer: items(methodRecord) }),
+  post('/campaigns/{campaignId}/methods', 'Save the next version of the method', {
+    body: newMethodSchema,
+    answer: methodRecord,
+  }),
+  get('/campaigns/{campaignId}/samples', 'Samples of a campaign', {
+    query: plainListQuery,
+    answer: listed(campaignSampleRecord),
+  }),
+  post('/campaigns/{campaignId}/samples', 'Put a sample into a campaign', {
+    body: z.strictObject({ sampleId: idSchema }),
+    answer: campaignSampleRecord,
+    scope: 'intake',
+  }),
+  get('/campaigns/{campaignId}/samples/{sampleId}', 'A sample as the campaign holds it', {
+    answer: campaignSampleRecord,
+  }),
+  patch('/campaigns/{campaignId}/samples/{sampleId}', 'Write remark, shortlist or priority', {
+    body: campaignSampleChangeSchema.omit({ version: true }),
+    answer: campaignSampleRecord,
+  }),
+  get('/campaigns/{campaignId}/history', 'Who changed what', { query: plainListQuery, answer: listed(historyRecord) }),
+  get('/campaigns/{campaignId}/ranking', 'The live ranking', { query: rankingRequestSchema }),
+  get('/campaigns/{campaignId}/ranking.csv', 'The ranking as text', {
+    query: rankingRequestSchema,
+    answerType: 'text/csv',
+  }),
+  get('/campaigns/{campaignId}/ranking.xlsx', 'The ranking as a workbook', {
+    query: rankingRequestSchema,
+    answerType: 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet',
+  }),
+
+  ...records(
+    'runs',
+    'runId',
+    'run',
+    { query: runListQuery, row: runSummaryRecord, one: runRecord, create: newRunSchema, edit: runChangeSchema },
+    'intake',
+  ),
+  post('/runs/{runId}/hand-in', 'Hand the run in', {
+    answer: runRecord,
+    status: 200,
+    isVersioned: true,
+    scope: 'intake',
+  }),
+  get('/runs/{runId}/decision', 'Decisions on the run', { answer: items(decisionRecord) }),
+  post('/runs/{runId}/decision', 'Decide on the run', {
+    body: decisionSchema,
+    answer: runRecord,
+    status: 200,
+    isVersioned: true,
+  }),
+  get('/runs/{runId}/exclusions', 'Holds and injections left out', { answer: items(exclusionRecord) }),
+  post('/runs/{runId}/exclusions', 'Leave a hold or an injection out, with a reason', {
+    body: exclusionSchema,
+    answer: exclusionRecord,
+  }),
+  post('/runs/{runId}/exclusions/{exclusionId}/withdrawal', 'Put it back', {
+    body: withdrawalSchema,
+    answer: exclusionRecord,
+    status: 200,
+  }),
+  get('/runs/{runId}/hold-edits', 'Windows moved by a person', { answer: items(holdEditRecord) }),
+  post('/runs/{runId}/hold-edits', 'Move the window of a hold, with a reason', {
+    body: holdEditSchema,
+    answer: holdEditRecord,
+  }),
+  post('/runs/{runId}/hold-edits/{holdEditId}/withdrawal', 'Give the window back to the rule', {
+    body: withdrawalSchema,
+    answer: holdEditRecord,
+    status: 200,
+  }),
+  get('/runs/{runId}/remarks', 'Remarks on the run', { answer: items(remarkRecord) }),
+  post('/runs/{runId}/remarks', 'Remark on the run', { body: remarkSchema, answer: remarkRecord }),
+  get('/runs/{runId}/result', 'The run with its files, trace, points and line'),
+  get('/runs/{runId}/points', 'The points of the run and its line'),
+  get('/runs/{runId}/uploads', 'Files of the run'),
+  post('/runs/{runId}/uploads', 'Add files; bytes that are there already are answered with 200', {
+    bodyType: 'multipart/form-data',
+    scope: 'intake',
+  }),
+  get('/uploads/{uploadId}', 'A file with what was detected and what is still open'),
+  patch('/uploads/{uploadId}', 'Answer what is asked, correct what the columns mean', {
+    body: z.strictObject({
+      specification: columnMapSpecificationSchema.optional(),
+      answers: z.record(z.string(), z.string()).optional(),
+    }),
+  }),
+  get('/uploads/{uploadId}/preview', 'What a confirmation would take in'),
+  post('/uploads/{uploadId}/confirm', 'Take the readings in', { status: 200, isVersioned: true, scope: 'intake' }),
+  post('/uploads/{uploadId}/set-aside', 'Put a file aside', {
+    body: z.strictObject({ reason: reasonSchema }),
+    status: 200,
+    isVersioned: true,
+  }),
+  get('/uploads/{uploadId}/content', 'The bytes as they were handed in', { answerType: 'application/octet-stream' }),
+]
