@@ -1,131 +1,123 @@
 'use client'
 
-import { useRef, useState } from 'react'
-import { type Route } from 'next'
+import { useState } from 'react'
+import { QueryProvider } from '@/components/server-state/query-provider'
+import { EmptyState } from '@/components/ui/empty-state'
 import { LinkButton } from '@/components/ui/link-button'
-import { Button } from '@/components/ui/button'
 import { Notice } from '@/components/ui/notice'
-import { Progress } from '@/components/ui/progress'
 import { type Upload } from '@/lib/domain/intake'
 import { DropZone } from './drop-zone'
-import { sendFile, type Transfer } from './send-files'
-import { sizeText } from './size-text'
-import { UploadPanel } from './upload-panel'
+import { SendingList } from './sending-list'
+import { UploadSection } from './upload-section'
+import { useSending } from './use-sending'
 
-/** Files of one run: dropped, looked at, asked about, confirmed. */
+type Added = Upload & { readonly isNew: boolean }
+
+/** Files of one run: added, looked at, answered, taken in. */
 export function IntakeWorkspace({
   runId,
+  runHref,
   initial,
   species,
-  mayChange,
+  canAddFiles,
+  isAnalyserCalibrated,
 }: {
   readonly runId: string
+  readonly runHref: `/runs/${string}`
   readonly initial: readonly Upload[]
+  /** formulas to choose from: of the feed and of the reaction */
   readonly species: readonly string[]
-  readonly mayChange: boolean
+  readonly canAddFiles: boolean
+  /** false: areas will need response factors that nobody gave yet */
+  readonly isAnalyserCalibrated: boolean
 }) {
   const [uploads, setUploads] = useState(initial)
-  const [transfers, setTransfers] = useState<readonly Transfer[]>([])
-  const cancels = useRef(new Map<string, () => void>())
-  const counter = useRef(0)
-
-  const replace = (upload: Upload) =>
+  const [notes, setNotes] = useState<Readonly<Record<string, string>>>({})
+  const keep = (upload: Upload) =>
     setUploads((before) =>
       before.some((one) => one.id === upload.id)
         ? before.map((one) => (one.id === upload.id ? upload : one))
         : [...before, upload],
     )
-  const change = (key: string, to: Partial<Transfer>) =>
-    setTransfers((before) => before.map((one) => (one.key === key ? { ...one, ...to } : one)))
-
-  async function send(file: File): Promise<void> {
-    counter.current += 1
-    const key = `${counter.current}`
-    setTransfers((before) => [
-      ...before,
-      { key, name: file.name, byteCount: file.size, sent: 0, state: 'sending', message: '' },
-    ])
-    const { done, cancel } = sendFile(runId, file, {
-      onProgress: (sent) => change(key, { sent }),
-      onSent: () => change(key, { state: 'reading', sent: file.size }),
-    })
-    cancels.current.set(key, cancel)
-    try {
-      const { upload, isNew } = await done
-      replace(upload)
-      change(key, {
-        state: isNew ? 'done' : 'known',
-        message: isNew ? '' : 'The run has these very bytes already; no second copy was made.',
-      })
-    } catch (error) {
-      const isCancelled = error instanceof DOMException && error.name === 'AbortError'
-      change(key, {
-        state: isCancelled ? 'cancelled' : 'failed',
-        message: isCancelled ? 'Cancelled; nothing of it was kept.' : error instanceof Error ? error.message : '',
-      })
-    } finally {
-      cancels.current.delete(key)
-    }
-  }
-
-  const isTaken = (kind: Upload['kind']) => uploads.some((one) => one.kind === kind && one.state === 'confirmed')
-  return (
+  const { sendings, add, cancel, again } = useSending<{ readonly items: readonly Added[] }>(
+    `/api/v1/runs/${runId}/uploads`,
+    (answer, file) => {
+      for (const { isNew, ...upload } of answer.items) {
+        keep(upload)
+        if (!isNew)
+          setNotes((before) => ({
+            ...before,
+            [upload.id]:
+              file.name === upload.fileName
+                ? 'Already added: the run has these very bytes. Nothing was stored twice.'
+                : `Already added: ${file.name} has the very bytes of this file. Nothing was stored twice.`,
+          }))
+      }
+    },
+  )
+  const isIn = (kind: Upload['kind']) => uploads.some((one) => one.state === 'confirmed' && one.kind === kind)
+  const isWhole = isIn('rig-log') && isIn('analyser')
+  const missing = isIn('rig-log') ? 'the analyser’s results' : isIn('analyser') ? 'the rig log' : null
+  const list = (
     <>
-      {mayChange ? (
-        <DropZone
-          label="Drop the rig log and the analyser file here"
-          hint="Delimited text or .xlsx, as the instruments write them. The bytes are kept as they come."
-          onFiles={(files) => {
-            for (const file of files) void send(file)
-          }}
-        />
-      ) : (
-        <Notice title="Reading only.">
-          The run is no longer open for you; its files can be looked at and downloaded.
+      <SendingList sendings={sendings} onCancel={cancel} onAgain={again} />
+      {isWhole ? (
+        <Notice kind="sound" isLive className="mt-4" title="Rig log and analyser are in.">
+          Holds, points and the line are made of them now.
+          <span className="mt-2 block">
+            <LinkButton href={runHref} kind="main" className="no-underline!">
+              See the points
+            </LinkButton>
+          </span>
         </Notice>
+      ) : missing === null ? null : (
+        <Notice className="mt-4">Still missing for points: {missing}.</Notice>
       )}
-      <div aria-live="polite" className="mt-3 grid gap-2">
-        {transfers
-          .filter((one) => one.state !== 'done')
-          .map((one) =>
-            one.state === 'sending' || one.state === 'reading' ? (
-              <div key={one.key} className="flex flex-wrap items-end gap-3">
-                <div className="min-w-60 flex-1">
-                  <Progress
-                    label={one.state === 'sending' ? `Sending ${one.name}` : `Reading ${one.name}`}
-                    value={one.state === 'sending' ? one.sent : null}
-                    max={one.byteCount}
-                    said={`${sizeText(one.sent)} of ${sizeText(one.byteCount)}`}
-                  />
-                </div>
-                <Button onClick={() => cancels.current.get(one.key)?.()}>Cancel {one.name}</Button>
-              </div>
-            ) : (
-              <Notice key={one.key} kind={one.state === 'failed' ? 'fault' : 'plain'} title={`${one.name}.`}>
-                {one.message}
-              </Notice>
-            ),
-          )}
-      </div>
-      {isTaken('rig-log') && isTaken('analyser') ? (
-        <Notice kind="sound" title="Both files are in." className="mt-3">
-          The points are computed.{' '}
-          <LinkButton href={`/runs/${runId}` as Route} kind="main" className="ml-2">
-            See the points
-          </LinkButton>
+      {isIn('analyser') && !isAnalyserCalibrated ? (
+        <Notice kind="doubt" className="mt-4" title="No response factors hold when this run starts.">
+          Peak areas become amounts only with them.{' '}
+          <a href="/calibrations">Drop the table on the page of calibrations.</a>
         </Notice>
       ) : null}
-      <div className="mt-4">
-        {uploads.length === 0 ? (
-          <p className="text-ink-2">
-            No file yet. A run needs the rig’s log and the analyser’s results; other files can stand beside them.
-          </p>
-        ) : (
-          uploads.map((upload) => (
-            <UploadPanel key={upload.id} upload={upload} species={species} mayChange={mayChange} onChange={replace} />
-          ))
-        )}
-      </div>
+      {uploads.length === 0 && sendings.length === 0 ? (
+        <div className="mt-6">
+          <EmptyState title="No files yet">
+            A run needs two: the log of the rig (temperatures, pressures, flows against time) and the results of the
+            analyser (peaks or composition, one row an injection or a peak). Text tables and .xlsx workbooks are read;
+            anything else can be kept beside the run.
+          </EmptyState>
+        </div>
+      ) : null}
+      {uploads.map((upload) => (
+        <UploadSection
+          key={upload.id}
+          upload={upload}
+          note={notes[upload.id] ?? null}
+          species={species}
+          canChange={canAddFiles}
+          onChange={keep}
+        />
+      ))}
     </>
+  )
+  return (
+    <QueryProvider>
+      {canAddFiles ? (
+        <DropZone
+          label="Drop the rig log and the analyser’s results here"
+          hint="Several at once. They are looked at, and nothing counts before you confirm it."
+          onFiles={add}
+        >
+          {list}
+        </DropZone>
+      ) : (
+        <>
+          <Notice>
+            Files are added by the people who work in the campaign while the run is open. You can look at them.
+          </Notice>
+          {list}
+        </>
+      )}
+    </QueryProvider>
   )
 }

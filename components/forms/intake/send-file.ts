@@ -1,0 +1,57 @@
+import { RequestError } from '@/components/server-state/fetch-json'
+
+export interface SendOptions {
+  readonly signal: AbortSignal
+  /** bytes that left, of the bytes to send; the second number is 0 while it is not known */
+  readonly onProgress: (sentBytes: number, totalBytes: number) => void
+}
+
+/** The connection broke before an answer came: whether the server has the file is not known, and sending it again does no harm. */
+export class ConnectionLost extends Error {
+  constructor() {
+    super('The connection broke. Send it again when it is back; a file that did arrive is not stored twice.')
+    this.name = 'ConnectionLost'
+  }
+}
+
+function problemSentence(text: string, status: number): string {
+  try {
+    const body: unknown = JSON.parse(text)
+    if (typeof body === 'object' && body !== null && 'detail' in body && typeof body.detail === 'string')
+      return body.detail
+  } catch (error) {
+    if (!(error instanceof SyntaxError)) throw error
+  }
+  return status === 413 ? 'The file is larger than is taken here.' : `The server answered ${String(status)}.`
+}
+
+/**
+ * Sends one file as multipart and tells how far it is, which fetch cannot. The type is that of the route's answer.
+ * @throws RequestError for a refusal, ConnectionLost without an answer, DOMException AbortError when cancelled
+ */
+export function sendFile<T>(path: string, file: File, { signal, onProgress }: SendOptions): Promise<T> {
+  return new Promise((resolve, reject) => {
+    if (signal.aborted) return reject(new DOMException('cancelled', 'AbortError'))
+    const request = new XMLHttpRequest()
+    const cancel = () => request.abort()
+    request.open('POST', path)
+    request.setRequestHeader('Accept', 'application/json')
+    request.upload.addEventListener('progress', (event) =>
+      onProgress(event.loaded, event.lengthComputable ? event.total : 0),
+    )
+    request.addEventListener('loadend', () => signal.removeEventListener('abort', cancel))
+    request.addEventListener('load', () => {
+      if (request.status < 200 || request.status >= 300)
+        return reject(new RequestError(problemSentence(request.responseText, request.status), request.status))
+      resolve(JSON.parse(request.responseText))
+    })
+    request.addEventListener('error', () => reject(new ConnectionLost()))
+    request.addEventListener('timeout', () => reject(new ConnectionLost()))
+    request.addEventListener('abort', () => reject(new DOMException('cancelled', 'AbortError')))
+    signal.addEventListener('abort', cancel)
+    const form = new FormData()
+    // a part without a type is not taken for a file
+    form.append('file', file.type === '' ? new File([file], file.name, { type: 'application/octet-stream' }) : file)
+    request.send(form)
+  })
+}
