@@ -29,7 +29,6 @@ interface RankingWorkspaceProps {
   /** as stored for this person; read by the grid */
   readonly savedState: unknown
   readonly changeCell: ChangeCampaignSample
-  readonly styleNonce?: string
 }
 
 const FIRST_SHOWN = 4
@@ -187,7 +186,6 @@ export function RankingWorkspace(props: RankingWorkspaceProps) {
             onStateChange={onStateChange}
             hasFilterRow={hasFilterRow}
             isNarrow={isNarrow}
-            {...(props.styleNonce ? { styleNonce: props.styleNonce } : {})}
           />
         </div>
       </section>

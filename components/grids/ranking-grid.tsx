@@ -18,6 +18,7 @@ import { type Ranking, type RankingRow } from '@/lib/domain/ranking'
 import { type Working } from '@/lib/analysis/working'
 import { GridProvider, gridTheme } from './grid-provider'
 import { derivedWorking } from './derived-working'
+import { documentNonce } from './document-nonce'
 import { intervalScale } from './interval-scale'
 import { type RankingCellContext } from './ranking-cells'
 import { cellChange, type RankingCellChange } from './ranking-cell-change'
@@ -37,7 +38,6 @@ interface RankingGridProps {
   readonly onStateChange: (state: GridState) => void
   readonly hasFilterRow: boolean
   readonly isNarrow: boolean
-  readonly styleNonce?: string
 }
 
 const rowSelection: RowSelectionOptions<RankingGridRow> = {
@@ -87,6 +87,7 @@ function savable(state: GridState): GridState {
 export function RankingGrid(props: RankingGridProps) {
   const { ranking, permissions, onOpenWorking, onChangeCell, onStateChange, onSelectionChange } = props
   const rows = useMemo(() => rankingGridRows(ranking.rows), [ranking.rows])
+  const [styleNonce] = useState(documentNonce)
   const scale = useMemo(
     () =>
       intervalScale(
@@ -151,7 +152,7 @@ export function RankingGrid(props: RankingGridProps) {
       <div className={isWhole ? 'ranking-grid w-full' : 'ranking-grid h-[70vh] w-full'}>
         <AgGridReact<RankingGridRow>
           theme={gridTheme}
-          {...(props.styleNonce ? { styleNonce: props.styleNonce } : {})}
+          {...(styleNonce === undefined ? {} : { styleNonce })}
           rowData={rows}
           columnDefs={columns}
           defaultColDef={defaultColDef}

@@ -77,14 +77,14 @@ afterAll(async () => {
 test('a technician logs a run, filled in from the last one on the rig', async () => {
   const { page } = technician
   await page.goto(`${server.origin}/runs/new`)
-  await page.getByLabel('Rig', { exact: true }).selectOption({ label: 'Rig B' })
+  await page.getByLabel('Rig', { exact: true }).selectOption({ label: 'Rig B, Fixed bed, one tube' })
   await page.getByText('A bed packed for this run').click()
   await page.getByLabel('Sample', { exact: true }).selectOption({ label: 'CQ-101, 5 wt% Ni on alumina, reference lot' })
   await page.getByLabel('Catalyst', { exact: true }).fill('80,3 mg')
   await page.getByLabel('Diluent', { exact: true }).fill('450 mg SiC')
   await page.getByLabel('Sieve fraction').fill('125 to 180 µm')
   await page.getByLabel('Bed length').fill('18 mm')
-  await page.getByLabel('Flow of CO2').fill('7,2 mL/min')
+  await page.getByLabel('Flow of CO₂').fill('7,2 mL/min')
   await page.getByLabel('Start', { exact: true }).fill('2026-03-02T07:30')
   // what was understood is said back, and the cautions stand where the hand is
   await expect.poll(() => page.getByText(/80.3 mg/).count()).toBeGreaterThan(0)

@@ -1,6 +1,5 @@
 import { HydrationBoundary } from '@tanstack/react-query'
 import { type Metadata } from 'next'
-import { headers } from 'next/headers'
 import { showOrNotFound } from '@/app/_show-or-not-found'
 import { RANKING_COLUMNS_PREFERENCE } from '@/components/campaign/ranking-columns-preference'
 import { RankingWorkspace } from '@/components/campaign/ranking-workspace'
@@ -31,7 +30,6 @@ export default async function RankingPage({ params, searchParams }: RankingPageP
       getPreference(actor, RANKING_COLUMNS_PREFERENCE),
     ]),
   )
-  const nonce = (await headers()).get('x-nonce')
   return (
     <HydrationBoundary state={state}>
       <RankingWorkspace
@@ -43,7 +41,6 @@ export default async function RankingPage({ params, searchParams }: RankingPageP
         }}
         savedState={saved}
         changeCell={changeCampaignSampleAction}
-        {...(nonce === null ? {} : { styleNonce: nonce })}
       />
     </HydrationBoundary>
   )
