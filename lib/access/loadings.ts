@@ -40,7 +40,7 @@ export async function listLoadings(
 }
 
 export async function getLoading(actor: Actor, id: string): Promise<Loading> {
-  authorise(can.readHouse(actor))
+  hideUnless(can.readHouse(actor))
   return foundLoading(await getDatabase(), readableSamples(actor), id)
 }
 

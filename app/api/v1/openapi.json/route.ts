@@ -1,9 +1,10 @@
 import { z } from 'zod'
 import { operations, type Operation } from '../_operations'
 
-const SCHEMA_OPTIONS = { unrepresentable: 'any', io: 'input' } as const
-
-const json = (schema: z.ZodType) => ({ 'application/json': { schema: z.toJSONSchema(schema, SCHEMA_OPTIONS) } })
+/** What is sent may leave fields with a default out; what is answered has them all. */
+const json = (schema: z.ZodType, io: 'input' | 'output') => ({
+  'application/json': { schema: z.toJSONSchema(schema, { unrepresentable: 'any', io }) },
+})
 
 function parametersOf(operation: Operation) {
   const path = [...operation.path.matchAll(/\{(\w+)\}/g)].map((found) => ({
@@ -12,18 +13,31 @@ function parametersOf(operation: Operation) {
     required: true,
     schema: { type: 'string' },
   }))
-  const properties = operation.query instanceof z.ZodObject ? operation.query.shape : {}
+  const properties: Readonly<Record<string, z.ZodType>> =
+    operation.query instanceof z.ZodObject ? operation.query.shape : {}
   const query = Object.entries(properties).map(([name, schema]) => ({
     name,
     in: 'query',
-    required: false,
-    schema: z.toJSONSchema(schema as z.ZodType, SCHEMA_OPTIONS),
+    required: !schema.safeParse(undefined).success,
+    schema: z.toJSONSchema(schema, { unrepresentable: 'any', io: 'input' }),
   }))
   const header =
     operation.isVersioned === true
       ? [{ name: 'If-Match', in: 'header', required: true, schema: { type: 'string' } }]
       : []
-  return [...path, ...query, ...header]
+  const once =
+    operation.method === 'post' && operation.body !== undefined && operation.scope !== null
+      ? [
+          {
+            name: 'Idempotency-Key',
+            in: 'header',
+            required: false,
+            description: 'the same key with the same request is answered as the first time, for a day',
+            schema: { type: 'string', minLength: 8, maxLength: 200 },
+          },
+        ]
+      : []
+  return [...path, ...query, ...header, ...once]
 }
 
 function bodyOf(operation: Operation) {
@@ -41,7 +55,7 @@ function bodyOf(operation: Operation) {
         },
       },
     }
-  return operation.body === undefined ? {} : { requestBody: { required: true, content: json(operation.body) } }
+  return operation.body === undefined ? {} : { requestBody: { required: true, content: json(operation.body, 'input') } }
 }
 
 function describe(operation: Operation) {
@@ -50,7 +64,7 @@ function describe(operation: Operation) {
     operation.answerType !== undefined
       ? { [operation.answerType]: {} }
       : operation.answer !== undefined
-        ? json(operation.answer)
+        ? json(operation.answer, 'output')
         : status === '204'
           ? undefined
           : { 'application/json': {} }
