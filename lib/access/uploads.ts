@@ -153,7 +153,9 @@ async function addFile(actor: Actor, run: Run, file: ReceivedFile): Promise<Adde
   if (!isNew) {
     const known = await selectUploadIdByHash(db, run.id, file.sha256)
     hideUnless(known !== null)
-    return { upload: await readBack(run, known), isNew }
+    const upload = await readBack(run, known)
+    // the process ended between storing and reading it: handing it in once more is how a person goes on
+    return { upload: upload.state === 'received' ? await detect(run, known) : upload, isNew }
   }
   return { upload: await detect(run, id), isNew }
 }
@@ -226,8 +228,11 @@ export async function correctUpload(
   version: number,
 ): Promise<Upload> {
   const { upload, run } = await openUpload(actor, id)
-  if (upload.detection === null)
+  if (upload.detection === null) {
+    // nothing to correct in it, but it can be kept beside the run as what it is
+    if (input.answers?.kind === 'attachment') return change(run, id, version, { state: 'ready', kind: 'attachment' })
     throw new AppError('unprocessable', 'The file could not be read as a table, so there are no columns to correct.')
+  }
   const context = await contextOf(run)
   const answered = answerQuestions(
     input.specification ?? upload.detection.proposal,
@@ -275,15 +280,18 @@ export async function confirmUpload(actor: Actor, id: string, version: number, n
   const { upload, run } = await openUpload(actor, id)
   if (upload.version !== version)
     throw new AppError('stale', 'Somebody else worked on this file meanwhile. Look at it again.')
-  const { reading, questions } = await readingOf(run, upload)
   const detection = upload.detection
-  if (detection === null) throw new AppError('unprocessable', 'The file could not be read as a table.')
+  const isAttachment = (detection?.proposal.kind ?? upload.kind) === 'attachment'
+  const read = isAttachment ? null : await readingOf(run, upload)
+  const questions =
+    read?.questions ??
+    (detection === null ? [] : findQuestions(detection.proposal, detection.facts, await contextOf(run)))
   if (questions.length > 0)
     throw new AppError('unprocessable', `Something is still open: ${questions[0]?.sentence ?? ''}`, {
       issues: questions.map((question) => ({ field: question.key, message: question.sentence })),
     })
-  const isAttachment = detection.proposal.kind === 'attachment'
-  if (!isAttachment && (isFatal(reading.problems) || reading.rowCount === 0))
+  const reading = read?.reading ?? null
+  if (reading !== null && (isFatal(reading.problems) || reading.rowCount === 0))
     throw new AppError(
       'unprocessable',
       reading.problems.find((entry) => entry.severity === 'fatal')?.sentence ??
@@ -295,18 +303,23 @@ export async function confirmUpload(actor: Actor, id: string, version: number, n
       },
     )
   const db = await getDatabase()
-  const staged = isAttachment
-    ? null
-    : await stageReadingSet(
-        db,
-        { uploadId: id, runId: run.id, kind: reading.kind, columnMapId: null, parserVersion: PARSER_VERSION },
-        await prepareReadings(reading.channels),
-      )
+  const staged =
+    reading === null
+      ? null
+      : await stageReadingSet(
+          db,
+          { uploadId: id, runId: run.id, kind: reading.kind, columnMapId: null, parserVersion: PARSER_VERSION },
+          await prepareReadings(reading.channels),
+        )
   await db.transaction(async (tx) => {
     await holdOpenCampaign(tx, run.campaignId)
     let columnMapId = upload.columnMapId
     const known = columnMapId === null ? null : await selectColumnMap(tx, columnMapId)
-    if (!isAttachment && (known === null || mapText(known.specification) !== mapText(detection.proposal))) {
+    if (
+      reading !== null &&
+      detection !== null &&
+      (known === null || mapText(known.specification) !== mapText(detection.proposal))
+    ) {
       columnMapId = randomUUID()
       await insertColumnMap(tx, {
         id: columnMapId,
@@ -325,8 +338,8 @@ export async function confirmUpload(actor: Actor, id: string, version: number, n
       { id, version },
       {
         state: 'confirmed',
-        kind: detection.proposal.kind,
-        problems: reading.problems,
+        kind: detection?.proposal.kind ?? 'attachment',
+        problems: reading?.problems ?? upload.problems,
         columnMapId,
         confirmedBy: actor.userId,
         confirmedAt: now,
@@ -339,7 +352,12 @@ export async function confirmUpload(actor: Actor, id: string, version: number, n
       entity: 'upload',
       entityId: id,
       campaignId: run.campaignId,
-      after: { runId: run.id, kind: detection.proposal.kind, columnMapId, rows: reading.rowCount },
+      after: {
+        runId: run.id,
+        kind: detection?.proposal.kind ?? 'attachment',
+        columnMapId,
+        rows: reading?.rowCount ?? 0,
+      },
     })
   })
   return readBack(run, id)
