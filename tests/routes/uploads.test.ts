@@ -1,0 +1,308 @@
+import { readFileSync, rmSync } from 'node:fs'
+import path from 'node:path'
+import { eq } from 'drizzle-orm'
+import { afterAll, beforeAll, expect, test, vi } from 'vitest'
+import { GET as getContent } from '@/app/api/v1/uploads/[uploadId]/content/route'
+import { POST as postConfirm } from '@/app/api/v1/uploads/[uploadId]/confirm/route'
+import { GET as getPreview } from '@/app/api/v1/uploads/[uploadId]/preview/route'
+import { GET as getUpload, PATCH as patchUpload } from '@/app/api/v1/uploads/[uploadId]/route'
+import { POST as postSetAside } from '@/app/api/v1/uploads/[uploadId]/set-aside/route'
+import { GET as getUploads, POST as postUploads } from '@/app/api/v1/runs/[runId]/uploads/route'
+import { getDatabase, type OpenDatabase } from '@/db/client'
+import { selectReadingChannels } from '@/db/queries/readings'
+import { members, readingSets, runs, uploads } from '@/db/schema'
+import { createToken } from '@/lib/access/tokens'
+import { type Role } from '@/lib/domain/role'
+import { actorOf } from '@/tests/support/actors'
+import { freshDatabase } from '@/tests/support/fresh-database'
+import { makePerson } from '@/tests/support/make-person'
+import { makeRun } from '@/tests/support/make-run'
+
+/* The files go to a store of this test's own. */
+const dataDir = await vi.hoisted(async () => {
+  const { mkdtempSync } = await import('node:fs')
+  const { tmpdir } = await import('node:os')
+  process.env.DATA_DIR = mkdtempSync(`${tmpdir()}/ik-uploads-`)
+  return process.env.DATA_DIR
+})
+
+const ORIGIN = 'http://localhost:3000'
+const DEMO = path.join(process.cwd(), 'db/demo/files')
+
+let opened: OpenDatabase
+let run: Awaited<ReturnType<typeof makeRun>>
+let technician: string
+let guest: string
+let stranger: string
+
+async function tokenOf(role: Role, campaignId: string): Promise<string> {
+  const person = await makePerson(role, { passwordHash: 'none' })
+  await (await getDatabase()).insert(members).values({ campaignId, userId: person.id, role })
+  const { secret } = await createToken(actorOf(role, { userId: person.id }), {
+    name: 'rig computer',
+    scopes: ['read', 'intake', 'write'],
+    campaignId: null,
+    validDays: 1,
+  })
+  return secret
+}
+
+beforeAll(async () => {
+  opened = await freshDatabase()
+  const db = await getDatabase()
+  run = await makeRun(db, 'own')
+  const other = await makeRun(db, 'other')
+  technician = await tokenOf('technician', run.campaignId)
+  guest = await tokenOf('guest', run.campaignId)
+  stranger = await tokenOf('technician', other.campaignId)
+})
+afterAll(async () => {
+  await opened.close()
+  rmSync(dataDir, { recursive: true, force: true })
+})
+
+const bearer = (secret: string) => ({ Authorization: `Bearer ${secret}` })
+const ofRun = () => ({ params: Promise.resolve({ runId: run.runId }) })
+const ofUpload = (uploadId: string) => ({ params: Promise.resolve({ uploadId }) })
+
+interface SaidUpload {
+  readonly id: string
+  readonly version: number
+  readonly state: string
+  readonly isNew: boolean
+  readonly kind: string | null
+  readonly failure: string | null
+  readonly fileName: string
+  readonly detection: {
+    readonly questions: readonly { readonly key: string; readonly proposal: string | null }[]
+  } | null
+}
+
+/** Sends files as a browser would. */
+async function add(secret: string, files: Readonly<Record<string, Uint8Array | string>>) {
+  const form = new FormData()
+  for (const [name, content] of Object.entries(files))
+    form.append(
+      'file',
+      new File([typeof content === 'string' ? content : new Uint8Array(content)], name, {
+        type: 'application/octet-stream',
+      }),
+    )
+  const answer = await postUploads(
+    new Request(`${ORIGIN}/api/v1/runs/${run.runId}/uploads`, { method: 'POST', headers: bearer(secret), body: form }),
+    ofRun(),
+  )
+  const body: { items?: readonly SaidUpload[]; detail?: string } = await answer.json()
+  return { answer, items: body.items ?? [], body }
+}
+
+async function first(files: Readonly<Record<string, Uint8Array | string>>): Promise<SaidUpload> {
+  const { items, body } = await add(technician, files)
+  const [item] = items
+  if (item === undefined) throw new Error(JSON.stringify(body))
+  return item
+}
+
+const sendTo = (id: string, tag: string | null, body?: unknown, secret = technician) =>
+  new Request(`${ORIGIN}/api/v1/uploads/${id}`, {
+    method: 'POST',
+    headers: {
+      ...bearer(secret),
+      ...(tag === null ? {} : { 'If-Match': tag }),
+      ...(body === undefined ? {} : { 'Content-Type': 'application/json' }),
+    },
+    ...(body === undefined ? {} : { body: JSON.stringify(body) }),
+  })
+const tagOf = (upload: { id: string; version: number }) => `W/"${upload.id}.${String(upload.version)}"`
+const fetchOf = (id: string, secret = technician) =>
+  new Request(`${ORIGIN}/api/v1/uploads/${id}`, { headers: bearer(secret) })
+
+async function setsOf(uploadId: string) {
+  const rows = await (await getDatabase()).select().from(readingSets)
+  return rows.filter((row) => row.uploadId === uploadId)
+}
+
+const demo = (name: string) => readFileSync(path.join(DEMO, name))
+
+test('a log and the analyser’s results go in together, are answered and confirmed', async () => {
+  const { answer, items } = await add(technician, {
+    'R-0005-rig.csv': demo('R-0005-rig.csv'),
+    'R-0002-analysis.xlsx': demo('R-0002-analysis.xlsx'),
+  })
+  expect(answer.status).toBe(201)
+  expect(items.map((item) => [item.fileName, item.kind, item.state, item.isNew])).toEqual([
+    ['R-0005-rig.csv', 'rig-log', 'needs-answers', true],
+    ['R-0002-analysis.xlsx', 'analyser', 'ready', true],
+  ])
+  const [log, results] = items
+  if (log === undefined || results === undefined) throw new Error('two files went in')
+  // day and month cannot be told apart, and nothing says at which state volumes are counted: neither is guessed
+  expect(log.detection?.questions.map(({ key, proposal }) => [key, proposal])).toEqual([
+    ['date-order', 'month-first'],
+    ['flow-reference', null],
+  ])
+
+  const open = await postConfirm(sendTo(log.id, tagOf(log)), ofUpload(log.id))
+  expect(open.status).toBe(422)
+  expect(await open.json()).toMatchObject({ issues: [{ field: 'date-order' }, { field: 'flow-reference' }] })
+  expect(await setsOf(log.id)).toEqual([])
+
+  const half = await patchUpload(
+    sendTo(log.id, tagOf(log), { answers: { 'date-order': 'month-first' } }),
+    ofUpload(log.id),
+  )
+  expect(half.status).toBe(200)
+  const halfway: SaidUpload = await half.json()
+  expect(halfway).toMatchObject({ state: 'needs-answers', version: log.version + 1 })
+  expect(half.headers.get('etag')).toBe(tagOf(halfway))
+  expect(halfway.detection?.questions.map(({ key }) => key)).toEqual(['flow-reference'])
+
+  const stale = await patchUpload(
+    sendTo(log.id, tagOf(log), { answers: { 'flow-reference': '273.15/101325' } }),
+    ofUpload(log.id),
+  )
+  expect(stale.status).toBe(412)
+
+  const whole = await patchUpload(
+    sendTo(log.id, tagOf(halfway), { answers: { 'flow-reference': '273.15/101325' } }),
+    ofUpload(log.id),
+  )
+  const ready: SaidUpload = await whole.json()
+  expect(ready).toMatchObject({ state: 'ready', detection: { questions: [] } })
+
+  const preview = await getPreview(fetchOf(log.id), ofUpload(log.id))
+  const shown: { rowCount: number; channels: { name: string; minimum: number }[] } = await preview.json()
+  expect(shown.rowCount).toBe(3577)
+  expect(shown.channels.map(({ name }) => name)).toContain('flowMolPerS.CO2')
+  expect(await setsOf(log.id)).toEqual([])
+
+  expect((await postConfirm(sendTo(log.id, null), ofUpload(log.id))).status).toBe(428)
+  expect((await postConfirm(sendTo(log.id, tagOf(halfway)), ofUpload(log.id))).status).toBe(412)
+  expect(await setsOf(log.id)).toEqual([])
+  const confirmed = await postConfirm(sendTo(log.id, tagOf(ready)), ofUpload(log.id))
+  expect(confirmed.status).toBe(200)
+  expect(await confirmed.json()).toMatchObject({ state: 'confirmed', kind: 'rig-log' })
+  const [set] = await setsOf(log.id)
+  expect(set?.rowCount).toBe(3577)
+  const pressure = (await selectReadingChannels(await getDatabase(), set?.id ?? '', ['inletPressurePa'])).get(
+    'inletPressurePa',
+  )
+  // the first row reads 4.282 psig; a psi is 6894.757 Pa (NIST SP 811, 2008, B.8) on top of the room's 101325 Pa on record
+  expect(pressure?.[0]).toBeCloseTo(101_325 + 4.282 * 6_894.757, 1)
+
+  const taken = await postConfirm(sendTo(results.id, tagOf(results)), ofUpload(results.id))
+  expect(taken.status).toBe(200)
+  expect((await setsOf(results.id))[0]?.rowCount).toBe(50)
+})
+
+test('the same bytes again are answered with the file that has them, whatever they are called', async () => {
+  const once = await add(technician, {
+    'once.csv': 'time;T bed [C]\n2026-03-02 07:30:00;25,1\n2026-03-02 07:30:10;25,3\n',
+  })
+  expect(once.answer.status).toBe(201)
+  const twice = await add(technician, {
+    'twice.csv': 'time;T bed [C]\n2026-03-02 07:30:00;25,1\n2026-03-02 07:30:10;25,3\n',
+  })
+  expect(twice.answer.status).toBe(200)
+  expect(twice.items[0]).toMatchObject({ id: once.items[0]?.id, fileName: 'once.csv', isNew: false })
+})
+
+test('a file whose reading was cut short is read when it is handed in again', async () => {
+  const content = 'time;T bed [C]\n2026-03-02 09:30:00;25,1\n2026-03-02 09:30:10;25,3\n'
+  const upload = await first({ 'cut-short.csv': content })
+  const db = await getDatabase()
+  await db.update(uploads).set({ state: 'received', detection: null, kind: null }).where(eq(uploads.id, upload.id))
+  const again = await add(technician, { 'cut-short.csv': content })
+  expect(again.answer.status).toBe(200)
+  expect(again.items[0]).toMatchObject({ id: upload.id, kind: 'rig-log', isNew: false })
+  expect(again.items[0]?.detection).not.toBeNull()
+})
+
+test('to somebody who is not in the campaign the run and its files do not exist', async () => {
+  const upload = await first({ 'hidden.csv': 'time;T bed [C]\n2026-03-02 10:30:00;25,1\n2026-03-02 10:30:10;25,3\n' })
+  expect((await add(stranger, { 'a.csv': 'a;b\n1;2\n' })).answer.status).toBe(404)
+  expect((await getUploads(new Request(`${ORIGIN}/api/v1/any`, { headers: bearer(stranger) }), ofRun())).status).toBe(
+    404,
+  )
+  for (const call of [getUpload, getPreview, getContent])
+    expect((await call(fetchOf(upload.id, stranger), ofUpload(upload.id))).status).toBe(404)
+  const change = { answers: { kind: 'attachment' } }
+  expect((await patchUpload(sendTo(upload.id, tagOf(upload), change, stranger), ofUpload(upload.id))).status).toBe(404)
+  expect((await postConfirm(sendTo(upload.id, tagOf(upload), undefined, stranger), ofUpload(upload.id))).status).toBe(
+    404,
+  )
+})
+
+test('a guest of the campaign reads editions, so files do not exist for them either', async () => {
+  const upload = await first({ 'shown.csv': 'time;T bed [C]\n2026-03-02 11:30:00;25,1\n2026-03-02 11:30:10;25,3\n' })
+  expect((await getUpload(fetchOf(upload.id, guest), ofUpload(upload.id))).status).toBe(404)
+  const before = (await (await getDatabase()).select().from(uploads)).length
+  expect((await add(guest, { 'a.csv': 'a;b\n1;2\n' })).answer.status).toBe(404)
+  expect((await postConfirm(sendTo(upload.id, tagOf(upload), undefined, guest), ofUpload(upload.id))).status).toBe(404)
+  const aside = sendTo(upload.id, tagOf(upload), { reason: 'not mine to say' }, guest)
+  expect((await postSetAside(aside, ofUpload(upload.id))).status).toBe(404)
+  expect((await (await getDatabase()).select().from(uploads)).length).toBe(before)
+})
+
+test('once the run is handed in, a technician whose run it is not changes no file of it', async () => {
+  const upload = await first({ 'late.csv': 'time;T bed [C]\n2026-03-02 13:30:00;25,1\n2026-03-02 13:30:10;25,3\n' })
+  const db = await getDatabase()
+  await db.update(runs).set({ state: 'handed-in' }).where(eq(runs.id, run.runId))
+  try {
+    expect((await add(technician, { 'a.csv': 'a;b\n1;2\n' })).answer.status).toBe(403)
+    expect((await getUpload(fetchOf(upload.id), ofUpload(upload.id))).status).toBe(200)
+    const change = sendTo(upload.id, tagOf(upload), { answers: { kind: 'attachment' } })
+    expect((await patchUpload(change, ofUpload(upload.id))).status).toBe(403)
+    expect((await postConfirm(sendTo(upload.id, tagOf(upload)), ofUpload(upload.id))).status).toBe(403)
+    const aside = sendTo(upload.id, tagOf(upload), { reason: 'too late for it' })
+    expect((await postSetAside(aside, ofUpload(upload.id))).status).toBe(403)
+  } finally {
+    await db.update(runs).set({ state: 'open' }).where(eq(runs.id, run.runId))
+  }
+})
+
+test('what cannot be read stays, and can be kept beside the run', async () => {
+  const upload = await first({ 'bed.txt': 'The bed looked grey after unloading.\nNothing else to say.\n' })
+  expect(upload).toMatchObject({ state: 'failed', detection: null })
+  expect((await postConfirm(sendTo(upload.id, tagOf(upload)), ofUpload(upload.id))).status).toBe(422)
+  const change = sendTo(upload.id, tagOf(upload), { answers: { kind: 'attachment' } })
+  const kept: SaidUpload = await (await patchUpload(change, ofUpload(upload.id))).json()
+  const confirmed = await postConfirm(sendTo(upload.id, tagOf(kept)), ofUpload(upload.id))
+  expect(confirmed.status).toBe(200)
+  expect(await confirmed.json()).toMatchObject({ state: 'confirmed', kind: 'attachment' })
+  expect(await setsOf(upload.id)).toEqual([])
+})
+
+test('a file comes back byte for byte, and a browser runs nothing of it', async () => {
+  const page = '<!doctype html><script>document.title = "run"</script>'
+  const upload = await first({ 'page.html': page })
+  // no table in it: kept, and said why it was not read
+  expect(upload.state === 'failed' ? upload.failure : upload.state).toMatch(/kept|needs-answers/)
+  const answer = await getContent(fetchOf(upload.id), ofUpload(upload.id))
+  expect(answer.status).toBe(200)
+  expect(await answer.text()).toBe(page)
+  expect(answer.headers.get('content-type')).toBe('application/octet-stream')
+  expect(answer.headers.get('content-disposition')).toMatch(/^attachment;/)
+  expect(answer.headers.get('content-security-policy')).toContain('sandbox')
+  expect(answer.headers.get('x-content-type-options')).toBe('nosniff')
+  expect(answer.headers.get('cache-control')).toBe('private, no-store')
+})
+
+test('set aside, a file stays and its readings no longer count; the reason is asked for', async () => {
+  const upload = await first({ 'aside.csv': 'time;T bed [C]\n2026-03-02 12:30:00;25,1\n2026-03-02 12:30:10;25,3\n' })
+  const confirmed: SaidUpload = await (await postConfirm(sendTo(upload.id, tagOf(upload)), ofUpload(upload.id))).json()
+  expect(confirmed.state).toBe('confirmed')
+  expect((await postSetAside(sendTo(upload.id, tagOf(confirmed), { reason: '' }), ofUpload(upload.id))).status).toBe(
+    400,
+  )
+  const aside = await postSetAside(
+    sendTo(upload.id, tagOf(confirmed), { reason: 'thermocouple was not in the bed' }),
+    ofUpload(upload.id),
+  )
+  expect(await aside.json()).toMatchObject({ state: 'set-aside', id: upload.id })
+  expect((await setsOf(upload.id)).every((set) => set.supersededAt !== null)).toBe(true)
+  // and can be taken up again
+  const again: SaidUpload = await (await getUpload(fetchOf(upload.id), ofUpload(upload.id))).json()
+  const up = await patchUpload(sendTo(upload.id, tagOf(again), { answers: {} }), ofUpload(upload.id))
+  expect(await up.json()).toMatchObject({ state: 'ready' })
+})
