@@ -9,6 +9,7 @@ const MARGIN = 3
 function rangeText(channel: PreviewChannel): string {
   const { format } = channelWords(channel.name)
   if (channel.minimum === null || channel.maximum === null) return 'no value'
+  if (channel.name.startsWith('isBypass') && channel.minimum !== channel.maximum) return 'reactor and bypass'
   const low = format(channel.minimum)
   const high = format(channel.maximum)
   return low === high ? low : `${low} to ${high}`

@@ -96,7 +96,12 @@ export function ColumnEditor({ detection, specification, species, isDisabled, on
                   </th>
                 ))}
               </tr>
-              <FieldRow name="Meaning" cells={fields.map((field) => field.meaning)} minimum="min-w-32" />
+              <FieldRow
+                name="Meaning"
+                cells={fields.map((field) => field.meaning)}
+                // wide enough to read what was chosen; a column that is not read needs less
+                widths={fields.map(({ column }) => (column.meaning === 'ignore' ? 'min-w-28' : 'min-w-44'))}
+              />
               {fields.some((field) => field.unit !== null) ? (
                 <FieldRow name="Unit" cells={fields.map((field) => field.unit)} />
               ) : null}
@@ -130,7 +135,7 @@ export function ColumnEditor({ detection, specification, species, isDisabled, on
         </div>
       )}
       {isNarrow || detection.firstRows.length <= FIRST_ROWS ? null : (
-        <Button kind="quiet" className="px-0" onClick={() => setIsLong((before) => !before)} aria-expanded={isLong}>
+        <Button kind="quiet" className="px-0!" onClick={() => setIsLong((before) => !before)} aria-expanded={isLong}>
           {isLong ? 'Show fewer rows' : `Show the first ${String(detection.firstRows.length)} rows`}
         </Button>
       )}
@@ -141,9 +146,10 @@ export function ColumnEditor({ detection, specification, species, isDisabled, on
 const nameOf = (column: MappedColumn) => (column.header === '' ? `column ${String(column.index + 1)}` : column.header)
 
 function saidOf(column: MappedColumn): string {
-  const species = column.species === null ? '' : ` ${speciesText(column.species)}`
-  const unit = column.unit === '' ? '' : `, ${column.unit}`
-  return meaningLabels[column.meaning] + (column.meaning === 'ignore' ? '' : species + unit)
+  if (column.meaning === 'ignore') return meaningLabels.ignore
+  const what = column.meaning === 'flow' ? 'flow' : meaningLabels[column.meaning]
+  const species = column.species === null ? '' : ` of ${speciesText(column.species)}`
+  return `${what}${species}${column.unit === '' ? '' : `, ${column.unit}`}`
 }
 
 interface Fields {
@@ -335,17 +341,17 @@ function RowName({ isPlain = false, children }: { readonly isPlain?: boolean; re
 function FieldRow({
   name,
   cells,
-  minimum = '',
+  widths = [],
 }: {
   readonly name: string
   readonly cells: readonly (ReactNode | null)[]
-  readonly minimum?: string
+  readonly widths?: readonly string[]
 }) {
   return (
     <tr>
       <RowName>{name}</RowName>
       {cells.map((cell, index) => (
-        <td key={index} className={classNames('max-w-52 px-1.5 pb-1.5 align-top font-normal', minimum)}>
+        <td key={index} className={classNames('max-w-52 px-1.5 pb-1.5 align-top font-normal', widths[index])}>
           {cell}
         </td>
       ))}

@@ -2,7 +2,6 @@
 
 import { useState } from 'react'
 import { QueryProvider } from '@/components/server-state/query-provider'
-import { EmptyState } from '@/components/ui/empty-state'
 import { LinkButton } from '@/components/ui/link-button'
 import { Notice } from '@/components/ui/notice'
 import { type Upload } from '@/lib/domain/intake'
@@ -80,12 +79,13 @@ export function IntakeWorkspace({
         </Notice>
       ) : null}
       {uploads.length === 0 && sendings.length === 0 ? (
-        <div className="mt-6">
-          <EmptyState title="No files yet">
+        <div className="prose mt-5 max-w-[62ch]">
+          <h2>No files yet</h2>
+          <p className="m-0 mt-1 text-ink-2">
             A run needs two: the log of the rig (temperatures, pressures, flows against time) and the results of the
             analyser (peaks or composition, one row an injection or a peak). Text tables and .xlsx workbooks are read;
             anything else can be kept beside the run.
-          </EmptyState>
+          </p>
         </div>
       ) : null}
       {uploads.map((upload) => (

@@ -71,6 +71,7 @@ export function UploadSection({
   const [done, setDone] = useState<string | null>(null)
   const [isSettingAside, setIsSettingAside] = useState(false)
   const [isOpened, setIsOpened] = useState(false)
+  const [takenInCount, setTakenInCount] = useState<number | null>(null)
 
   const { detection } = upload
   const isAttachment = upload.kind === 'attachment'
@@ -87,7 +88,15 @@ export function UploadSection({
   const questions: readonly Question[] = merged(detection?.questions ?? [], preview.data?.questions ?? [])
   const isAnswered = questions.every((question) => (answers[question.key] ?? '') !== '')
   const isChanged = draft !== null || questions.length > 0
-  const problems = preview.data?.problems ?? upload.problems
+  const found = preview.data?.problems ?? upload.problems
+  // the one reason of a failure stands above already
+  const problems = upload.state === 'failed' && found.length === 1 ? [] : found
+  const isWithoutFault = upload.problems.every((problem) => problem.severity === 'note')
+  const rowCount =
+    preview.data?.rowCount ??
+    takenInCount ??
+    // one row a reading and none left out: the file's own count
+    (detection?.proposal.shape === 'wide' && isWithoutFault ? detection.rowCount : null)
   const isFatal = problems.some((problem) => problem.severity === 'fatal')
 
   /** Runs a change; what stops it is said where the buttons are, and what was chosen stays. */
@@ -134,7 +143,10 @@ export function UploadSection({
     attempt(
       'confirming',
       () => confirm(upload),
-      () => null,
+      () => {
+        setTakenInCount(preview.data?.rowCount ?? null)
+        return null
+      },
     )
   const correctAndTakeIn = () =>
     attempt(
@@ -202,7 +214,7 @@ export function UploadSection({
 
       <div ref={said} tabIndex={-1} className="mt-2 grid gap-2 outline-none empty:hidden">
         {note === null ? null : <Notice isLive>{note}</Notice>}
-        {upload.failure === null ? null : (
+        {upload.failure === null || upload.state !== 'failed' ? null : (
           <Notice kind="fault" title="Not read.">
             {upload.failure}
           </Notice>
@@ -210,7 +222,7 @@ export function UploadSection({
         {isConfirmed ? (
           <Notice kind="sound" isLive title={isAttachment ? 'Kept as an attachment' : 'Taken in'}>
             {upload.confirmedAt === null ? null : <Moment at={upload.confirmedAt} />}:{' '}
-            {takenInText(upload.kind, preview.data?.rowCount ?? null, upload.problems)}.
+            {takenInText(upload.kind, rowCount, upload.problems)}.
           </Notice>
         ) : null}
         {upload.state === 'set-aside' ? <Notice>The file is kept. Nothing of it counts in the run.</Notice> : null}
@@ -351,7 +363,7 @@ export function UploadSection({
               Undo the changes
             </Button>
           ) : null}
-          {(upload.state === 'ready' || upload.state === 'needs-answers') && detection !== null ? (
+          {['ready', 'needs-answers', 'failed'].includes(upload.state) ? (
             <Button disabled={work !== null} onClick={() => void keepAsAttachment()}>
               Keep as attachment
             </Button>
