@@ -1,4 +1,4 @@
-import { and, asc, eq, inArray, isNull, lte, or, gt } from 'drizzle-orm'
+import { and, asc, eq, inArray, isNotNull, isNull, lte, or, gt } from 'drizzle-orm'
 import { type Executor } from '../executor'
 import {
   calibrations,
@@ -153,9 +153,11 @@ export interface CalibrationRecord {
   readonly entries: unknown
   readonly validFrom: Date
   readonly validTo: Date | null
+  /** what supersedes it, at first or second hand: it gives way where one of them is valid, and only there */
+  readonly supersededByIds: readonly string[]
 }
 
-/** Calibrations that may hold for a run between these times: newest first, those that another one replaces left out. */
+/** Calibrations that may hold for a run between these times, newest first. */
 export async function selectCalibrationRecords(db: Executor, from: Date, to: Date): Promise<CalibrationRecord[]> {
   const rows = await db
     .select({
@@ -167,17 +169,26 @@ export async function selectCalibrationRecords(db: Executor, from: Date, to: Dat
       entries: calibrations.entries,
       validFrom: calibrations.validFrom,
       validTo: calibrations.validTo,
-      createdAt: calibrations.createdAt,
-      supersedesId: calibrations.supersedesId,
     })
     .from(calibrations)
     .where(and(lte(calibrations.validFrom, to), or(isNull(calibrations.validTo), gt(calibrations.validTo, from))))
     .orderBy(asc(calibrations.validFrom), asc(calibrations.createdAt), asc(calibrations.id))
-  const replaced = new Set(rows.map((row) => row.supersedesId))
-  return rows
-    .filter((row) => !replaced.has(row.id))
-    .reverse()
-    .map(({ createdAt: _createdAt, supersedesId: _supersedesId, ...row }) => row)
+  const links = await db
+    .select({ id: calibrations.id, supersedesId: calibrations.supersedesId })
+    .from(calibrations)
+    .where(isNotNull(calibrations.supersedesId))
+    .orderBy(asc(calibrations.id))
+  return rows.reverse().map((row) => ({ ...row, supersededByIds: successorsOf(row.id, links) }))
+}
+
+function successorsOf(
+  id: string,
+  links: readonly { readonly id: string; readonly supersedesId: string | null }[],
+): string[] {
+  const found = [id]
+  for (const earlier of found)
+    for (const link of links) if (link.supersedesId === earlier && !found.includes(link.id)) found.push(link.id)
+  return found.slice(1)
 }
 
 export interface SiteCountRecord {

@@ -53,15 +53,23 @@ export function whatIsMissing(bundle: RunBundle): string {
 const entriesOf = (record: CalibrationRecord): CalibrationEntry[] =>
   calibrationEntrySchema.array().parse(record.entries)
 
-/** The calibration of a kind that holds for the run: one made for its rig before one for the house, a newer before an older. */
+/**
+ * The calibration of a kind that holds for the run: one made for its rig before one for the house, a newer before an older, and none
+ * that was superseded by one valid at that time. The other runs that are looked at together have no say in it.
+ */
 function validCalibration(bundle: RunBundle, kind: string): CalibrationRecord | null {
   const at = bundle.run.startedAt.getTime()
-  const valid = bundle.calibrations.filter(
+  const timely = bundle.calibrations.filter(
     (record) =>
       record.kind === kind &&
       record.validFrom.getTime() <= at &&
-      (record.validTo === null || record.validTo.getTime() > at) &&
-      (record.rigId === null || record.rigId === bundle.run.rigId),
+      (record.validTo === null || record.validTo.getTime() > at),
+  )
+  const timelyIds = new Set(timely.map((record) => record.id))
+  const valid = timely.filter(
+    (record) =>
+      (record.rigId === null || record.rigId === bundle.run.rigId) &&
+      !record.supersededByIds.some((id) => timelyIds.has(id)),
   )
   return valid.find((record) => record.rigId === bundle.run.rigId) ?? valid[0] ?? null
 }

@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { getDatabase, type OpenDatabase } from '@/db/client'
+import { selectCalibrationRecords } from '@/db/queries/reduction-inputs'
 import { selectValidCalibrations } from '@/db/queries/rigs'
 import {
   changeCalibration,
@@ -324,4 +325,26 @@ describe('samples', () => {
     expect(made.code).toBe('S-token')
     expect((await refusalOf(listSamples(adder))).code).toBe('not-allowed')
   })
+})
+
+test('what a run’s numbers rest on is chosen at its own time, whichever runs are reduced beside it', async () => {
+  const db = await getDatabase()
+  const technician = lab.own.actor('technician')
+  const first = await createCalibration(
+    technician,
+    factors({ name: 'A', kind: 'flow-controller', convention: null, validFrom: '2030-01-01T00:00:00Z' }),
+  )
+  const second = await supersedeCalibration(
+    technician,
+    first.id,
+    factors({ name: 'B', kind: 'flow-controller', convention: null, validFrom: '2030-02-01T00:00:00Z' }),
+  )
+  const records = await selectCalibrationRecords(db, new Date('2030-01-10T00:00:00Z'), new Date('2030-03-01T00:00:00Z'))
+  const links = records
+    .filter((record) => record.kind === 'flow-controller')
+    .map((record) => [record.name, record.supersededByIds])
+  expect(links).toEqual([
+    ['B', []],
+    ['A', [second.id]],
+  ])
 })
