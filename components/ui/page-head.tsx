@@ -23,7 +23,7 @@ export function PageHead({
             {title}
             {of === undefined ? null : <span className="ml-2 text-[18px] text-ink-2">{of}</span>}
           </h1>
-          {meta === undefined ? null : <div className="mt-1 text-ink-2">{meta}</div>}
+          {meta === undefined ? null : <div className="mt-1 text-ink-2 [&_a]:underline">{meta}</div>}
         </div>
         {actions === undefined ? null : <div className="flex flex-wrap gap-2">{actions}</div>}
       </div>
