@@ -14,10 +14,10 @@ export function Section({
 }) {
   return (
     <section className="mt-6">
-      <div className="mb-2 flex items-center gap-3">
+      <div className="mb-2 flex flex-wrap items-center gap-x-3 gap-y-1">
         <h2>{title}</h2>
         {note === undefined ? null : <span className="text-[13px] text-ink-2">{note}</span>}
-        <span className="h-px flex-1 bg-line" aria-hidden="true" />
+        <span className="h-px min-w-8 flex-1 bg-line" aria-hidden="true" />
         {actions}
       </div>
       {children}

@@ -111,7 +111,9 @@ function factorEffects(
     if (stated === undefined || stated.sourceId === null || !(stated.relative > 0)) continue
     const moved = { ...analysis.factor, [species]: (analysis.factor[species] ?? 0) * (1 + stated.relative) }
     const effect = read(compose(analysis, outlet, inlet, moved)) - nominal
-    if (effect !== 0) effects[stated.sourceId] = (effects[stated.sourceId] ?? 0) + effect
+    // a factor that cancels leaves the last digits of a subtraction behind, which are nobody's effect
+    if (Math.abs(effect) > 1e-12 * Math.max(1, Math.abs(nominal)))
+      effects[stated.sourceId] = (effects[stated.sourceId] ?? 0) + effect
   }
   return effects
 }
