@@ -1,5 +1,5 @@
 import { and, asc, desc, eq, gt, isNotNull, isNull, lt, max, ne, sql } from 'drizzle-orm'
-import { type CampaignName, type CampaignSample, type CampaignSummary, type Member } from '@/lib/domain/campaign'
+import { type CampaignSample, type CampaignSummary, type Member } from '@/lib/domain/campaign'
 import { methodSettingsSchema, type Method } from '@/lib/domain/method'
 import { type Page } from '@/lib/domain/page'
 import { campaignRoleSchema, type CampaignRole } from '@/lib/domain/role'
@@ -64,14 +64,6 @@ export async function selectCampaign(db: Executor, scope: Scope, id: string): Pr
     .from(campaigns)
     .where(and(inScope(campaigns.id, scope), eq(campaigns.id, id)))
   return row === undefined ? null : { ...row, closedAt: instantOrNull(row.closedAt) }
-}
-
-export async function selectCampaignNames(db: Executor, scope: Scope): Promise<CampaignName[]> {
-  return db
-    .select({ id: campaigns.id, code: campaigns.code, name: campaigns.name, laboratory: campaigns.laboratory })
-    .from(campaigns)
-    .where(inScope(campaigns.id, scope))
-    .orderBy(asc(campaigns.code))
 }
 
 /** Holds the campaign until the transaction ends, so that numbers are given out one at a time. False where there is none. */

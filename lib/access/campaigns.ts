@@ -16,7 +16,6 @@ import {
 import {
   lockCampaign,
   selectCampaign,
-  selectCampaignNames,
   selectCampaigns,
   selectCampaignSample,
   selectCampaignSamples,
@@ -34,7 +33,6 @@ import { selectSample } from '../../db/queries/samples'
 import { changedFields } from '../audit/changed-fields'
 import {
   type CampaignChange,
-  type CampaignName,
   type CampaignSample,
   type CampaignSampleChange,
   type CampaignSummary,
@@ -47,7 +45,7 @@ import { methodSettingsSchema, type Method, type NewMethod } from '../domain/met
 import { wholeList, type Page } from '../domain/page'
 import { type Actor, type CampaignRole } from '../domain/role'
 import { can } from '../policy/can'
-import { readableCampaigns, visibleCampaigns } from '../policy/campaign-scope'
+import { readableCampaigns } from '../policy/campaign-scope'
 import { authorise, hideUnless } from './authorise'
 import { authoriseIn, holdOpenCampaign, touchableSamples } from './campaign-rights'
 import { refuseEmpty, refuseField, refuseStale } from './stale'
@@ -73,11 +71,6 @@ export async function listCampaigns(
 ): Promise<CampaignSummary[]> {
   const rows = await selectCampaigns(await getDatabase(), readableCampaigns(actor), filter, page)
   return rows.map((row) => summaryFor(actor, row))
-}
-
-/** Every campaign the actor knows of, as a guest too: no more of it than its name. */
-export async function listCampaignNames(actor: Actor): Promise<CampaignName[]> {
-  return selectCampaignNames(await getDatabase(), visibleCampaigns(actor))
 }
 
 export async function getCampaign(actor: Actor, campaignId: string): Promise<CampaignSummary> {

@@ -42,14 +42,6 @@ export const campaignSampleChangeSchema = z.strictObject({
 })
 export type CampaignSampleChange = z.infer<typeof campaignSampleChangeSchema>
 
-/** A campaign that somebody knows of; for a guest it is all there is beside its editions. */
-export interface CampaignName {
-  readonly id: string
-  readonly code: string
-  readonly name: string
-  readonly laboratory: string
-}
-
 export const campaignChangeSchema = z.strictObject({
   name: nameSchema.optional(),
   laboratory: z.string().trim().max(200).optional(),

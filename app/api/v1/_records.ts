@@ -1,6 +1,6 @@
 import { z } from 'zod'
 import { calibrationKinds, newCalibrationSchema, type Calibration } from '@/lib/domain/calibration'
-import { type CampaignName, type CampaignSample, type CampaignSummary, type Member } from '@/lib/domain/campaign'
+import { type CampaignSample, type CampaignSummary, type Member } from '@/lib/domain/campaign'
 import { newColumnMapSchema, type ColumnMap } from '@/lib/domain/column-map'
 import { type HistoryEntry } from '@/lib/domain/history'
 import { methodSettingsSchema, type Method } from '@/lib/domain/method'
@@ -68,13 +68,6 @@ export const campaignRecord = z.strictObject({
   methodNumber: count.nullable(),
   myRole: z.enum([...campaignRoles, 'admin']),
 }) satisfies z.ZodType<CampaignSummary>
-
-export const campaignNameRecord = z.strictObject({
-  id: text,
-  code: text,
-  name: text,
-  laboratory: text,
-}) satisfies z.ZodType<CampaignName>
 
 export const memberRecord = z.strictObject({
   campaignId: text,

@@ -10,7 +10,6 @@ import {
   createCampaign,
   getCampaign,
   getCurrentMethod,
-  listCampaignNames,
   listCampaigns,
   listCampaignSamples,
   listMembers,
@@ -19,6 +18,7 @@ import {
   reopenCampaign,
   saveMethod,
 } from '@/lib/access/campaigns'
+import { listCampaignNames } from '@/lib/access/campaign-names'
 import { listHistory } from '@/lib/access/history'
 import { createRun } from '@/lib/access/runs'
 import { methodSettingsSchema } from '@/lib/domain/method'
