@@ -2,103 +2,190 @@
 
 import { useRouter } from 'next/navigation'
 import { useState } from 'react'
+import { RequestError } from '@/components/server-state/fetch-json'
+import { Button } from '@/components/ui/button'
 import { Notice } from '@/components/ui/notice'
+import { SelectField, type SelectChoice } from '@/components/ui/select-field'
+import { TextField } from '@/components/ui/text-field'
+import { type Calibration } from '@/lib/domain/calibration'
+import { readPercent } from './intake/read-percent'
 import { DropZone } from './intake/drop-zone'
+import { sendFile } from './intake/send-file'
 
-/** Drop a table of response factors: that is all it takes. When its header does not say what a number means, it is asked. */
-export function CalibrationDrop({
-  rigs,
-}: {
-  readonly rigs: readonly { readonly value: string; readonly label: string }[]
-}) {
+interface Refusal {
+  readonly file: File
+  readonly sentence: string
+  /** the header does not say which way a number goes: only a person can */
+  readonly asksConvention: boolean
+}
+
+/** Drop a table of response factors: that is all it takes, once it is said from when it holds. What its header leaves open is asked. */
+export function CalibrationDrop({ rigs }: { readonly rigs: readonly SelectChoice[] }) {
   const router = useRouter()
   const [validFrom, setValidFrom] = useState('')
   const [rigId, setRigId] = useState('')
+  const [instrument, setInstrument] = useState('')
+  const [uncertainty, setUncertainty] = useState('')
   const [convention, setConvention] = useState('')
-  const [isAsked, setIsAsked] = useState(false)
-  const [answer, setAnswer] = useState<{ readonly isGood: boolean; readonly text: string } | null>(null)
+  const [held, setHeld] = useState<readonly File[]>([])
+  const [refusals, setRefusals] = useState<readonly Refusal[]>([])
+  const [kept, setKept] = useState<readonly string[]>([])
+  const [isBusy, setIsBusy] = useState(false)
+  const relative = readPercent(uncertainty)
+  const start = validFrom === '' ? null : new Date(validFrom)
+  const isReady = start !== null && !Number.isNaN(start.getTime()) && relative.ok
+  const asksConvention = refusals.some((refusal) => refusal.asksConvention)
 
-  async function send(files: readonly File[]): Promise<void> {
-    if (validFrom === '') {
-      setAnswer({ isGood: false, text: 'Say first from which day the factors hold.' })
-      return
-    }
-    const form = new FormData()
-    for (const file of files)
-      form.append(
-        'file',
-        new File([file], file.name, { type: file.type === '' ? 'application/octet-stream' : file.type }),
-      )
+  const send = async (files: readonly File[], from: Date, said: string) => {
     const query = new URLSearchParams({
-      validFrom: `${validFrom}T00:00:00Z`,
+      validFrom: from.toISOString(),
       ...(rigId === '' ? {} : { rigId }),
-      ...(convention === '' ? {} : { convention }),
+      ...(instrument.trim() === '' ? {} : { instrument: instrument.trim() }),
+      ...(said === '' ? {} : { convention: said }),
+      ...(relative.ok && relative.value !== null ? { relativeStandardUncertainty: String(relative.value) } : {}),
     })
-    try {
-      const response = await fetch(`/api/v1/calibrations/files?${query.toString()}`, { method: 'POST', body: form })
-      const body = (await response.json()) as {
-        items?: { name: string; entries: unknown[] }[]
-        detail?: string
-        issues?: { field: string }[]
+    setIsBusy(true)
+    const refused: Refusal[] = []
+    const made: string[] = []
+    for (const file of files) {
+      try {
+        const { items } = await sendFile<{ readonly items: readonly Calibration[] }>(
+          `/api/v1/calibrations/files?${query.toString()}`,
+          file,
+          { signal: new AbortController().signal, onProgress: () => {} },
+        )
+        made.push(...items.map((item) => `${item.name} with ${String(item.entries.length)} species`))
+      } catch (error) {
+        if (!(error instanceof Error)) throw error
+        refused.push({
+          file,
+          sentence: error.message,
+          asksConvention: error instanceof RequestError && error.fields.includes('convention'),
+        })
       }
-      if (response.ok) {
-        const words = (body.items ?? []).map((item) => `${item.name}, ${item.entries.length} species`).join('; ')
-        setAnswer({ isGood: true, text: `Kept: ${words}.` })
-        setIsAsked(false)
-        router.refresh()
-      } else {
-        setIsAsked(body.issues?.some((issue) => issue.field === 'convention') === true)
-        setAnswer({ isGood: false, text: body.detail ?? `The server answered ${response.status}.` })
-      }
-    } catch {
-      setAnswer({ isGood: false, text: 'The connection was lost. Drop the file again when you are back.' })
     }
+    setHeld(refused.map(({ file }) => file))
+    setRefusals(refused)
+    setKept(made)
+    setIsBusy(false)
+    if (made.length > 0) router.refresh()
+  }
+  const take = (files: readonly File[]) => {
+    setKept([])
+    setRefusals([])
+    // what was said of the last table says nothing of this one
+    setConvention('')
+    if (isReady) void send(files, start, '')
+    else setHeld(files)
   }
 
   return (
     <div className="grid gap-3">
       <div className="grid gap-3 sm:grid-cols-2">
-        <label className="block text-[14px]">
-          The factors hold from
-          <input
-            className="control"
-            type="date"
-            value={validFrom}
-            onChange={(event) => setValidFrom(event.target.value)}
-          />
-        </label>
-        <label className="block text-[14px]">
-          For the analyser of
-          <select className="control" value={rigId} onChange={(event) => setRigId(event.target.value)}>
-            <option value="">all rigs</option>
-            {rigs.map((rig) => (
-              <option key={rig.value} value={rig.value}>
-                {rig.label}
-              </option>
-            ))}
-          </select>
-        </label>
+        <TextField
+          name="dropValidFrom"
+          label="The factors hold from"
+          type="datetime-local"
+          value={validFrom}
+          hint="On your clock. Runs that start later use them."
+          error={held.length > 0 && start === null ? 'Say from when they hold; the file waits.' : undefined}
+          onChange={(event) => setValidFrom(event.target.value)}
+        />
+        <TextField
+          name="dropUncertainty"
+          label="Standard uncertainty of a factor, in %"
+          isOptional
+          inputMode="decimal"
+          hint="Used where the table has no column for it."
+          value={uncertainty}
+          error={relative.ok ? undefined : relative.sentence}
+          onChange={(event) => setUncertainty(event.target.value)}
+        />
+        <SelectField
+          name="dropRig"
+          label="For the analyser of"
+          unchosen="All rigs"
+          choices={rigs}
+          value={rigId}
+          onChange={(event) => setRigId(event.target.value)}
+        />
+        <TextField
+          name="dropInstrument"
+          label="Instrument"
+          isOptional
+          maxLength={100}
+          value={instrument}
+          onChange={(event) => setInstrument(event.target.value)}
+        />
       </div>
-      {isAsked ? (
-        <label className="block text-[14px]">
-          What a number in the table is
-          <select className="control" value={convention} onChange={(event) => setConvention(event.target.value)}>
-            <option value="">Choose, then drop the file again</option>
-            <option value="factor">factor: amount per area</option>
-            <option value="sensitivity">sensitivity: area per amount</option>
-          </select>
-        </label>
-      ) : null}
       <DropZone
         label="Drop a table of response factors here"
         hint="One row a species: its formula and its factor; a column with the relative uncertainty if there is one."
-        onFiles={(files) => void send(files)}
-      />
-      {answer === null ? null : (
-        <Notice kind={answer.isGood ? 'sound' : 'fault'} isLive title={answer.isGood ? 'Done.' : 'Not kept.'}>
-          {answer.text}
-        </Notice>
-      )}
+        accept=".csv,.txt,.tsv,.xlsx"
+        isDisabled={isBusy}
+        onFiles={take}
+      >
+        {refusals.map((refusal) => (
+          <Notice
+            key={refusal.file.name}
+            kind={refusal.asksConvention ? 'doubt' : 'fault'}
+            isLive
+            className="mt-3"
+            title={refusal.asksConvention ? 'One question.' : `${refusal.file.name} was not kept.`}
+          >
+            {refusal.sentence}
+          </Notice>
+        ))}
+        {asksConvention ? (
+          <fieldset className="m-0 mt-3 border-0 p-0">
+            <legend className="p-0 text-[14px] text-ink-2">A number in the table is</legend>
+            {[
+              { value: 'factor', label: 'a factor: amount per area' },
+              { value: 'sensitivity', label: 'a sensitivity: area per amount' },
+            ].map((choice) => (
+              <label key={choice.value} className="flex min-h-8 items-center gap-2.5 touch:min-h-11">
+                <input
+                  type="radio"
+                  name="dropConvention"
+                  value={choice.value}
+                  checked={convention === choice.value}
+                  onChange={() => setConvention(choice.value)}
+                  className="size-[18px] shrink-0 accent-(--accent) touch:size-6"
+                />
+                {choice.label}
+              </label>
+            ))}
+          </fieldset>
+        ) : null}
+        {held.length === 0 ? null : (
+          <div className="mt-3 flex flex-wrap items-center gap-2">
+            <Button
+              kind="main"
+              disabled={!isReady || (asksConvention && convention === '')}
+              busyWith={isBusy ? 'Keeping' : null}
+              onClick={() => {
+                if (start !== null) void send(held, start, convention)
+              }}
+            >
+              Keep {held.map((file) => file.name).join(', ')}
+            </Button>
+            <Button
+              disabled={isBusy}
+              onClick={() => {
+                setHeld([])
+                setRefusals([])
+              }}
+            >
+              Not this file
+            </Button>
+          </div>
+        )}
+        {kept.length === 0 ? null : (
+          <Notice kind="sound" isLive className="mt-3" title="Kept:">
+            {kept.join('; ')}. Runs that start after it are valued with it from now on.
+          </Notice>
+        )}
+      </DropZone>
     </div>
   )
 }

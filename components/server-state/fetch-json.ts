@@ -3,6 +3,8 @@ export class RequestError extends Error {
   constructor(
     message: string,
     readonly status: number,
+    /** the fields that the answer found at fault */
+    readonly fields: readonly string[] = [],
   ) {
     super(message)
     this.name = 'RequestError'

@@ -14,15 +14,24 @@ export class ConnectionLost extends Error {
   }
 }
 
-function problemSentence(text: string, status: number): string {
+/** The refusal in a problem body (RFC 9457). */
+function refusalOf(text: string, status: number): RequestError {
+  let body: unknown = null
   try {
-    const body: unknown = JSON.parse(text)
-    if (typeof body === 'object' && body !== null && 'detail' in body && typeof body.detail === 'string')
-      return body.detail
+    body = JSON.parse(text)
   } catch (error) {
     if (!(error instanceof SyntaxError)) throw error
   }
-  return status === 413 ? 'The file is larger than is taken here.' : `The server answered ${String(status)}.`
+  const fallback = status === 413 ? 'The file is larger than is taken here.' : `The server answered ${String(status)}.`
+  if (typeof body !== 'object' || body === null) return new RequestError(fallback, status)
+  const sentence = 'detail' in body && typeof body.detail === 'string' ? body.detail : fallback
+  const issues: readonly unknown[] = 'issues' in body && Array.isArray(body.issues) ? body.issues : []
+  const fields = issues.flatMap((issue) =>
+    typeof issue === 'object' && issue !== null && 'field' in issue && typeof issue.field === 'string'
+      ? [issue.field]
+      : [],
+  )
+  return new RequestError(sentence, status, fields)
 }
 
 /**
@@ -41,8 +50,7 @@ export function sendFile<T>(path: string, file: File, { signal, onProgress }: Se
     )
     request.addEventListener('loadend', () => signal.removeEventListener('abort', cancel))
     request.addEventListener('load', () => {
-      if (request.status < 200 || request.status >= 300)
-        return reject(new RequestError(problemSentence(request.responseText, request.status), request.status))
+      if (request.status < 200 || request.status >= 300) return reject(refusalOf(request.responseText, request.status))
       resolve(JSON.parse(request.responseText))
     })
     request.addEventListener('error', () => reject(new ConnectionLost()))
