@@ -1,5 +1,6 @@
 'use client'
 
+import { unstable_rethrow } from 'next/navigation'
 import { type ReactNode, useEffect, useMemo, useRef, useState, useTransition } from 'react'
 import { Button } from '@/components/ui/button'
 import { CheckField } from '@/components/ui/check-field'
@@ -117,7 +118,8 @@ export function RunForm({ choices, initial, isDraft, now, save }: RunFormProps) 
         setAnswer(next)
         if (next !== null && !next.ok) draft.keeper.goOn()
       } catch (error) {
-        // a redirect of the framework passes through here; only a failed request is told
+        // a redirect of the framework passes through here: the run is logged, and what was typed is not to be kept again
+        unstable_rethrow(error)
         draft.keeper.goOn()
         if (!(error instanceof TypeError)) throw error
         setAnswer({
