@@ -51,9 +51,9 @@ export function ProblemTable({
             cell: (row) => (row.line === null ? 'whole file' : row.line),
           },
           { key: 'column', head: 'Column', cell: (row) => row.column ?? '' },
+          { key: 'sentence', head: 'In words', cell: (row) => row.sentence, className: 'min-w-64' },
           { key: 'found', head: 'Found', cell: (row) => row.found },
-          { key: 'expected', head: 'Expected', cell: (row) => row.expected },
-          { key: 'sentence', head: 'In words', cell: (row) => row.sentence, className: 'min-w-72' },
+          { key: 'expected', head: 'Expected', cell: (row) => row.expected, className: 'min-w-44' },
         ]}
       />
       {shown.length < sorted.length ? (

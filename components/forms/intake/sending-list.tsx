@@ -1,6 +1,7 @@
 'use client'
 
 import { Button } from '@/components/ui/button'
+import { classNames } from '@/components/ui/class-names'
 import { Notice } from '@/components/ui/notice'
 import { Progress } from '@/components/ui/progress'
 import { fileSize } from './file-size'
@@ -26,7 +27,13 @@ export function SendingList({
   return (
     <ul aria-label="Files on their way" className="m-0 mt-3 grid list-none gap-2 p-0">
       {sendings.map((sending) => (
-        <li key={sending.key} className="grid grid-cols-[minmax(0,1fr)_auto] items-center gap-x-4 gap-y-1">
+        <li
+          key={sending.key}
+          className={classNames(
+            'grid items-center gap-x-4 gap-y-1.5',
+            sending.state === 'failed' ? 'sm:grid-cols-[minmax(0,1fr)_auto]' : 'grid-cols-[minmax(0,1fr)_auto]',
+          )}
+        >
           {sending.state === 'failed' ? (
             <>
               <Notice kind="fault" isLive title={`${sending.file.name} was not added.`}>

@@ -89,8 +89,8 @@ export function UploadSection({
   const isAnswered = questions.every((question) => (answers[question.key] ?? '') !== '')
   const isChanged = draft !== null || questions.length > 0
   const found = preview.data?.problems ?? upload.problems
-  // the one reason of a failure stands above already
-  const problems = upload.state === 'failed' && found.length === 1 ? [] : found
+  // the one reason of a failure stands above already, and what is only kept need not be read
+  const problems = isAttachment || (upload.state === 'failed' && found.length === 1) ? [] : found
   const isWithoutFault = upload.problems.every((problem) => problem.severity === 'note')
   const rowCount =
     preview.data?.rowCount ??
