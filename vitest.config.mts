@@ -14,7 +14,7 @@ export default defineConfig({
   test: {
     projects: [
       project('unit'),
-      project('property', { testTimeout: 120_000 }),
+      project('property', { testTimeout: 120_000, setupFiles: ['tests/support/fixed-seed.ts'] }),
       project('integration', {
         testTimeout: 120_000,
         hookTimeout: 120_000,

@@ -9,4 +9,8 @@ export const idSchema = z.string().min(1).max(64)
 export const instantSchema = z.iso.datetime({ offset: true })
 /** Reason for a change that others rely on. */
 export const reasonSchema = z.string().trim().min(3).max(500)
-export const speciesSchema = z.string().regex(/^[A-Za-z][A-Za-z0-9()+-]{0,19}$/)
+export const speciesSchema = z
+  .string()
+  .regex(/^[A-Za-z][A-Za-z0-9()+-]{0,19}$/)
+  // records are keyed by species; a name that every object answers to would be found in all of them
+  .refine((name) => !(name in {}), 'This is not the name of a species.')

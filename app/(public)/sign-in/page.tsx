@@ -31,6 +31,9 @@ export default async function SignInPage({
         No account, or a lost password: an admin sends an invitation. You have its code already:{' '}
         <Link href="/invitation">choose a password</Link>.
       </p>
+      <p className="prose mt-2 text-[13px] text-ink-2">
+        Every formula is held against published values: <Link href="/validation">see them computed</Link>.
+      </p>
     </>
   )
 }

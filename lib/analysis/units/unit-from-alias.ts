@@ -108,7 +108,7 @@ interface Product {
 
 // Product of powers of table words, or null when a word is not in the table or the expression can be read two ways.
 function productOf(text: string): Product | null {
-  const expression = EXPRESSION_ALIASES[text] ?? text
+  const expression = (Object.hasOwn(EXPRESSION_ALIASES, text) ? EXPRESSION_ALIASES[text] : undefined) ?? text
   const sides = expression.split('/')
   const parts: { word: UnitWord; power: number }[] = []
   for (const [index, side] of sides.entries()) {

@@ -84,6 +84,10 @@ describe('numbers come back from every writing', () => {
       ),
     )
   })
+  it.each(['valueOf', 'constructor', 'toString', '__proto__', 'hasOwnProperty'])('takes "%s" for no unit', (word) => {
+    expect(parseQuantity(`1 ${word}`, 'mass').ok).toBe(false)
+    expect(parseQuantity(`0${word}`, 'volume-flow').ok).toBe(false)
+  })
   it('never gives a number that is not finite, nor throws, whatever is typed', () => {
     fc.assert(
       fc.property(
