@@ -23,6 +23,7 @@ import {
 const FIRST_ROWS = 5
 
 interface ColumnEditorProps {
+  readonly fileName: string
   readonly detection: Detection
   readonly specification: ColumnMapSpecification
   readonly species: readonly string[]
@@ -31,7 +32,7 @@ interface ColumnEditorProps {
 }
 
 /** The first rows as they stand in the file, and above each column what is made of it. On a phone, one column after the other. */
-export function ColumnEditor({ detection, specification, species, isDisabled, onChange }: ColumnEditorProps) {
+export function ColumnEditor({ fileName, detection, specification, species, isDisabled, onChange }: ColumnEditorProps) {
   const isNarrow = useMediaQuery('(width < 40rem)')
   const listId = useId()
   const [isLong, setIsLong] = useState(false)
@@ -77,9 +78,9 @@ export function ColumnEditor({ detection, specification, species, isDisabled, on
           ))}
         </ul>
       ) : (
-        <div className="relative overflow-x-auto pb-1" role="region" aria-label="Columns of the file" tabIndex={0}>
+        <div className="relative overflow-x-auto pb-1" role="region" aria-label={`Columns of ${fileName}`} tabIndex={0}>
           <table className="border-collapse text-[13px]">
-            <caption className="sr-only">First rows of the file with what each column means</caption>
+            <caption className="sr-only">First rows of {fileName} with what each column means</caption>
             <thead>
               <tr>
                 <RowName>In the file</RowName>
@@ -228,7 +229,7 @@ function columnFields({
       >
         <option value="">not said yet</option>
         <option value="absolute">absolute</option>
-        <option value="gauge">gauge, above the room</option>
+        <option value="gauge">gauge</option>
       </select>
     ) : needs.flowReference ? (
       <FlowReferenceField name={name} column={column} isDisabled={isDisabled} change={change} />

@@ -30,9 +30,9 @@ export function ProblemTable({
   const shown = isWhole ? sorted : sorted.slice(0, FIRST)
   return (
     <div className="mt-4">
-      <h4 className="mb-1 font-head text-[15px] font-[560]">
+      <h3 className="mb-1">
         {problems.length === 1 ? 'One thing to know' : `${problems.length.toLocaleString('en')} things to know`}
-      </h4>
+      </h3>
       <DataTable
         caption={`Problems of ${fileName}`}
         rows={shown}

@@ -268,6 +268,7 @@ export function UploadSection({
               <>
                 <h3 className="mt-4 mb-1">Columns</h3>
                 <ColumnEditor
+                  fileName={upload.fileName}
                   detection={detection}
                   specification={draft ?? detection.proposal}
                   species={species}
