@@ -1,7 +1,6 @@
-import Link from 'next/link'
 import { routeOf } from '@/app/_route-of'
 import { RunsTable } from '@/components/run/runs-table'
-import { DataTable } from '@/components/ui/data-table'
+import { CampaignsTable } from '@/components/campaign/campaigns-table'
 import { EmptyState } from '@/components/ui/empty-state'
 import { LinkButton } from '@/components/ui/link-button'
 import { PageBody } from '@/components/ui/page-body'
@@ -127,30 +126,7 @@ export default async function StartPage() {
         ) : null}
         {campaigns.length > 0 ? (
           <Section title="My campaigns">
-            <DataTable
-              caption="My campaigns"
-              rows={campaigns}
-              rowKey={(row) => row.id}
-              columns={[
-                {
-                  key: 'name',
-                  head: 'Campaign',
-                  isRowHead: true,
-                  cell: (row) => <Link href={routeOf(`/campaigns/${row.id}`)}>{row.name}</Link>,
-                },
-                { key: 'laboratory', head: 'Laboratory', cell: (row) => row.laboratory },
-                { key: 'samples', head: 'Samples', isNumber: true, cell: (row) => row.sampleCount },
-                { key: 'runs', head: 'Runs', isNumber: true, cell: (row) => row.runCount },
-                {
-                  key: 'waiting',
-                  head: 'Waiting',
-                  unit: 'for a decision',
-                  isNumber: true,
-                  cell: (row) => row.waitingCount,
-                },
-                { key: 'role', head: 'My part', cell: (row) => row.myRole },
-              ]}
-            />
+            <CampaignsTable campaigns={campaigns} caption="My campaigns" />
           </Section>
         ) : null}
       </PageBody>

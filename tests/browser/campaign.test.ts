@@ -1,8 +1,8 @@
-import { AxeBuilder } from '@axe-core/playwright'
 import { type Page } from 'playwright-core'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { DEMO_PASSWORD, demoPeople } from '@/db/demo/demo-campaign'
 import { openBrowser, signIn, type BrowserSession } from '@/tests/support/browser'
+import { seriousFaults, widthAt360 } from '@/tests/support/page-checks'
 import { startServer, type DemoServer } from '@/tests/support/demo-server'
 
 let server: DemoServer
@@ -28,32 +28,6 @@ async function writeRemark(page: Page, sampleCode: string, remark: string): Prom
   await cell.dblclick()
   await cell.locator('input').fill(remark)
   await page.keyboard.press('Enter')
-}
-
-async function axeFaults(page: Page): Promise<string[]> {
-  const found: string[] = []
-  for (const colorScheme of ['light', 'dark'] as const) {
-    await page.emulateMedia({ colorScheme })
-    const { violations } = await new AxeBuilder({ page }).analyze()
-    found.push(
-      ...violations
-        .filter((one) => one.impact === 'serious' || one.impact === 'critical')
-        .map(
-          (one) =>
-            `${page.url()} ${colorScheme} ${one.id}: ${one.nodes.map((node) => node.target.join(' ')).join(', ')}`,
-        ),
-    )
-  }
-  await page.emulateMedia({ colorScheme: 'light' })
-  return found
-}
-
-async function widthAt360(page: Page): Promise<number> {
-  const size = page.viewportSize() ?? { width: 1440, height: 900 }
-  await page.setViewportSize({ width: 360, height: 780 })
-  const width = await page.evaluate(() => document.documentElement.scrollWidth)
-  await page.setViewportSize(size)
-  return width
 }
 
 beforeAll(async () => {
@@ -185,7 +159,7 @@ describe('every page of a campaign', () => {
     for (const address of [campaign, `${campaign}/slopes`, `${campaign}/runs`, run]) {
       await page.goto(address)
       await page.getByRole('main').locator('table:visible, .ag-row').first().waitFor()
-      expect(await axeFaults(page)).toEqual([])
+      expect(await seriousFaults(page)).toEqual([])
       expect(await widthAt360(page), `${address} at 360 px`).toBeLessThanOrEqual(360)
     }
     const policy = (fault: string) => fault.includes('Content Security Policy') || fault.includes('hydrat')

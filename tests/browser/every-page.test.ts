@@ -1,9 +1,9 @@
 import { readdirSync } from 'node:fs'
 import path from 'node:path'
-import { AxeBuilder } from '@axe-core/playwright'
 import { afterAll, beforeAll, expect, test } from 'vitest'
 import { DEMO_PASSWORD, demoPeople } from '@/db/demo/demo-campaign'
 import { openBrowser, signIn, type BrowserSession } from '@/tests/support/browser'
+import { seriousFaults, widthAt360 } from '@/tests/support/page-checks'
 import { startServer, type DemoServer } from '@/tests/support/demo-server'
 import { demoClient } from '@/tests/support/demo-client'
 
@@ -45,22 +45,13 @@ async function look(page: string): Promise<string[]> {
   const address = page.replaceAll(/\[(\w+)\]/g, (_whole, name: string) => ids[name] ?? '')
   const faults: string[] = []
   const known = session.faults.length
-  for (const colorScheme of ['light', 'dark'] as const) {
-    await session.page.emulateMedia({ colorScheme })
-    const answer = await session.page.goto(`${server.origin}${address}`)
-    if (answer?.status() !== 200) faults.push(`${address} answered ${answer?.status()}`)
-    await session.page.locator('h1').first().waitFor({ timeout: 20_000 })
-    await session.page.waitForTimeout(400)
-    const { violations } = await new AxeBuilder({ page: session.page }).analyze()
-    for (const one of violations)
-      if (one.impact === 'serious' || one.impact === 'critical')
-        faults.push(`${colorScheme} ${one.id}: ${one.nodes.map((node) => node.target.join(' ')).join(', ')}`)
-  }
-  await session.page.setViewportSize({ width: 360, height: 780 })
-  await session.page.waitForTimeout(200)
-  const width = await session.page.evaluate(() => document.documentElement.scrollWidth)
+  const answer = await session.page.goto(`${server.origin}${address}`)
+  if (answer?.status() !== 200) faults.push(`${address} answered ${answer?.status()}`)
+  await session.page.locator('h1').first().waitFor({ timeout: 20_000 })
+  await session.page.waitForTimeout(400)
+  faults.push(...(await seriousFaults(session.page)))
+  const width = await widthAt360(session.page)
   if (width > 360) faults.push(`${width} px wide at 360`)
-  await session.page.setViewportSize({ width: 1440, height: 900 })
   return [...faults, ...session.faults.slice(known)]
 }
 

@@ -1,11 +1,10 @@
 import { readFileSync } from 'node:fs'
 import path from 'node:path'
-import { AxeBuilder } from '@axe-core/playwright'
-import { type Page } from 'playwright-core'
 import { afterAll, beforeAll, expect, test } from 'vitest'
 import { DEMO_PASSWORD, demoPeople } from '@/db/demo/demo-campaign'
 import truth from '@/tests/reference/methanation-truth.json'
 import { openBrowser, signIn, type BrowserSession } from '@/tests/support/browser'
+import { seriousFaults } from '@/tests/support/page-checks'
 import { startServer, type DemoServer } from '@/tests/support/demo-server'
 
 // One way through the product as people take it: log a run, hand its files in, see its points, compare, download; and what each role is refused.
@@ -55,13 +54,6 @@ const api = async (role: string, route: string, init: RequestInit = {}) =>
     ...init,
     headers: { authorization: `Bearer ${await tokenOf(role)}`, ...init.headers },
   })
-
-async function seriousFaults(page: Page): Promise<string[]> {
-  const { violations } = await new AxeBuilder({ page }).analyze()
-  return violations
-    .filter((one) => one.impact === 'serious' || one.impact === 'critical')
-    .map((one) => `${page.url()} ${one.id}: ${one.nodes.map((node) => node.target.join(' ')).join(', ')}`)
-}
 
 beforeAll(async () => {
   server = await startServer({ data: 'demo' })

@@ -1,10 +1,9 @@
-import { AxeBuilder } from '@axe-core/playwright'
 import { readdirSync } from 'node:fs'
 import { request as httpRequest } from 'node:http'
 import path from 'node:path'
-import { type Page } from 'playwright-core'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { openBrowser, type BrowserSession } from '@/tests/support/browser'
+import { seriousFaults, widthAt360 } from '@/tests/support/page-checks'
 import { startServer, type DemoServer } from '@/tests/support/demo-server'
 
 let server: DemoServer
@@ -22,32 +21,6 @@ afterAll(async () => {
 
 const ADMIN = { name: 'Canary Ada', email: 'canary-ada@example.test', password: 'kettle orbit marzipan tundra' }
 const TOM = { name: 'Canary Tom', email: 'canary-tom@example.test', password: 'lantern walrus cobalt thimble' }
-
-async function seriousFaults(page: Page): Promise<string[]> {
-  const found: string[] = []
-  for (const colorScheme of ['light', 'dark'] as const) {
-    await page.emulateMedia({ colorScheme })
-    const { violations } = await new AxeBuilder({ page }).analyze()
-    found.push(
-      ...violations
-        .filter((one) => one.impact === 'serious' || one.impact === 'critical')
-        .map(
-          (one) =>
-            `${page.url()} ${colorScheme}: ${one.id} ${one.nodes.map((node) => node.target.join(' ')).join(', ')}`,
-        ),
-    )
-  }
-  await page.emulateMedia({ colorScheme: 'light' })
-  return found
-}
-
-async function widthAt360(page: Page): Promise<number> {
-  const size = page.viewportSize() ?? { width: 1440, height: 900 }
-  await page.setViewportSize({ width: 360, height: 780 })
-  const width = await page.evaluate(() => document.documentElement.scrollWidth)
-  await page.setViewportSize(size)
-  return width
-}
 
 interface Answer {
   readonly status: number

@@ -67,7 +67,7 @@ module.exports = {
     {
       name: 'only-access-reaches-db',
       severity: 'error',
-      from: { pathNot: '^(db|lib/access|tests)/|^instrumentation-node|^drizzle\\.config\\.ts$' },
+      from: { pathNot: '^(db|lib/access|tests|scripts)/|^instrumentation-node|^drizzle\\.config\\.ts$' },
       to: { path: '^db/' },
     },
     {

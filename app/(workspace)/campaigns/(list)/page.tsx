@@ -1,6 +1,4 @@
-import Link from 'next/link'
-import { routeOf } from '@/app/_route-of'
-import { DataTable } from '@/components/ui/data-table'
+import { CampaignsTable } from '@/components/campaign/campaigns-table'
 import { EmptyState } from '@/components/ui/empty-state'
 import { LinkButton } from '@/components/ui/link-button'
 import { PageBody } from '@/components/ui/page-body'
@@ -28,32 +26,7 @@ export default async function CampaignsPage() {
             A campaign compares samples in one reaction under one method. A lead makes it and asks people in.
           </EmptyState>
         ) : (
-          <DataTable
-            caption="Campaigns"
-            rows={campaigns}
-            rowKey={(row) => row.id}
-            columns={[
-              { key: 'code', head: 'Code', className: 'whitespace-nowrap', cell: (row) => row.code },
-              {
-                key: 'name',
-                head: 'Campaign',
-                isRowHead: true,
-                cell: (row) => <Link href={routeOf(`/campaigns/${row.id}`)}>{row.name}</Link>,
-              },
-              { key: 'laboratory', head: 'Laboratory', cell: (row) => row.laboratory },
-              { key: 'samples', head: 'Samples', isNumber: true, cell: (row) => row.sampleCount },
-              { key: 'runs', head: 'Runs', isNumber: true, cell: (row) => row.runCount },
-              {
-                key: 'waiting',
-                head: 'Waiting',
-                unit: 'for a decision',
-                isNumber: true,
-                cell: (row) => row.waitingCount,
-              },
-              { key: 'role', head: 'My part', cell: (row) => row.myRole },
-              { key: 'state', head: 'State', cell: (row) => (row.closedAt === null ? 'open' : 'closed') },
-            ]}
-          />
+          <CampaignsTable campaigns={campaigns} caption="Campaigns" />
         )}
       </PageBody>
     </>
