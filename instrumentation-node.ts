@@ -3,6 +3,7 @@ import { closeDatabase, getOpenDatabase } from './db/client'
 import { maintainDatabase } from './db/maintain'
 import { deleteStagedReadingSets } from './db/mutations/readings'
 import { ensureSetUpCode } from './lib/access/set-up'
+import { sweepStoredFiles } from './lib/access/sweep-files'
 import { stampCallerAddress } from './lib/auth/stamp-caller-address'
 import { environment } from './lib/environment'
 
@@ -20,6 +21,8 @@ async function sweep(): Promise<void> {
   const { database, backEnd } = await getOpenDatabase()
   const before = new Date(Date.now() - (backEnd === 'thread' ? 0 : DAY_MS))
   await database.transaction((tx) => deleteStagedReadingSets(tx, before))
+  // with a server behind it, another process may be taking a file in just now
+  if (backEnd === 'thread') await sweepStoredFiles()
 }
 
 /** Now and four times a day. Beside the requests: nobody waits for it, and a fault in it is no fault of theirs. */

@@ -1,9 +1,9 @@
 import 'server-only'
-import { and, asc, eq } from 'drizzle-orm'
+import { and, asc, eq, isNotNull, isNull } from 'drizzle-orm'
 import { alias } from 'drizzle-orm/pg-core'
 import { detectionSchema, problemSchema, type Upload, type UploadState } from '@/lib/domain/intake'
 import { type Executor } from '../executor'
-import { uploads, users } from '../schema'
+import { calibrations, columnMaps, uploads, users } from '../schema'
 import { inScope, type Scope } from '../scope'
 
 const author = alias(users, 'author')
@@ -78,4 +78,18 @@ export async function selectUploadIdByHash(db: Executor, runId: string, sha256: 
     .from(uploads)
     .where(and(eq(uploads.runId, runId), eq(uploads.sha256, sha256)))
   return rows[0]?.id ?? null
+}
+
+/** Hash of every file that a record names: of runs, of calibrations, of column maps. Erased ones are named by no bytes any more. */
+export async function selectKnownFileHashes(db: Executor): Promise<string[]> {
+  const ofRuns = await db.selectDistinct({ sha256: uploads.sha256 }).from(uploads).where(isNull(uploads.erasedAt))
+  const ofCalibrations = await db
+    .selectDistinct({ sha256: calibrations.fileSha256 })
+    .from(calibrations)
+    .where(isNotNull(calibrations.fileSha256))
+  const ofMaps = await db
+    .selectDistinct({ sha256: columnMaps.sampleFileSha256 })
+    .from(columnMaps)
+    .where(isNotNull(columnMaps.sampleFileSha256))
+  return [...new Set([...ofRuns, ...ofCalibrations, ...ofMaps].flatMap((row) => row.sha256 ?? []))]
 }

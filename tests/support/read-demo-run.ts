@@ -27,7 +27,8 @@ const ANSWERS = {
   basis: 'dry',
 } as const
 
-async function channelsOf(name: string): Promise<Map<string, Float64Array>> {
+/** Channels of one demo file by the product's own readers, its questions answered as its laboratory would. */
+export async function readDemoChannels(name: string): Promise<Map<string, Float64Array>> {
   const file = path.join(FILES, name)
   const { detections, problems } = await detectFile(file, name, CONTEXT)
   const found = detections[0]
@@ -52,8 +53,8 @@ const withPrefix = (channels: Map<string, Float64Array>, prefix: string) =>
 export async function readDemoRun(code: string, change: Partial<ReductionMethod> = {}): Promise<RunInput> {
   const run = demoRuns.find((entry) => entry.code === code)
   if (run === undefined) throw new Error(`no demo run ${code}`)
-  const log = await channelsOf(run.logFile)
-  const analyser = await channelsOf(run.analyserFile)
+  const log = await readDemoChannels(run.logFile)
+  const analyser = await readDemoChannels(run.analyserFile)
   const empty = new Float64Array()
   const u = truth.relative_standard_uncertainty
   const sites = demoSamples.find((sample) => sample.code === run.sampleCode)?.siteDensityMolPerKg ?? null

@@ -55,7 +55,7 @@ describe('ranks under uncertainty', () => {
   })
 
   test.each([0.3, 1, 3])(
-    '90 %% rank intervals hold the true rank in 88 %% of cases or more, spread %s times the error',
+    'nine-in-ten rank intervals hold the true rank in 88 of 100 cases or more, spread %s times the error',
     (spread) => {
       const random = createRandomStream(99)
       let held = 0
