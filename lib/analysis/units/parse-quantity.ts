@@ -172,7 +172,7 @@ function molarFlowReading(value: number, alias: string, options: QuantityOptions
     ok: true,
     valueSi,
     unitLabel: unit.label,
-    said: `${plain(value)} ${unit.label}, counted at ${stateInWords(reference)} = ${plain(valueSi * 1e6)} µmol/s`,
+    said: `${plain(value)} ${unit.label}, counted at ${stateInWords(reference)} = ${plain(Number((valueSi * 1e6).toPrecision(5)))} µmol/s`,
     flowReference: reference,
   }
 }
