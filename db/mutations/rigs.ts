@@ -104,6 +104,8 @@ export async function insertColumnMap(tx: Transaction, map: NewColumnMap & Made)
     rigId: map.rigId,
     instrument: map.instrument,
     number: (row?.largest ?? 0) + 1,
+    // the time of this statement, under the lock: that of the transaction's start could be before that of a lower number
+    createdAt: sql`clock_timestamp()`,
     fingerprint: map.fingerprint,
     specification: map.specification,
     sampleFileSha256: map.sampleFileSha256,
