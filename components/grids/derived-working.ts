@@ -1,16 +1,8 @@
-import { type Working, type WorkingSymbol } from '@/lib/analysis/working'
+import { type Working } from '@/lib/analysis/working'
+import { plainSymbol } from '@/lib/analysis/working-symbols'
 import { type Ranking, type RankingRow } from '@/lib/domain/ranking'
 import { formatFixed } from '@/components/numbers/format-fixed'
 import { speciesLabel } from '@/components/numbers/species-label'
-
-const plain = (symbol: string, meaning: string, value: number | null, unit = ''): WorkingSymbol => ({
-  symbol,
-  meaning,
-  value,
-  unit,
-  standardUncertainty: null,
-  uncertaintyKind: 'none',
-})
 
 function rankWorking(ranking: Ranking, row: RankingRow): Working | null {
   if (row.rank === null || row.rankInterval === null) return null
@@ -20,13 +12,13 @@ function rankWorking(ranking: Ranking, row: RankingRow): Working | null {
     title: `Rank of ${row.sampleCode}`,
     formula: 'rank in a draw = 1 + number of samples whose drawn value is larger',
     symbols: [
-      plain('N', 'draws', ranking.draws),
-      plain('seed', 'start of the random numbers: the same seed gives the same ranks', ranking.seed),
-      plain('P_best', 'share of the draws in which it comes first', row.probabilityBest),
-      plain('r_low', 'best rank in the middle nine draws of ten', row.rankInterval[0]),
-      plain('r_high', 'worst rank in the middle nine draws of ten', row.rankInterval[1]),
+      plainSymbol('N', 'draws', ranking.draws),
+      plainSymbol('seed', 'start of the random numbers: the same seed gives the same ranks', ranking.seed),
+      plainSymbol('P_best', 'share of the draws in which it comes first', row.probabilityBest),
+      plainSymbol('r_low', 'best rank in the middle nine draws of ten', row.rankInterval[0]),
+      plainSymbol('r_high', 'worst rank in the middle nine draws of ten', row.rankInterval[1]),
     ],
-    result: plain('rank', `by the ${quantity} at ${celsius} °C itself`, row.rank),
+    result: plainSymbol('rank', `by the ${quantity} at ${celsius} °C itself`, row.rank),
     assumptions: [
       'Each draw moves every sample by its own uncertainty, and all samples together by the errors they share.',
     ],
@@ -46,8 +38,8 @@ function selectivityWorking(ranking: Ranking, row: RankingRow, species: string):
   return {
     title: `Selectivity to ${speciesLabel(species)} of ${row.sampleCode}`,
     formula: 'S = S_1 + (X − X_1)/(X_2 − X_1) · (S_2 − S_1)',
-    symbols: [plain('X', 'target conversion of the method', target === undefined ? null : target * 100, '%')],
-    result: plain('S', `share of the converted carbon found as ${speciesLabel(species)}`, value * 100, 'C-mol %'),
+    symbols: [plainSymbol('X', 'target conversion of the method', target === undefined ? null : target * 100, '%')],
+    result: plainSymbol('S', `share of the converted carbon found as ${speciesLabel(species)}`, value * 100, 'C-mol %'),
     assumptions: [
       'At equal conversion for all samples, by a straight line between the two neighbouring holds; mean of the runs in the line.',
     ],

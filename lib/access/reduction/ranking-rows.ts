@@ -9,12 +9,12 @@ import { type Estimate } from '../../analysis/estimate'
 import { type SiteCountInput } from '../../analysis/reduction/run-input'
 import { type ArrheniusFit, type Point, type RunReduction } from '../../analysis/reduction/run-reduction'
 import { rankSamples, type RankResult } from '../../analysis/ranking/rank-samples'
-import { intervalOf, totalUncertainty } from '../../analysis/total-uncertainty'
-import { type Working, type WorkingSymbol } from '../../analysis/working'
+import { intervalOf } from '../../analysis/total-uncertainty'
 import { type CampaignSample } from '../../domain/campaign'
 import { type MethodSettings } from '../../domain/method'
 import { type RankingRow, type RankingRun } from '../../domain/ranking'
 import { type RunDecision, type RunState } from '../../domain/run'
+import { exponential, rowWorkings, type SampleNumbers } from './ranking-row-workings'
 import { type ReducedRun } from './reduce-runs'
 
 export interface RankingRequest {
@@ -93,20 +93,6 @@ function withBetweenLoading(estimate: Estimate, standardDeviation: number): Esti
   }
 }
 
-/** From the logarithm of a positive number to the number: parts become relative ones times the value. */
-function exponential(lnEstimate: Estimate): Estimate {
-  const value = exp(lnEstimate.value)
-  const own = lnEstimate.randomStandardUncertainty
-  return {
-    value,
-    randomStandardUncertainty: own === null ? null : own * value,
-    degreesOfFreedom: lnEstimate.degreesOfFreedom,
-    sharedEffects: Object.fromEntries(
-      Object.entries(lnEstimate.sharedEffects).map(([id, effect]) => [id, effect * value]),
-    ),
-  }
-}
-
 function expInterval(lnEstimate: Estimate, level: number): readonly [number, number] | null {
   const interval = intervalOf(lnEstimate, level)
   return interval === null ? null : [exp(interval[0]), exp(interval[1])]
@@ -170,146 +156,6 @@ function selectivityAtConversion(points: readonly Point[], target: number): Reco
     return result
   }
   return {}
-}
-
-function symbolOf(symbol: string, meaning: string, estimate: Estimate, unit: string, factor: number): WorkingSymbol {
-  const total = totalUncertainty(estimate)
-  return {
-    symbol,
-    meaning,
-    value: estimate.value * factor,
-    unit,
-    standardUncertainty: total === null ? null : total.standardUncertainty * factor,
-    uncertaintyKind: total === null ? 'none' : Object.keys(estimate.sharedEffects).length > 0 ? 'shared' : 'own',
-  }
-}
-
-const plain = (symbol: string, meaning: string, value: number | null, unit: string): WorkingSymbol => ({
-  symbol,
-  meaning,
-  value,
-  unit,
-  standardUncertainty: null,
-  uncertaintyKind: 'none',
-})
-
-interface SampleNumbers {
-  readonly fit: ArrheniusFit
-  readonly lnRate: Estimate
-  readonly lnTurnover: Estimate | null
-  readonly activationEnergy: Estimate
-  readonly lnPreExponential: Estimate
-  readonly loadingCount: number
-}
-
-function rowWorkings(
-  sampleCode: string,
-  numbers: SampleNumbers,
-  sites: SiteCountInput | null,
-  settings: MethodSettings,
-  others: {
-    readonly runs: readonly RunReduction[]
-    readonly temperatureForConversionK: number | null
-    readonly carbonBalance: number | null
-    readonly decayPerH: number | null
-  },
-): Record<string, Working> {
-  const { fit, lnRate, lnTurnover, loadingCount } = numbers
-  const base = fit.workings
-  const beds = `${loadingCount} packed bed${loadingCount === 1 ? '' : 's'}`
-  const spread = (share: number, of: string) =>
-    `Spread between packed beds, ${Math.round(share * 1000) / 10} % of ${of} a bed over ${beds}, is in the uncertainty (method setting; common practice).`
-  const workings: Record<string, Working> = {}
-  const energy = base['activationEnergyJPerMol']
-  if (energy !== undefined)
-    workings['activationEnergyJPerMol'] = {
-      ...energy,
-      result: symbolOf('E_a', energy.result.meaning, numbers.activationEnergy, 'kJ mol⁻¹', 1e-3),
-      notes: [spread(settings.betweenLoadingActivationEnergy, 'E_a'), ...energy.notes],
-    }
-  const lnA = base['lnPreExponential']
-  if (lnA !== undefined)
-    workings['lnPreExponential'] = {
-      ...lnA,
-      result: symbolOf('ln A', lnA.result.meaning, numbers.lnPreExponential, 'ln(mol kg⁻¹ s⁻¹)', 1),
-      notes: [spread(settings.betweenLoadingRate, 'the rate'), ...lnA.notes],
-    }
-  const rate = base['lnRateAtReference']
-  const rateResult = symbolOf('r', 'rate at the reference', exponential(lnRate), 'µmol g⁻¹ s⁻¹', 1e3)
-  if (rate !== undefined) {
-    workings['rateMolPerKgS'] = {
-      ...rate,
-      result: rateResult,
-      notes: [spread(settings.betweenLoadingRate, 'the rate'), ...rate.notes],
-    }
-    if (lnTurnover !== null && sites !== null)
-      workings['turnoverFrequencyPerS'] = {
-        ...rate,
-        title: `Turnover frequency of ${sampleCode} at the reference`,
-        formula: 'TOF = r / n_s',
-        symbols: [
-          rateResult,
-          {
-            ...plain('n_s', `surface sites by ${sites.method}`, sites.molPerKg * 1e3, 'µmol g⁻¹'),
-            standardUncertainty: sites.molPerKg * sites.relativeStandardUncertainty * 1e3,
-            uncertaintyKind: 'shared',
-          },
-        ],
-        result: symbolOf('TOF', 'turnover frequency', exponential(lnTurnover), 's⁻¹', 1),
-        source: 'M. Boudart, Chem. Rev. 95 (1995) 661 (turnover rates)',
-        notes: [
-          'The site count is one error for all temperatures: it moves ln A and the turnover frequency, not E_a.',
-          spread(settings.betweenLoadingRate, 'the rate'),
-        ],
-      }
-  }
-  const codes = others.runs.map((run) => run.runCode)
-  const common = {
-    assumptions: [],
-    source: 'common practice',
-    from: codes.map((code) => `${code}: points in the line`),
-    leftOut: [],
-    notes: [],
-  }
-  if (others.temperatureForConversionK !== null)
-    workings['temperatureForConversionK'] = {
-      ...common,
-      title: `Temperature at which ${sampleCode} converts ${settings.targetConversion * 100} %`,
-      formula: '1/T = 1/T_1 + (ln X − ln X_1)/(ln X_2 − ln X_1) · (1/T_2 − 1/T_1)',
-      symbols: [plain('X', 'target conversion of the method', settings.targetConversion * 100, '%')],
-      result: plain('T', 'temperature, at the run’s own contact time', others.temperatureForConversionK - 273.15, '°C'),
-      assumptions: [
-        'Between the two neighbouring holds ln X is straight in 1/T; nothing is said outside the measured range.',
-      ],
-    }
-  if (others.carbonBalance !== null)
-    workings['carbonBalance'] = {
-      ...common,
-      title: `Carbon balance of ${sampleCode}`,
-      formula: 'B_C = Σ n_C F_out / Σ n_C F_in',
-      symbols: others.runs.map((run) => plain('B_C', `mean of ${run.runCode}`, run.meanCarbonBalance, '')),
-      result: plain('B_C', 'mean of the runs in the line', others.carbonBalance, ''),
-    }
-  if (others.decayPerH !== null)
-    workings['decayPerH'] = {
-      ...common,
-      title: `Loss of activity of ${sampleCode}`,
-      formula: 'k_d = −ln(r_returned / r_first) / Δt',
-      symbols: others.runs.flatMap((run) =>
-        run.returnedHold === null
-          ? []
-          : [
-              plain(
-                'r_returned / r_first',
-                `${run.runCode}, hold ${run.returnedHold.holdNumber} against hold ${run.returnedHold.returnsTo}`,
-                run.returnedHold.ratio.value,
-                '',
-              ),
-            ],
-      ),
-      result: plain('k_d', 'loss per hour on stream, mean of the runs', others.decayPerH * 100, '% h⁻¹'),
-    }
-  return workings
 }
 
 const emptyNumbers = {

@@ -2,28 +2,11 @@ import exp from '@stdlib/math-base-special-exp'
 import { type Estimate } from '../estimate'
 import { numberText } from '../number-text'
 import { type ArrheniusFit } from '../reduction/run-reduction'
-import { totalUncertainty } from '../total-uncertainty'
-import { type Working, type WorkingSymbol } from '../working'
+import { type Working } from '../working'
+import { estimateSymbol, plainSymbol } from '../working-symbols'
 
 const LINE_SOURCE =
   'M. Schwaab, J. C. Pinto, Chem. Eng. Sci. 62 (2007) 2750; N. R. Draper, H. Smith, Applied Regression Analysis, 3rd edition, 1998, chapters 1 and 9'
-
-function symbolOf(symbol: string, meaning: string, estimate: Estimate, unit: string, factor: number): WorkingSymbol {
-  const total = totalUncertainty(estimate)
-  const hasShared = Object.keys(estimate.sharedEffects).length > 0
-  return {
-    symbol,
-    meaning,
-    value: estimate.value * factor,
-    unit,
-    standardUncertainty: total === null ? null : total.standardUncertainty * factor,
-    uncertaintyKind: total === null ? 'none' : hasShared ? 'shared' : 'own',
-  }
-}
-
-function plain(symbol: string, meaning: string, value: number | null, unit: string): WorkingSymbol {
-  return { symbol, meaning, value, unit, standardUncertainty: null, uncertaintyKind: 'none' }
-}
 
 // What the uncertainty consists of, largest part first.
 function partsInWords(estimate: Estimate, factor: number, unit: string): string[] {
@@ -93,19 +76,25 @@ export function arrheniusWorkings(
     interval === null
       ? []
       : [`${level} interval ${numberText(interval[0] * factor, 5)} to ${numberText(interval[1] * factor, 5)} ${name}.`]
-  const Ea = symbolOf('E_a', 'apparent activation energy', fit.activationEnergyJPerMol, 'kJ mol⁻¹', 1e-3)
-  const lnA = symbolOf('ln A', 'logarithm of the pre-exponential factor', fit.lnPreExponential, unit, 1)
-  const centre = symbolOf('ln r_c', `ln of the ${quantityName} at the centre of the line`, fit.lnRateAtCentre, unit, 1)
-  const centreT = plain(
+  const Ea = estimateSymbol('E_a', 'apparent activation energy', fit.activationEnergyJPerMol, 'kJ mol⁻¹', 1e-3)
+  const lnA = estimateSymbol('ln A', 'logarithm of the pre-exponential factor', fit.lnPreExponential, unit, 1)
+  const centre = estimateSymbol(
+    'ln r_c',
+    `ln of the ${quantityName} at the centre of the line`,
+    fit.lnRateAtCentre,
+    unit,
+    1,
+  )
+  const centreT = plainSymbol(
     'T_c',
     'weighted harmonic mean temperature, where level and slope are uncorrelated',
     fit.centreTemperatureK,
     'K',
   )
-  const gas = plain('R', 'molar gas constant', 8.31446261815324, 'J mol⁻¹ K⁻¹')
+  const gas = plainSymbol('R', 'molar gas constant', 8.31446261815324, 'J mol⁻¹ K⁻¹')
   const shape = [
-    plain('n', 'points in the line', used.length, ''),
-    plain('s', 'residual standard deviation of ln r', fit.residualStandardDeviation, ''),
+    plainSymbol('n', 'points in the line', used.length, ''),
+    plainSymbol('s', 'residual standard deviation of ln r', fit.residualStandardDeviation, ''),
   ]
   const curvatureNote =
     fit.curvature === null
@@ -147,10 +136,10 @@ export function arrheniusWorkings(
         Ea,
         gas,
         centreT,
-        plain('T_ref', 'reference temperature', fit.referenceTemperatureK, 'K'),
-        plain('r', quantityName, exp(fit.lnRateAtReference.value), isRate ? 'mol kg⁻¹ s⁻¹' : 's⁻¹'),
+        plainSymbol('T_ref', 'reference temperature', fit.referenceTemperatureK, 'K'),
+        plainSymbol('r', quantityName, exp(fit.lnRateAtReference.value), isRate ? 'mol kg⁻¹ s⁻¹' : 's⁻¹'),
       ],
-      result: symbolOf('ln r', `ln of the ${quantityName} at the reference`, fit.lnRateAtReference, unit, 1),
+      result: estimateSymbol('ln r', `ln of the ${quantityName} at the reference`, fit.lnRateAtReference, unit, 1),
       ...common,
       notes: [
         ...intervalWords(fit.intervals.lnRateAtReference, 1, unit),

@@ -1,7 +1,8 @@
 import { type Estimate } from '../estimate'
 import { numberText } from '../number-text'
 import { totalUncertainty } from '../total-uncertainty'
-import { type Working, type WorkingSymbol } from '../working'
+import { type Working } from '../working'
+import { estimateSymbol, plainSymbol } from '../working-symbols'
 import { type HoldConditions } from './hold-conditions'
 import { type HoldConversion, type Inlet } from './conversion'
 import { type GasAnalysis } from './gas-analysis'
@@ -27,37 +28,6 @@ export interface WorkingContext {
 const STANDARD_ROUTE = 'O. Levenspiel, Chemical Reaction Engineering, 3rd edition, 1999, chapter 4'
 const BED_SOURCE = 'O. Levenspiel, Chemical Reaction Engineering, 3rd edition, 1999, chapters 5 and 18'
 const COMMON = 'common practice'
-
-function entry(
-  symbol: string,
-  meaning: string,
-  estimate: Estimate | null,
-  unit: string,
-  factor = 1,
-  offset = 0,
-): WorkingSymbol {
-  const total = estimate === null ? null : totalUncertainty(estimate)
-  return {
-    symbol,
-    meaning,
-    value: estimate === null ? null : estimate.value * factor + offset,
-    unit,
-    standardUncertainty: total === null ? null : total.standardUncertainty * Math.abs(factor),
-    uncertaintyKind:
-      total === null ? 'none' : estimate !== null && Object.keys(estimate.sharedEffects).length > 0 ? 'shared' : 'own',
-  }
-}
-
-function fixed(
-  symbol: string,
-  meaning: string,
-  value: number | null,
-  unit: string,
-  standardUncertainty: number | null = null,
-  kind: WorkingSymbol['uncertaintyKind'] = 'none',
-): WorkingSymbol {
-  return { symbol, meaning, value, unit, standardUncertainty, uncertaintyKind: kind }
-}
 
 function partsInWords(estimate: Estimate | null): string[] {
   if (estimate === null || estimate.value === 0) return []
@@ -119,7 +89,7 @@ export function pointWorkings(
           `One injection scatters by ${numberText(scatter.products * 100, 2)} % (products), pooled over the holds of the run.`,
         ]
   const factorSymbols = analysis.products.map((product) =>
-    fixed(
+    plainSymbol(
       `f_${product.species}`,
       `response factor of ${product.species}`,
       analysis.factor[product.species] ?? null,
@@ -129,14 +99,14 @@ export function pointWorkings(
     ),
   )
   const ratioSymbols = analysis.products.map((product) =>
-    fixed(
+    plainSymbol(
       `a_${product.species}`,
       `area of ${product.species} over that of ${analysis.base}, mean of ${conversion.means.seen[product.species] ?? 0} injections`,
       conversion.means.ratio[product.species] ?? null,
       '',
     ),
   )
-  const keyOut = fixed(
+  const keyOut = plainSymbol(
     `a_${keyReactant}`,
     `area of ${keyReactant} over that of ${analysis.base}`,
     conversion.means.ratio[keyReactant] ?? null,
@@ -144,13 +114,13 @@ export function pointWorkings(
   )
   const keyIn =
     inlet.means === null
-      ? fixed(
+      ? plainSymbol(
           `R_${keyReactant}0`,
           `flow of ${keyReactant} over that of ${analysis.base}`,
           inlet.flowRatio[keyReactant] ?? null,
           '',
         )
-      : fixed(
+      : plainSymbol(
           `a_${keyReactant}0`,
           `area of ${keyReactant} over that of ${analysis.base} through the bypass`,
           inlet.means.ratio[keyReactant] ?? null,
@@ -161,9 +131,9 @@ export function pointWorkings(
   const weights = analysis.isCarbon
     ? 'n carbon atoms'
     : `n moles of ${keyReactant} used up per mole of product, by stoichiometry`
-  const X = entry('X', `conversion of ${keyReactant}`, point.conversion, '%', 100)
-  const F = entry(`F_${keyReactant}0`, `flow of ${keyReactant} fed`, point.keyFlowMolPerS, 'µmol s⁻¹', 1e6)
-  const W = fixed(
+  const X = estimateSymbol('X', `conversion of ${keyReactant}`, point.conversion, '%', 100)
+  const F = estimateSymbol(`F_${keyReactant}0`, `flow of ${keyReactant} fed`, point.keyFlowMolPerS, 'µmol s⁻¹', 1e6)
+  const W = plainSymbol(
     'W',
     'mass of catalyst',
     input.loading.catalystMassKg * 1e6,
@@ -171,14 +141,14 @@ export function pointWorkings(
     input.loading.catalystMassKg * 1e6 * input.loading.massRelativeStandardUncertainty,
     'shared',
   )
-  const T = entry('T', 'mean bed temperature', point.temperatureK, '°C', 1, -273.15)
+  const T = estimateSymbol('T', 'mean bed temperature', point.temperatureK, '°C', 1, -273.15)
   const workings: Record<string, Working> = {
     temperatureK: {
       title: `Temperature at ${hold}`,
       formula: 'T = mean of the bed thermocouple over the settled part of the hold',
       symbols: [
-        fixed('T_set', 'set temperature', point.hold.setTemperatureK - 273.15, '°C'),
-        fixed('t_s', 'settling time left out', input.method.settlingTimeS / 60, 'min'),
+        plainSymbol('T_set', 'set temperature', point.hold.setTemperatureK - 273.15, '°C'),
+        plainSymbol('t_s', 'settling time left out', input.method.settlingTimeS / 60, 'min'),
       ],
       result: T,
       assumptions: ['The bed is isothermal; an offset of the thermocouple is common to all holds.'],
@@ -193,7 +163,7 @@ export function pointWorkings(
         ? 'X = Σ n_j (R_j − R_j0) / (n_A R_A0), R_i = f_i a_i / f_S'
         : 'X = P / (P + n_A y_A), P = Σ n_j y_j',
       symbols: [...ratioSymbols, ...factorSymbols, keyIn],
-      result: entry('X', `conversion of ${keyReactant}`, point.conversionByProducts, '%', 100),
+      result: estimateSymbol('X', `conversion of ${keyReactant}`, point.conversionByProducts, '%', 100),
       assumptions: [
         `${weights}; products that the analyser does not see are missed.`,
         analysis.hasStandard
@@ -209,7 +179,7 @@ export function pointWorkings(
       title: `Conversion by the reactant at ${hold}`,
       formula: 'X = 1 − R_A / R_A0',
       symbols: [keyOut, keyIn],
-      result: entry('X', `conversion of ${keyReactant}`, point.conversionByReactant, '%', 100),
+      result: estimateSymbol('X', `conversion of ${keyReactant}`, point.conversionByReactant, '%', 100),
       assumptions: ['A small difference of two large areas: useless at low conversion, the better route at high.'],
       source: STANDARD_ROUTE,
       from: gasFrom,
@@ -225,9 +195,9 @@ export function pointWorkings(
             ? 'X = X by the products'
             : 'no route gives a conversion',
       symbols: [
-        entry('X_P', 'by the products', point.conversionByProducts, '%', 100),
-        entry('X_R', 'by the reactant', point.conversionByReactant, '%', 100),
-        fixed('z', 'difference of the routes over its uncertainty', point.routeConsistencyZ, ''),
+        estimateSymbol('X_P', 'by the products', point.conversionByProducts, '%', 100),
+        estimateSymbol('X_R', 'by the reactant', point.conversionByReactant, '%', 100),
+        plainSymbol('z', 'difference of the routes over its uncertainty', point.routeConsistencyZ, ''),
       ],
       result: X,
       assumptions: ['Below 10 % the products decide, above 90 % the reactant, between them the surer one.'],
@@ -240,7 +210,7 @@ export function pointWorkings(
       title: `Carbon balance at ${hold}`,
       formula: 'B = (n_A R_A + Σ n_j R_j) / (n_A R_A0 + Σ n_j R_j0)',
       symbols: [keyOut, keyIn, ...ratioSymbols, ...factorSymbols],
-      result: entry('B', 'carbon out over carbon in', point.carbonBalance, ''),
+      result: estimateSymbol('B', 'carbon out over carbon in', point.carbonBalance, ''),
       assumptions: ['All carbon leaves as analysed gas.'],
       source: COMMON,
       from: gasFrom,
@@ -251,7 +221,7 @@ export function pointWorkings(
       title: `Carbon selectivity at ${hold}`,
       formula: 'S_j = n_j (R_j − R_j0) / Σ n_k (R_k − R_k0)',
       symbols: [...ratioSymbols, ...factorSymbols],
-      result: entry(
+      result: estimateSymbol(
         `S_${analysis.products[0]?.species ?? ''}`,
         `share of the converted carbon found as ${analysis.products[0]?.species ?? 'product'}`,
         point.carbonSelectivity[analysis.products[0]?.species ?? ''] ?? null,
@@ -275,7 +245,7 @@ export function pointWorkings(
       title: `Mean rate at ${hold}`,
       formula: 'r = F_A0 · X / W',
       symbols: [F, X, W],
-      result: entry('r', 'net rate, mean over the bed', point.meanRateMolPerKgS, 'µmol g⁻¹ s⁻¹', 1e3),
+      result: estimateSymbol('r', 'net rate, mean over the bed', point.meanRateMolPerKgS, 'µmol g⁻¹ s⁻¹', 1e3),
       assumptions: ['Belongs to the mean composition of the bed.'],
       source: BED_SOURCE,
       from: [...gasFrom, logFrom],
@@ -285,8 +255,8 @@ export function pointWorkings(
     approachToEquilibrium: {
       title: `Approach to equilibrium at ${hold}`,
       formula: 'η = Π (p_i / 1 bar)^ν_i / K',
-      symbols: [T, fixed('p', 'mean pressure', point.meanPressurePa / 1e5, 'bar'), X],
-      result: fixed('η', 'approach of the main step at the outlet', point.approachToEquilibrium, ''),
+      symbols: [T, plainSymbol('p', 'mean pressure', point.meanPressurePa / 1e5, 'bar'), X],
+      result: plainSymbol('η', 'approach of the main step at the outlet', point.approachToEquilibrium, ''),
       assumptions: ['Ideal gas; composition at the outlet from the feed and the conversions.'],
       source: 'B. J. McBride, S. Gordon, M. A. Reno, NASA Technical Memorandum 4513, 1993',
       from: [...gasFrom, logFrom],
@@ -313,14 +283,14 @@ export function pointWorkings(
       F,
       X,
       W,
-      entry('r_m', 'mean rate F_A0 X / W', point.meanRateMolPerKgS, 'µmol g⁻¹ s⁻¹', 1e3),
-      fixed('r/r_m', 'correction by the law', rate?.correction ?? null, ''),
-      fixed('p', 'mean pressure', point.meanPressurePa / 1e5, 'bar'),
+      estimateSymbol('r_m', 'mean rate F_A0 X / W', point.meanRateMolPerKgS, 'µmol g⁻¹ s⁻¹', 1e3),
+      plainSymbol('r/r_m', 'correction by the law', rate?.correction ?? null, ''),
+      plainSymbol('p', 'mean pressure', point.meanPressurePa / 1e5, 'bar'),
       ...conversion.stepConversions.map((value, s) =>
-        fixed(`X_${s + 1}`, `conversion by step ${s + 1}`, value * 100, '%'),
+        plainSymbol(`X_${s + 1}`, `conversion by step ${s + 1}`, value * 100, '%'),
       ),
     ],
-    result: entry('r', 'forward rate at feed composition', point.rateMolPerKgS, 'µmol g⁻¹ s⁻¹', 1e3),
+    result: estimateSymbol('r', 'forward rate at feed composition', point.rateMolPerKgS, 'µmol g⁻¹ s⁻¹', 1e3),
     assumptions: isIntegral
       ? [
           `Plug flow, isothermal, at the mean pressure; orders in partial pressure from the method (${orders === '' ? 'zero order' : orders}).`,
@@ -345,8 +315,8 @@ export function pointWorkings(
       title: `Turnover frequency at ${hold}`,
       formula: 'TOF = r / n_s',
       symbols: [
-        entry('r', 'forward rate at feed composition', point.rateMolPerKgS, 'µmol g⁻¹ s⁻¹', 1e3),
-        fixed(
+        estimateSymbol('r', 'forward rate at feed composition', point.rateMolPerKgS, 'µmol g⁻¹ s⁻¹', 1e3),
+        plainSymbol(
           'n_s',
           `sites by ${input.siteCount.method}`,
           input.siteCount.molPerKg * 1e3,
@@ -355,7 +325,7 @@ export function pointWorkings(
           'shared',
         ),
       ],
-      result: entry('TOF', 'turnovers per site', point.turnoverFrequencyPerS, 's⁻¹'),
+      result: estimateSymbol('TOF', 'turnovers per site', point.turnoverFrequencyPerS, 's⁻¹'),
       assumptions: ['All counted sites work alike; they are those counted, not those at work.'],
       source: 'M. Boudart, Chem. Rev. 95 (1995) 661, doi:10.1021/cr00035a009',
       from: [...gasFrom, logFrom],
