@@ -16,7 +16,7 @@ import { networkOf, takeFromBudget } from '../auth/rate-limit'
 import { hashSecret, makeSecret } from '../auth/secret'
 import { logSecurityEvent } from '../auth/security-log'
 import { AppError } from '../domain/errors'
-import { type Actor } from '../domain/role'
+import { ownActor } from './own-actor'
 import { startSession, type Caller } from './sign-in'
 
 const CODE_LIFE_S = 86_400
@@ -62,20 +62,6 @@ function refuseFaultyPassword(admin: FirstAdmin): void {
     })
 }
 
-function adminActor(userId: string, admin: FirstAdmin, sessionRef: string): Actor {
-  return {
-    userId,
-    displayName: admin.displayName,
-    email: admin.email,
-    role: 'admin',
-    memberships: {},
-    tokenScopes: null,
-    tokenCampaignId: null,
-    sessionRef,
-    secondsSinceSignIn: 0,
-  }
-}
-
 /** Makes the first admin with the one-time code, and signs them in. Answers the secret of the session. */
 export async function completeSetUp(
   input: FirstAdmin & { readonly code: string },
@@ -114,7 +100,7 @@ export async function completeSetUp(
         issues: [{ field: 'email', message: 'There is an account with this e-mail address already.' }],
       })
     await insertAuditEntry(tx, {
-      actor: adminActor(userId, input, 'set-up'),
+      actor: ownActor({ ...input, id: userId, role: 'admin' }, 'set-up'),
       action: 'make-first-admin',
       entity: 'user',
       entityId: userId,
@@ -155,7 +141,7 @@ export async function makeAdminByCommand(admin: FirstAdmin): Promise<'made' | 'r
       await updatePassword(tx, userId, passwordHash, PASSWORD_SCHEME)
     }
     await insertAuditEntry(tx, {
-      actor: adminActor(userId, admin, 'command'),
+      actor: ownActor({ ...admin, id: userId, role: 'admin' }, 'command'),
       action: account === null ? 'make-admin-by-command' : 'renew-admin-by-command',
       entity: 'user',
       entityId: userId,

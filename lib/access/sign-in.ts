@@ -24,7 +24,7 @@ import { logSecurityEvent } from '../auth/security-log'
 import { SESSION_LIFE_S } from '../auth/session-life'
 import { LOCKED_AFTER, secondsToWait } from '../auth/sign-in-delay'
 import { AppError, appErrorOf } from '../domain/errors'
-import { type Actor } from '../domain/role'
+import { ownActor } from './own-actor'
 import { sessionRefOf } from './session-ref'
 
 /** Where an attempt comes from. */
@@ -118,21 +118,6 @@ async function openAccount(
   return account
 }
 
-/** The account as the actor of its own sign-in, for the audit trail. */
-function actorOfAccount(account: AccountRow, sessionRef: string): Actor {
-  return {
-    userId: account.id,
-    displayName: account.displayName,
-    email: account.email,
-    role: account.role,
-    memberships: {},
-    tokenScopes: null,
-    tokenCampaignId: null,
-    sessionRef,
-    secondsSinceSignIn: 0,
-  }
-}
-
 /** A session under a new secret; what the secret was before is never taken over. */
 export async function startSession(account: AccountRow, caller: Caller, now = new Date()): Promise<string> {
   const secret = makeSecret()
@@ -149,7 +134,7 @@ export async function startSession(account: AccountRow, caller: Caller, now = ne
       userAgent: caller.userAgent.replace(/[^\x20-\x7e]/g, '').slice(0, 200),
     })
     await insertAuditEntry(tx, {
-      actor: actorOfAccount(account, sessionRefOf(idHash)),
+      actor: ownActor(account, sessionRefOf(idHash)),
       action: 'sign-in',
       entity: 'session',
       entityId: sessionRefOf(idHash),
@@ -184,7 +169,7 @@ export async function signOut(secret: string, now = new Date()): Promise<void> {
   await db.transaction(async (tx) => {
     if (!(await revokeSession(tx, idHash, now))) return
     await insertAuditEntry(tx, {
-      actor: actorOfAccount(account, sessionRefOf(idHash)),
+      actor: ownActor(account, sessionRefOf(idHash)),
       action: 'sign-out',
       entity: 'session',
       entityId: sessionRefOf(idHash),

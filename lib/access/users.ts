@@ -40,6 +40,7 @@ import { type Actor } from '../domain/role'
 import { environment } from '../environment'
 import { can } from '../policy/can'
 import { authorise, hideUnless } from './authorise'
+import { ownActor } from './own-actor'
 import { SESSION_IDLE_S } from './session-rules'
 import { startSession, type Caller } from './sign-in'
 
@@ -227,17 +228,7 @@ export async function acceptInvitation(
     await raiseSessionEpoch(tx, account.id)
     await revokeSessionsOf(tx, account.id, now, null)
     await insertAuditEntry(tx, {
-      actor: {
-        userId: account.id,
-        displayName: account.displayName,
-        email: account.email,
-        role: account.role,
-        memberships: {},
-        tokenScopes: null,
-        tokenCampaignId: null,
-        sessionRef: 'invitation',
-        secondsSinceSignIn: 0,
-      },
+      actor: ownActor(account, 'invitation'),
       action: 'accept-invitation',
       entity: 'user',
       entityId: account.id,
