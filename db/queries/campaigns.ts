@@ -66,7 +66,7 @@ export async function selectCampaign(db: Executor, scope: Scope, id: string): Pr
   return row === undefined ? null : { ...row, closedAt: instantOrNull(row.closedAt) }
 }
 
-/** Holds the campaign until the transaction ends, so that numbers are given out one at a time. False where there is none. */
+/** Holds the campaign until the transaction ends, so that numbers are given out one at a time. Null where there is none. */
 export async function lockCampaign(
   tx: Transaction,
   scope: Scope,
@@ -127,6 +127,12 @@ const methodColumns = {
   createdAt: methods.createdAt,
 }
 
+const toMethod = <Row extends { settings: unknown; createdAt: Date }>(row: Row) => ({
+  ...row,
+  settings: methodSettingsSchema.parse(row.settings),
+  createdAt: instantOf(row.createdAt),
+})
+
 /** Newest first. */
 export async function selectMethods(
   db: Executor,
@@ -147,11 +153,7 @@ export async function selectMethods(
     )
     .orderBy(desc(methods.number))
     .limit(page.limit)
-  return rows.map((row) => ({
-    ...row,
-    settings: methodSettingsSchema.parse(row.settings),
-    createdAt: instantOf(row.createdAt),
-  }))
+  return rows.map(toMethod)
 }
 
 /** One version by its number. */
@@ -166,9 +168,7 @@ export async function selectMethod(
     .from(methods)
     .innerJoin(users, eq(users.id, methods.createdBy))
     .where(and(inScope(methods.campaignId, scope), eq(methods.campaignId, campaignId), eq(methods.number, number)))
-  return row === undefined
-    ? null
-    : { ...row, settings: methodSettingsSchema.parse(row.settings), createdAt: instantOf(row.createdAt) }
+  return row === undefined ? null : toMethod(row)
 }
 
 export async function selectCurrentMethod(db: Executor, scope: Scope, campaignId: string): Promise<Method | null> {
@@ -194,6 +194,11 @@ const campaignSampleColumns = (db: Executor) => ({
   version: campaignSamples.version,
 })
 
+const toCampaignSample = <Row extends { isShortlisted: number }>(row: Row) => ({
+  ...row,
+  isShortlisted: row.isShortlisted === 1,
+})
+
 export async function selectCampaignSamples(
   db: Executor,
   scope: Scope,
@@ -213,7 +218,7 @@ export async function selectCampaignSamples(
     )
     .orderBy(asc(samples.code))
     .limit(page.limit)
-  return rows.map((row) => ({ ...row, isShortlisted: row.isShortlisted === 1 }))
+  return rows.map(toCampaignSample)
 }
 
 export async function selectCampaignSample(
@@ -233,5 +238,5 @@ export async function selectCampaignSample(
         eq(campaignSamples.sampleId, sampleId),
       ),
     )
-  return row === undefined ? null : { ...row, isShortlisted: row.isShortlisted === 1 }
+  return row === undefined ? null : toCampaignSample(row)
 }
