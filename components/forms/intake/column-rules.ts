@@ -1,6 +1,7 @@
 import { type Dimension } from '@/lib/analysis/units/dimension'
 import { unitFromAlias } from '@/lib/analysis/units/unit-from-alias'
 import { type ColumnMapSpecification, type ColumnMeaning, type MappedColumn } from '@/lib/domain/column-map'
+import { dimensionsOf } from '@/lib/domain/column-dimensions'
 import { speciesSchema } from '@/lib/domain/text'
 
 export const meaningLabels: Readonly<Record<ColumnMeaning, string>> = {
@@ -51,27 +52,6 @@ export function meaningsFor(kind: ColumnMapSpecification['kind'], current: Colum
   return listed.includes(current) ? listed : [...listed, current]
 }
 
-/** Kinds of quantity a column of this meaning can be stated in; empty where no unit is asked. */
-export function unitKinds(meaning: ColumnMeaning): readonly Dimension[] {
-  switch (meaning) {
-    case 'set-temperature':
-    case 'bed-temperature':
-    case 'wall-temperature':
-      return ['temperature']
-    case 'inlet-pressure':
-    case 'outlet-pressure':
-      return ['pressure']
-    case 'flow':
-      return ['volume-flow', 'molar-flow']
-    case 'mole-fraction':
-      return ['fraction']
-    case 'elapsed-time':
-      return ['time']
-    default:
-      return []
-  }
-}
-
 /** The more that is asked of a column, by what it means. */
 export interface ColumnNeeds {
   readonly unit: boolean
@@ -84,7 +64,7 @@ export interface ColumnNeeds {
 export function columnNeeds(column: MappedColumn, shape: ColumnMapSpecification['shape']): ColumnNeeds {
   const { meaning } = column
   return {
-    unit: unitKinds(meaning).length > 0,
+    unit: dimensionsOf(meaning).length > 0,
     species: meaning === 'flow' || (shape === 'wide' && ['area', 'mole-fraction', 'height'].includes(meaning)),
     flowReference: meaning === 'flow' && unitFromAlias(column.unit, 'volume-flow') !== null,
     pressureKind: meaning === 'inlet-pressure' || meaning === 'outlet-pressure',
@@ -107,7 +87,7 @@ const KIND_WORDS: Readonly<Partial<Record<Dimension, string>>> = {
 
 /** What a typed unit was understood as. */
 export function readUnit(column: MappedColumn): UnitReading {
-  const kinds = unitKinds(column.meaning)
+  const kinds = dimensionsOf(column.meaning)
   const wanted = KIND_WORDS[kinds[0] ?? 'fraction'] ?? ''
   // a clock text such as 12:30:05 is its own unit
   if (column.unit.trim() === '' && column.meaning === 'elapsed-time')

@@ -1,6 +1,6 @@
+import { dimensionsOf } from '../../domain/column-dimensions'
 import { type ColumnMapSpecification, type MappedColumn } from '../../domain/column-map'
 import { type Problem } from '../../domain/intake'
-import { type Dimension } from '../../analysis/units/dimension'
 import { unitFromAlias } from '../../analysis/units/unit-from-alias'
 import { problem } from '../problem-list'
 
@@ -48,7 +48,9 @@ export function specificationFaults(specification: ColumnMapSpecification): Prob
       )
   }
   for (const column of columns) {
-    const dimensions = dimensionsOf(column)
+    // `12:30:05` is its own unit; numbers need one, which is told when they are read
+    const isOwnUnit = column.meaning === 'elapsed-time' && column.unit === ''
+    const dimensions = isOwnUnit ? [] : dimensionsOf(column.meaning)
     if (dimensions.length > 0 && !dimensions.some((dimension) => unitFromAlias(column.unit, dimension) !== null))
       faults.push(
         problem({
@@ -100,26 +102,4 @@ function missing(expected: string, sentence: string): Problem {
 function needsSpecies(column: MappedColumn, specification: ColumnMapSpecification): boolean {
   if (column.meaning === 'flow') return true
   return specification.shape === 'wide' && (column.meaning === 'area' || column.meaning === 'mole-fraction')
-}
-
-/** Kinds of quantity that a column of this meaning is stated in; empty where it needs no unit. */
-export function dimensionsOf(column: Pick<MappedColumn, 'meaning' | 'unit'>): readonly Dimension[] {
-  switch (column.meaning) {
-    case 'set-temperature':
-    case 'bed-temperature':
-    case 'wall-temperature':
-      return ['temperature']
-    case 'inlet-pressure':
-    case 'outlet-pressure':
-      return ['pressure']
-    case 'flow':
-      return ['volume-flow', 'molar-flow']
-    case 'mole-fraction':
-      return ['fraction']
-    case 'elapsed-time':
-      // `12:30:05` is its own unit; numbers need one, which is told when they are read
-      return column.unit === '' ? [] : ['time']
-    default:
-      return []
-  }
 }
