@@ -6,7 +6,7 @@ import { LinkButton } from '@/components/ui/link-button'
 import { PageBody } from '@/components/ui/page-body'
 import { PageHead } from '@/components/ui/page-head'
 import { Section } from '@/components/ui/section'
-import { SetUpSteps } from '@/components/shell/set-up-steps'
+import { SetUpSteps, type SetUpStep } from '@/components/shell/set-up-steps'
 import { requireActor } from '@/lib/access/actor'
 import { listCalibrations } from '@/lib/access/calibrations'
 import { listCampaigns } from '@/lib/access/campaigns'
@@ -53,13 +53,44 @@ export default async function StartPage() {
   const zones = new Map(rigs.map((rig) => [rig.id, rig.timeZone]))
   const zoneOf = (run: RunSummary) => zones.get(run.rigId) ?? 'UTC'
   const { toFill, toHandIn, toDecide } = waitingFor(actor, runs)
-  const isSetUp =
-    reactions.length > 0 &&
-    rigs.length > 0 &&
-    calibrations.length > 0 &&
-    samples.length > 0 &&
-    campaigns.length > 0 &&
-    runs.length > 0
+  const steps: SetUpStep[] = [
+    {
+      name: 'Reaction',
+      href: routeOf('/reactions/new'),
+      isDone: reactions.length > 0,
+      words: 'Equations and key reactant; equilibrium comes from built-in thermochemistry.',
+    },
+    {
+      name: 'Rig',
+      href: routeOf('/rigs/new'),
+      isDone: rigs.length > 0,
+      words: 'Channels, clock, limits, and the state its flow controllers count at. An admin enters it.',
+    },
+    {
+      name: 'Calibration',
+      href: routeOf('/calibrations'),
+      isDone: calibrations.length > 0,
+      words: 'Drop the analyser’s table of response factors.',
+    },
+    {
+      name: 'Sample',
+      href: routeOf('/samples/new'),
+      isDone: samples.length > 0,
+      words: 'What is tested; a site count gives turnover frequencies.',
+    },
+    {
+      name: 'Campaign',
+      href: routeOf('/campaigns/new'),
+      isDone: campaigns.length > 0,
+      words: 'Samples compared in one reaction under one method. A lead makes it.',
+    },
+    {
+      name: 'Run',
+      href: routeOf('/runs/new'),
+      isDone: runs.length > 0,
+      words: 'Log it, add the rig log and the analyser file, look at the points.',
+    },
+  ]
   return (
     <>
       <PageHead
@@ -67,48 +98,7 @@ export default async function StartPage() {
         actions={campaigns.length === 0 ? null : <LinkButton href="/runs/new">Log a run</LinkButton>}
       />
       <PageBody>
-        {isSetUp ? null : (
-          <SetUpSteps
-            steps={[
-              {
-                name: 'Reaction',
-                href: routeOf('/reactions/new'),
-                isDone: reactions.length > 0,
-                words: 'Equations and key reactant; equilibrium comes from built-in thermochemistry.',
-              },
-              {
-                name: 'Rig',
-                href: routeOf('/rigs/new'),
-                isDone: rigs.length > 0,
-                words: 'Channels, clock, limits, and the state its flow controllers count at. An admin enters it.',
-              },
-              {
-                name: 'Calibration',
-                href: routeOf('/calibrations'),
-                isDone: calibrations.length > 0,
-                words: 'Drop the analyser’s table of response factors.',
-              },
-              {
-                name: 'Sample',
-                href: routeOf('/samples/new'),
-                isDone: samples.length > 0,
-                words: 'What is tested; a site count gives turnover frequencies.',
-              },
-              {
-                name: 'Campaign',
-                href: routeOf('/campaigns/new'),
-                isDone: campaigns.length > 0,
-                words: 'Samples compared in one reaction under one method. A lead makes it.',
-              },
-              {
-                name: 'Run',
-                href: routeOf('/runs/new'),
-                isDone: runs.length > 0,
-                words: 'Log it, add the rig log and the analyser file, look at the points.',
-              },
-            ]}
-          />
-        )}
+        {steps.every((step) => step.isDone) ? null : <SetUpSteps steps={steps} />}
         {toDecide.length > 0 ? (
           <Section title="Waiting for your decision">
             <RunsTable runs={toDecide} timeZoneOf={zoneOf} empty="" caption="Runs waiting for your decision" />
