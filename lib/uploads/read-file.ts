@@ -20,10 +20,9 @@ import { type OpenedFile, type RawTable } from './table'
 /** What a file seems to be: one detection for each table in it, the likeliest first. */
 export async function detectFile(
   input: string | Uint8Array,
-  name: string,
   context: ReadingContext,
 ): Promise<{ readonly detections: Detection[]; readonly problems: Problem[] }> {
-  const file = await openFile(input, name)
+  const file = await openFile(input)
   const found: { readonly detection: Detection; readonly weight: number; readonly problems: readonly Problem[] }[] = []
   for (const table of file.tables) {
     const layout = findLayout(table)
@@ -68,9 +67,8 @@ export async function readFile(
   input: string | Uint8Array,
   specification: ColumnMapSpecification,
   context: ReadingContext,
-  name = '',
 ): Promise<AppliedReading & { readonly questions: readonly Question[] }> {
-  const file = await openFile(input, name)
+  const file = await openFile(input)
   const table =
     file.tables.find((one) => one.name === specification.sheet) ??
     (specification.sheet === '' ? file.tables[0] : undefined)
@@ -113,8 +111,8 @@ const NOTHING_OPEN = {
   hasAmbiguousHour: false,
 } as const
 
-/** Format by content; the name is only for people. */
-async function openFile(input: string | Uint8Array, _name: string): Promise<OpenedFile> {
+/** Format by content, whatever the file is called. */
+async function openFile(input: string | Uint8Array): Promise<OpenedFile> {
   const head = firstBytes(input)
   if (head[0] === 0x50 && head[1] === 0x4b) return openWorkbook(input)
   const foreign = foreignFormat(head)

@@ -29,7 +29,7 @@ export function conventionOf(header: string): ResponseConvention | null {
 
 /** A table of response factors: a column of species, a column of numbers, and perhaps one of their relative standard uncertainties. */
 export async function readResponseFactors(file: string, name: string): Promise<ResponseFactorTable> {
-  const { detections, problems } = await detectFile(file, name, { rigTimeZone: '', barometerPa: null, species: [] })
+  const { detections, problems } = await detectFile(file, { rigTimeZone: '', barometerPa: null, species: [] })
   const found = detections[0]
   if (found === undefined)
     throw new AppError('unprocessable', problems[0]?.sentence ?? `${name} holds no table that could be read.`)

@@ -5,10 +5,10 @@ import { detectFile, readFile } from './read-file'
 /** Runs one task and ends: a file that broke something breaks nothing else. */
 async function run(task: ReadTask): Promise<void> {
   if (task.kind === 'detect') {
-    parentPort?.postMessage({ ok: true, value: await detectFile(task.path, task.name, task.context) })
+    parentPort?.postMessage({ ok: true, value: await detectFile(task.path, task.context) })
     return
   }
-  const reading = await readFile(task.path, task.specification, task.context, task.name)
+  const reading = await readFile(task.path, task.specification, task.context)
   parentPort?.postMessage(
     { ok: true, value: reading },
     reading.channels.flatMap(({ values }) => (values.buffer instanceof ArrayBuffer ? [values.buffer] : [])),

@@ -30,14 +30,14 @@ const ANSWERS = {
 /** Channels of one demo file by the product's own readers, its questions answered as its laboratory would. */
 export async function readDemoChannels(name: string): Promise<Map<string, Float64Array>> {
   const file = path.join(FILES, name)
-  const { detections, problems } = await detectFile(file, name, CONTEXT)
+  const { detections, problems } = await detectFile(file, CONTEXT)
   const found = detections[0]
   if (found === undefined) throw new Error(`${name}: ${JSON.stringify(problems)}`)
   const answers: Record<string, string> = {}
   for (const question of found.questions)
     answers[question.key] = question.proposal ?? ANSWERS[question.key as keyof typeof ANSWERS]
   const { specification } = answerQuestions(found.proposal, found.facts, answers)
-  const reading = await readFile(file, specification, CONTEXT, name)
+  const reading = await readFile(file, specification, CONTEXT)
   if (reading.questions.length > 0) throw new Error(`${name}: still open ${JSON.stringify(reading.questions)}`)
   return new Map(reading.channels.map((channel: ReadingChannel) => [channel.name, channel.values]))
 }
