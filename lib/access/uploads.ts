@@ -251,8 +251,9 @@ async function readingOf(run: Run, upload: Upload) {
   if (upload.detection === null)
     throw new AppError('unprocessable', upload.failure ?? 'The file could not be read as a table.')
   const specification = upload.detection.proposal
-  const reading = await readInThread(pathOf(upload.sha256), upload.fileName, specification, await contextOf(run))
-  const open = findQuestions(specification, upload.detection.facts, await contextOf(run))
+  const context = await contextOf(run)
+  const reading = await readInThread(pathOf(upload.sha256), upload.fileName, specification, context)
+  const open = findQuestions(specification, upload.detection.facts, context)
   const asked = new Map<string, Question>([...open, ...reading.questions].map((question) => [question.key, question]))
   return { reading, questions: [...asked.values()] }
 }
