@@ -1,6 +1,6 @@
 'use client'
 
-import { type ReactNode, startTransition, useActionState, useEffect, useRef } from 'react'
+import { type ReactNode, startTransition, useActionState, useEffect, useEffectEvent, useRef } from 'react'
 import { Button } from './button'
 import { type FormState, FormStateProvider } from './form-state'
 import { Notice } from './notice'
@@ -31,9 +31,9 @@ export function ActionForm({
 }) {
   const [state, dispatch, isPending] = useActionState(action, null)
   const form = useRef<HTMLFormElement>(null)
-  useEffect(() => {
-    if (state === null) return
-    if (state.ok) {
+  // only a new answer counts, not a new callback
+  const onAnswer = useEffectEvent((answer: NonNullable<FormState>) => {
+    if (answer.ok) {
       if (isEmptiedWhenSaved) form.current?.reset()
       onSaved?.()
     } else {
@@ -41,8 +41,9 @@ export function ActionForm({
       const field = form.current?.querySelector('[aria-invalid="true"]')
       if (field instanceof HTMLElement) field.focus()
     }
-    // only a new answer counts, not a new callback
-    // eslint-disable-next-line react-hooks/exhaustive-deps
+  })
+  useEffect(() => {
+    if (state !== null) onAnswer(state)
   }, [state])
   return (
     <FormStateProvider value={state}>
