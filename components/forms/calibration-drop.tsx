@@ -10,7 +10,7 @@ import { TextField } from '@/components/ui/text-field'
 import { type Calibration } from '@/lib/domain/calibration'
 import { readPercent } from './intake/read-percent'
 import { DropZone } from './intake/drop-zone'
-import { sendFile } from './intake/send-file'
+import { sendFiles } from './intake/send-file'
 
 interface Refusal {
   readonly file: File
@@ -49,9 +49,9 @@ export function CalibrationDrop({ rigs }: { readonly rigs: readonly SelectChoice
     const made: string[] = []
     for (const file of files) {
       try {
-        const { items } = await sendFile<{ readonly items: readonly Calibration[] }>(
+        const { items } = await sendFiles<{ readonly items: readonly Calibration[] }>(
           `/api/v1/calibrations/files?${query.toString()}`,
-          file,
+          [file],
           { signal: new AbortController().signal, onProgress: () => {} },
         )
         made.push(...items.map((item) => `${item.name} with ${String(item.entries.length)} species`))

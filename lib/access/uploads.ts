@@ -31,6 +31,8 @@ import { answerQuestions, type Answers } from '../uploads/column-map/answer-ques
 import { findQuestions } from '../uploads/column-map/questions'
 import { detectInThread, readInThread } from '../uploads/read-job'
 import { type ReadingContext } from '../uploads/reading-context'
+import { LIMITS } from '../uploads/limits'
+import { packChromatograms, type PackedFile } from '../uploads/pack-chromatograms'
 import { receiveFiles, type ReceivedFile } from '../uploads/receive-multipart'
 import { authorise, hideUnless } from './authorise'
 import { holdOpenCampaign, touchableCampaigns } from './campaign-rights'
@@ -115,15 +117,21 @@ export async function addFiles(actor: Actor, runId: string, request: Request): P
     const received = await receiveFiles(request, {
       folder,
       maximumBytes: environment.MAX_UPLOAD_BYTES,
-      maximumFiles: MOST_FILES,
+      maximumFiles: LIMITS.chromatogram.setCount,
     })
+    const files = packChromatograms(received, folder)
+    if (files.length > MOST_FILES)
+      throw new AppError(
+        'too-large',
+        `At most ${String(MOST_FILES)} files at a time, chromatograms counted as one. Send them in several requests; nothing of these was kept.`,
+      )
     const added: AddedFile[] = []
-    for (const file of received) added.push(await addFile(actor, run, file))
+    for (const file of files) added.push(await addFile(actor, run, file))
     return added
   })
 }
 
-async function addFile(actor: Actor, run: Run, file: ReceivedFile): Promise<AddedFile> {
+async function addFile(actor: Actor, run: Run, file: ReceivedFile | PackedFile): Promise<AddedFile> {
   const db = await getDatabase()
   const id = randomUUID()
   // the bytes stand in the store, synced, before the record that names them
@@ -146,7 +154,13 @@ async function addFile(actor: Actor, run: Run, file: ReceivedFile): Promise<Adde
         entity: 'upload',
         entityId: id,
         campaignId: run.campaignId,
-        after: { runId: run.id, fileName: file.name, sha256: file.sha256, byteCount: file.byteCount },
+        after: {
+          runId: run.id,
+          fileName: file.name,
+          sha256: file.sha256,
+          byteCount: file.byteCount,
+          ...('parts' in file ? { parts: file.parts } : {}),
+        },
       })
     return inserted
   })

@@ -28,6 +28,12 @@ export const LIMITS = {
     xmlDepth: 64,
     styles: 65_536,
   },
+  chromatogram: {
+    bytes: 32 * 1024 * 1024,
+    /** chromatograms in one packed set, and bytes of all of them */
+    setCount: 1_000,
+    setBytes: 64 * 1024 * 1024,
+  },
   /** wall clock for one reading: a minute, and half a minute more for each 100 MB */
   readingMs: (byteCount: number): number => 60_000 + 30_000 * Math.ceil(byteCount / 100_000_000),
 } as const

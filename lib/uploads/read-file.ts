@@ -9,8 +9,9 @@ import { fingerprint } from './column-map/fingerprint'
 import { findQuestions } from './column-map/questions'
 import { specificationFaults } from './column-map/specification-faults'
 import { findLayout, type Layout } from './find-layout'
+import { openChromatogramFile } from './formats/chromatogram/open-chromatograms'
 import { openDelimitedText } from './formats/delimited-text/open-delimited-text'
-import { openWorkbook } from './formats/workbook/open-workbook'
+import { openPackedFile } from './formats/open-packed-file'
 import { LIMITS } from './limits'
 import { problem, ProblemList } from './problem-list'
 import { type ReadingContext } from './reading-context'
@@ -114,7 +115,9 @@ const NOTHING_OPEN = {
 /** Format by content, whatever the file is called. */
 async function openFile(input: string | Uint8Array): Promise<OpenedFile> {
   const head = firstBytes(input)
-  if (head[0] === 0x50 && head[1] === 0x4b) return openWorkbook(input)
+  if (head[0] === 0x50 && head[1] === 0x4b) return openPackedFile(input)
+  if (head[0] === 0x43 && head[1] === 0x44 && head[2] === 0x46 && (head[3] === 1 || head[3] === 2))
+    return openChromatogramFile(input)
   const foreign = foreignFormat(head)
   if (foreign !== null)
     return {
@@ -128,7 +131,7 @@ async function openFile(input: string | Uint8Array): Promise<OpenedFile> {
           code: 'unsupported-format',
           severity: 'fatal',
           found: foreign,
-          expected: 'delimited text or an .xlsx workbook',
+          expected: 'delimited text, an .xlsx workbook or a chromatogram (netCDF, ASTM E1947)',
           sentence: `The file is ${foreign}. Export the readings as delimited text or as an .xlsx workbook and add that.`,
         }),
       ],
@@ -151,7 +154,6 @@ function foreignFormat(head: Uint8Array): string | null {
   const starts = (...bytes: readonly number[]) => bytes.every((byte, index) => head[index] === byte)
   if (starts(0xd0, 0xcf, 0x11, 0xe0)) return 'an old binary workbook (.xls) or another compound document'
   if (starts(0x25, 0x50, 0x44, 0x46)) return 'a PDF'
-  if (starts(0x43, 0x44, 0x46, 1) || starts(0x43, 0x44, 0x46, 2)) return 'a netCDF file'
   if (starts(0x89, 0x48, 0x44, 0x46)) return 'an HDF5 file'
   if (starts(0x89, 0x50, 0x4e, 0x47)) return 'a PNG image'
   if (starts(0xff, 0xd8, 0xff)) return 'a JPEG image'

@@ -24,7 +24,7 @@ export interface RawTable {
 }
 
 export interface OpenedFile {
-  readonly format: 'delimited-text' | 'workbook'
+  readonly format: 'delimited-text' | 'workbook' | 'chromatography-netcdf'
   /** how the file is written, in words */
   readonly dialect: readonly string[]
   readonly encoding: string

@@ -1,6 +1,7 @@
+import { createHash } from 'node:crypto'
 import { readFileSync, rmSync } from 'node:fs'
 import path from 'node:path'
-import { eq } from 'drizzle-orm'
+import { and, eq } from 'drizzle-orm'
 import { afterAll, beforeAll, expect, test, vi } from 'vitest'
 import { GET as getContent } from '@/app/api/v1/uploads/[uploadId]/content/route'
 import { POST as postConfirm } from '@/app/api/v1/uploads/[uploadId]/confirm/route'
@@ -10,7 +11,7 @@ import { POST as postSetAside } from '@/app/api/v1/uploads/[uploadId]/set-aside/
 import { GET as getUploads, POST as postUploads } from '@/app/api/v1/runs/[runId]/uploads/route'
 import { getDatabase, type OpenDatabase } from '@/db/client'
 import { selectReadingChannels } from '@/db/queries/readings'
-import { members, readingSets, runs, uploads } from '@/db/schema'
+import { auditEntries, members, readingSets, runs, uploads } from '@/db/schema'
 import { createToken } from '@/lib/access/tokens'
 import { type Role } from '@/lib/domain/role'
 import { actorOf } from '@/tests/support/actors'
@@ -193,6 +194,32 @@ test('a log and the analyser’s results go in together, are answered and confir
   const taken = await postConfirm(sendTo(results.id, tagOf(results)), ofUpload(results.id))
   expect(taken.status).toBe(200)
   expect((await setsOf(results.id))[0]?.rowCount).toBe(50)
+})
+
+test('the chromatograms of one request are one series: kept once, whatever order they come in, and its parts are in the history', async () => {
+  const folder = path.join(process.cwd(), 'tests/fixtures/chromatograms')
+  const names = ['R-0001_001.cdf', 'R-0001_002.cdf', 'R-0001_012.cdf']
+  const files = names.map((name) => [name, readFileSync(path.join(folder, name))] as const)
+  const { answer, items } = await add(technician, Object.fromEntries(files))
+  expect(answer.status).toBe(201)
+  expect(items).toMatchObject([
+    { fileName: 'R-0001_001 and 2 more chromatograms.zip', kind: 'analyser', state: 'ready', isNew: true },
+  ])
+  const again = await add(technician, Object.fromEntries([...files].reverse()))
+  expect(again.items).toMatchObject([{ id: items[0]?.id, isNew: false }])
+  const [entry] = await (await getDatabase())
+    .select()
+    .from(auditEntries)
+    .where(and(eq(auditEntries.action, 'upload.add'), eq(auditEntries.entityId, items[0]?.id ?? '')))
+  expect(entry?.after).toMatchObject({
+    parts: files.map(([name, bytes]) => ({
+      name,
+      byteCount: bytes.length,
+      sha256: createHash('sha256').update(bytes).digest('hex'),
+    })),
+  })
+  const alone = await add(technician, { 'R-0001_003.cdf': readFileSync(path.join(folder, 'R-0001_003.cdf')) })
+  expect(alone.items).toMatchObject([{ fileName: 'R-0001_003.cdf', kind: 'analyser', state: 'ready' }])
 })
 
 test('the same bytes again are answered with the file that has them, whatever they are called', async () => {

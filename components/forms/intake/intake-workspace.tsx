@@ -40,16 +40,16 @@ export function IntakeWorkspace({
     )
   const { sendings, add, cancel, again } = useSending<{ readonly items: readonly Added[] }>(
     `/api/v1/runs/${runId}/uploads`,
-    (answer, file) => {
+    (answer, sentName) => {
       for (const { isNew, ...upload } of answer.items) {
         keep(upload)
         if (!isNew)
           setNotes((before) => ({
             ...before,
             [upload.id]:
-              file.name === upload.fileName
+              sentName === upload.fileName
                 ? 'Already added: the run has these very bytes. Nothing was stored twice.'
-                : `Already added: ${file.name} has the very bytes of this file. Nothing was stored twice.`,
+                : `Already added: ${sentName} has the very bytes of this file. Nothing was stored twice.`,
           }))
       }
     },
@@ -83,8 +83,9 @@ export function IntakeWorkspace({
           <h2>No files yet</h2>
           <p className="m-0 mt-1 text-ink-2">
             A run needs two: the log of the rig (temperatures, pressures, flows against time) and the results of the
-            analyser (peaks or composition, one row an injection or a peak). Text tables and .xlsx workbooks are read;
-            anything else can be kept beside the run.
+            analyser (peaks or composition, one row an injection or a peak). Text tables, .xlsx workbooks and
+            chromatograms (netCDF, ASTM E1947; drop all of a series together) are read; anything else can be kept beside
+            the run.
           </p>
         </div>
       ) : null}

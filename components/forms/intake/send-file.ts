@@ -35,10 +35,10 @@ function refusalOf(text: string, status: number): RequestError {
 }
 
 /**
- * Sends one file as multipart and tells how far it is, which fetch cannot. The type is that of the route's answer.
+ * Sends files as multipart in one request and tells how far it is, which fetch cannot. The type is that of the route's answer.
  * @throws RequestError for a refusal, ConnectionLost without an answer, DOMException AbortError when cancelled
  */
-export function sendFile<T>(path: string, file: File, { signal, onProgress }: SendOptions): Promise<T> {
+export function sendFiles<T>(path: string, files: readonly File[], { signal, onProgress }: SendOptions): Promise<T> {
   return new Promise((resolve, reject) => {
     if (signal.aborted) return reject(new DOMException('cancelled', 'AbortError'))
     const request = new XMLHttpRequest()
@@ -59,7 +59,8 @@ export function sendFile<T>(path: string, file: File, { signal, onProgress }: Se
     signal.addEventListener('abort', cancel)
     const form = new FormData()
     // a part without a type is not taken for a file
-    form.append('file', file.type === '' ? new File([file], file.name, { type: 'application/octet-stream' }) : file)
+    for (const file of files)
+      form.append('file', file.type === '' ? new File([file], file.name, { type: 'application/octet-stream' }) : file)
     request.send(form)
   })
 }

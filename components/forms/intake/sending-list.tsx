@@ -7,10 +7,10 @@ import { Progress } from '@/components/ui/progress'
 import { fileSize } from './file-size'
 import { type Sending } from './use-sending'
 
-function said({ state, sentBytes, totalBytes, file }: Sending): string {
-  if (state === 'waiting') return `waits, ${fileSize(file.size)}`
+function said({ state, sentBytes, totalBytes, byteCount }: Sending): string {
+  if (state === 'waiting') return `waits, ${fileSize(byteCount)}`
   if (state === 'reading') return 'arrived, being looked at'
-  return totalBytes === 0 ? fileSize(file.size) : `${fileSize(sentBytes)} of ${fileSize(totalBytes)}`
+  return totalBytes === 0 ? fileSize(byteCount) : `${fileSize(sentBytes)} of ${fileSize(totalBytes)}`
 }
 
 /** Files that are on their way, how far each is, and what went wrong with those that did not arrive. */
@@ -36,14 +36,14 @@ export function SendingList({
         >
           {sending.state === 'failed' ? (
             <>
-              <Notice kind="fault" isLive title={`${sending.file.name} was not added.`}>
+              <Notice kind="fault" isLive title={`${sending.name} was not added.`}>
                 {sending.sentence}
               </Notice>
               <span className="flex flex-wrap gap-2">
-                <Button onClick={() => onAgain(sending.key)} aria-label={`Send ${sending.file.name} again`}>
+                <Button onClick={() => onAgain(sending.key)} aria-label={`Send ${sending.name} again`}>
                   Try again
                 </Button>
-                <Button kind="quiet" onClick={() => onCancel(sending.key)} aria-label={`Forget ${sending.file.name}`}>
+                <Button kind="quiet" onClick={() => onCancel(sending.key)} aria-label={`Forget ${sending.name}`}>
                   Forget it
                 </Button>
               </span>
@@ -51,12 +51,12 @@ export function SendingList({
           ) : (
             <>
               <Progress
-                label={sending.file.name}
+                label={sending.name}
                 value={sending.state === 'sending' && sending.totalBytes > 0 ? sending.sentBytes : null}
                 max={Math.max(1, sending.totalBytes)}
                 said={said(sending)}
               />
-              <Button onClick={() => onCancel(sending.key)} aria-label={`Cancel ${sending.file.name}`}>
+              <Button onClick={() => onCancel(sending.key)} aria-label={`Cancel ${sending.name}`}>
                 Cancel
               </Button>
             </>

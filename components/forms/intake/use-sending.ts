@@ -1,11 +1,14 @@
 'use client'
 
 import { useEffect, useRef, useState } from 'react'
-import { sendFile } from './send-file'
+import { sendFiles } from './send-file'
 
 export interface Sending {
   readonly key: string
-  readonly file: File
+  /** one file, or the chromatograms of one series */
+  readonly files: readonly File[]
+  readonly name: string
+  readonly byteCount: number
   readonly state: 'waiting' | 'sending' | 'reading' | 'failed'
   readonly sentBytes: number
   readonly totalBytes: number
@@ -13,8 +16,20 @@ export interface Sending {
   readonly sentence: string
 }
 
+const CHROMATOGRAM = /\.(cdf|nc)$/i
+
+/** Chromatograms that are dropped together belong together and go in one request; every other file goes by itself. */
+function inRequests(files: readonly File[]): (readonly File[])[] {
+  const chromatograms = files.filter(({ name }) => CHROMATOGRAM.test(name))
+  const others = files.filter(({ name }) => !CHROMATOGRAM.test(name)).map((file) => [file])
+  return chromatograms.length === 0 ? others : [...others, chromatograms]
+}
+
+const nameOf = (files: readonly File[]): string =>
+  files.length === 1 ? (files[0]?.name ?? '') : `${String(files.length)} chromatograms`
+
 /** Files on their way, one after the other: a second one would only share the line with the first. */
-export function useSending<T>(path: string, onArrived: (answer: T, file: File) => void) {
+export function useSending<T>(path: string, onArrived: (answer: T, sentName: string) => void) {
   const [sendings, setSendings] = useState<readonly Sending[]>([])
   const queue = useRef<Sending[]>([])
   const count = useRef(0)
@@ -33,12 +48,12 @@ export function useSending<T>(path: string, onArrived: (answer: T, file: File) =
     setSendings((before) => before.map((one) => (one.key === key ? { ...one, ...part } : one)))
   const remove = (key: string) => setSendings((before) => before.filter((one) => one.key !== key))
 
-  const sendOne = async ({ key, file }: Sending) => {
+  const sendOne = async ({ key, files, name }: Sending) => {
     const controller = new AbortController()
     current.current = { key, controller }
     update(key, { state: 'sending' })
     try {
-      const answer = await sendFile<T>(path, file, {
+      const answer = await sendFiles<T>(path, files, {
         signal: controller.signal,
         onProgress: (sentBytes, totalBytes) =>
           update(key, {
@@ -49,7 +64,7 @@ export function useSending<T>(path: string, onArrived: (answer: T, file: File) =
           }),
       })
       remove(key)
-      onArrived(answer, file)
+      onArrived(answer, name)
     } catch (error) {
       if (error instanceof DOMException && error.name === 'AbortError') remove(key)
       else update(key, { state: 'failed', sentence: error instanceof Error ? error.message : String(error) })
@@ -72,9 +87,18 @@ export function useSending<T>(path: string, onArrived: (answer: T, file: File) =
     sendings,
     isOnItsWay,
     add: (files: readonly File[]) => {
-      const more = files.map((file): Sending => {
+      const more = inRequests(files).map((together): Sending => {
         count.current++
-        return { key: String(count.current), file, state: 'waiting', sentBytes: 0, totalBytes: 0, sentence: '' }
+        return {
+          key: String(count.current),
+          files: together,
+          name: nameOf(together),
+          byteCount: together.reduce((sum, file) => sum + file.size, 0),
+          state: 'waiting',
+          sentBytes: 0,
+          totalBytes: 0,
+          sentence: '',
+        }
       })
       setSendings((before) => [...before, ...more])
       put(more)

@@ -10,6 +10,8 @@ import { detectFile, readFile } from '@/lib/uploads/read-file'
 // Damaged files of every family: each is answered with problems or rows, never with a throw, and none keeps the reader busy.
 
 const FILES = path.resolve(import.meta.dirname, '../../../db/demo/files')
+const chromatogram = (name: string) =>
+  new Uint8Array(readFileSync(path.resolve(import.meta.dirname, '../../fixtures/chromatograms', name)))
 const CONTEXT = { rigTimeZone: 'UTC', barometerPa: 101_325, species: ['CO2', 'H2', 'CH4', 'CO', 'Ar', 'N2'] }
 const LONGEST_MS = 5_000
 
@@ -24,6 +26,10 @@ const seedFiles = {
   workbook: ['R-0002-analysis.xlsx', 'R-0008-analysis.xlsx'].map(
     (name) => new Uint8Array(readFileSync(path.join(FILES, name))),
   ),
+  chromatogram: [chromatogram('R-0001_001.cdf'), chromatogram('R-0001_012.cdf')],
+  'set of chromatograms': [
+    zipSync({ 'a.cdf': chromatogram('R-0001_001.cdf'), 'b.cdf': chromatogram('R-0001_012.cdf') }, { level: 0 }),
+  ],
 } as const
 
 /** Bytes flipped, cut off, doubled, zeroed or replaced by marks that mean something to a reader. */

@@ -1,7 +1,7 @@
 import { type Readable } from 'node:stream'
 import { SaxesParser } from 'saxes'
 import { LIMITS } from '../../limits'
-import { Refusal } from './refusal'
+import { Refusal } from '../refusal'
 
 export interface XmlVisitor {
   readonly open?: (name: string, attributes: Readonly<Record<string, string>>) => void

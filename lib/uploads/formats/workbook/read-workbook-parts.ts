@@ -1,7 +1,7 @@
 import { LIMITS } from '../../limits'
-import { type Archive } from './open-archive'
+import { type Archive } from '../open-archive'
 import { parseXml } from './parse-xml'
-import { Refusal } from './refusal'
+import { Refusal } from '../refusal'
 import { builtInFormatKind, formatCodeKind, type NumberFormatKind } from './serial-date'
 
 export interface Sheet {

@@ -1,18 +1,22 @@
 import { type Readable } from 'node:stream'
 import yauzl, { type Entry, type ZipFile } from 'yauzl'
-import { LIMITS } from '../../limits'
+import { LIMITS } from '../limits'
 import { Refusal } from './refusal'
 
 export interface Archive {
+  /** what its parts make it */
+  readonly holds: 'workbook' | 'chromatograms'
+  readonly names: readonly string[]
   readonly has: (name: string) => boolean
   readonly open: (name: string) => Promise<Readable>
   readonly close: () => void
 }
 
 const FOLDERS = ['xl/', 'docProps/', '_rels/', 'customXml/', 'docMetadata/']
+const CHROMATOGRAM = /\.(cdf|nc)$/i
 
 /**
- * A workbook's parts by name. The whole directory is checked before a single byte is inflated: what it declares is held against the limits
+ * The parts of a packed file by name: of a workbook, or of a set of chromatograms. The whole directory is checked before a single byte is inflated: what it declares is held against the limits
  * here, and what comes out is counted again where it is read, since a directory can lie.
  */
 export async function openArchive(input: string | Uint8Array): Promise<Archive> {
@@ -34,7 +38,12 @@ export async function openArchive(input: string | Uint8Array): Promise<Archive> 
   }
   try {
     const entries = await listEntries(zip)
+    const names = [...entries.keys()]
+    const holds = names.length > 0 && names.every((name) => CHROMATOGRAM.test(name)) ? 'chromatograms' : 'workbook'
+    if (holds === 'workbook') refuseForeignParts(names)
     return {
+      holds,
+      names,
       has: (name) => entries.has(name),
       open: async (name) => {
         const entry = entries.get(name)
@@ -55,10 +64,25 @@ export async function openArchive(input: string | Uint8Array): Promise<Archive> 
   }
 }
 
+function refuseForeignParts(names: readonly string[]): void {
+  const limit = LIMITS.workbook.entryCount
+  if (names.length > limit) throw tooMuch(`${String(names.length)} parts`, `at most ${String(limit)} parts`)
+  const foreign = names.find(
+    (name) => name !== '[Content_Types].xml' && !FOLDERS.some((folder) => name.startsWith(folder)),
+  )
+  if (foreign !== undefined)
+    throw new Refusal({
+      code: 'unsupported-format',
+      found: `“${foreign}” in a packed file`,
+      expected: 'an .xlsx workbook, a set of chromatograms (.cdf) or delimited text',
+      sentence: `The file is packed and holds “${foreign}”, which neither a workbook nor a set of chromatograms does. Unpack it and add the files inside.`,
+    })
+}
+
 async function listEntries(zip: ZipFile): Promise<Map<string, Entry>> {
   const limits = LIMITS.workbook
-  if (zip.entryCount > limits.entryCount)
-    throw tooMuch(`${String(zip.entryCount)} parts`, `at most ${String(limits.entryCount)} parts`)
+  if (zip.entryCount > LIMITS.chromatogram.setCount)
+    throw tooMuch(`${String(zip.entryCount)} parts`, `at most ${String(LIMITS.chromatogram.setCount)} parts`)
   const entries = new Map<string, Entry>()
   const extents: [number, number][] = []
   let total = 0
@@ -66,19 +90,12 @@ async function listEntries(zip: ZipFile): Promise<Map<string, Entry>> {
     const name = entry.fileName
     if (name.endsWith('/')) continue
     if (entries.has(name)) throw suspicious(`the part “${name}” twice`)
-    if (name !== '[Content_Types].xml' && !FOLDERS.some((folder) => name.startsWith(folder)))
-      throw new Refusal({
-        code: 'unsupported-format',
-        found: `“${name}” in a packed file`,
-        expected: 'an .xlsx workbook or delimited text',
-        sentence: `The file is packed and holds “${name}”, which no workbook does. Unpack it and add the files inside.`,
-      })
     if (entry.isEncrypted())
       throw new Refusal({
         code: 'unsupported-format',
         found: 'an encrypted part',
-        expected: 'a workbook without password',
-        sentence: 'The workbook is protected by a password. Save it without one and add it again.',
+        expected: 'a file without password',
+        sentence: 'The file is protected by a password. Save it without one and add it again.',
       })
     if (entry.compressionMethod !== 0 && entry.compressionMethod !== 8)
       throw suspicious(`the packing method ${String(entry.compressionMethod)}`)
@@ -111,7 +128,7 @@ function tooMuch(found: string, expected: string): Refusal {
     code: 'too-large',
     found,
     expected,
-    sentence: `The workbook has ${found}; ${expected} are read. Export the readings as delimited text, or divide the workbook.`,
+    sentence: `The packed file has ${found}; ${expected} are read. Export the readings as delimited text, or divide the file.`,
   })
 }
 
@@ -119,8 +136,8 @@ function suspicious(found: string): Refusal {
   return new Refusal({
     code: 'unreadable',
     found,
-    expected: 'a workbook as a spreadsheet program writes it',
-    sentence: `The workbook has ${found}, which no spreadsheet program writes. It was not opened.`,
+    expected: 'a packed file as a spreadsheet program or an archiver writes it',
+    sentence: `The packed file has ${found}, which no program that makes such files writes. It was not opened.`,
   })
 }
 
@@ -128,8 +145,8 @@ function damaged(cause: unknown): Refusal {
   return new Refusal({
     code: 'unreadable',
     found: cause instanceof Error ? cause.message : 'a damaged directory',
-    expected: 'a complete workbook',
+    expected: 'a complete packed file',
     sentence:
-      'The workbook is damaged or was cut off while it was copied. Copy it again from the instrument and add it.',
+      'The workbook or packed file is damaged or was cut off while it was copied. Copy it again from the instrument and add it.',
   })
 }
