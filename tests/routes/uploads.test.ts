@@ -207,7 +207,9 @@ test('the chromatograms of one request are one series: kept once, whatever order
   ])
   const again = await add(technician, Object.fromEntries([...files].reverse()))
   expect(again.items).toMatchObject([{ id: items[0]?.id, isNew: false }])
-  const [entry] = await (await getDatabase())
+  const [entry] = await (
+    await getDatabase()
+  )
     .select()
     .from(auditEntries)
     .where(and(eq(auditEntries.action, 'upload.add'), eq(auditEntries.entityId, items[0]?.id ?? '')))
