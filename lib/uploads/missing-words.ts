@@ -92,6 +92,9 @@ const CENSORED = new Set([
   'no detectado',
 ])
 
+/** Loggers write it where a sensor gives nothing; no quantity that is read here can have it. Source: common practice. */
+export const MISSING_NUMBER = -9_999
+
 export type Absence = 'missing' | 'over-range' | 'censored'
 
 /** How a cell says that there is no number in it: a marker for a missing value, for an overflow, or for less than can be told; null otherwise. */
@@ -104,7 +107,7 @@ export function absenceOf(text: string): Absence | null {
   if (first === 0x3c || first === 0x2264) return 'censored'
   if (CENSORED.has(word)) return 'censored'
   if (OVER_RANGE.has(word)) return 'over-range'
-  if (word === '-9999' || word === '-9999.0' || word === '-9999,0') return 'missing'
+  if (/^[-\u2212]9999([.,]0+)?$/.test(word)) return 'missing'
   return null
 }
 

@@ -4,7 +4,7 @@ import { absolutePressure } from '../../analysis/units/absolute-pressure'
 import { molarFlowFromVolumeFlow } from '../../analysis/units/molar-flow-from-volume-flow'
 import { unitFromAlias } from '../../analysis/units/unit-from-alias'
 import { type Layout } from '../find-layout'
-import { absenceOf } from '../missing-words'
+import { absenceOf, MISSING_NUMBER } from '../missing-words'
 import { NumberColumn } from '../number-column'
 import { readNumberText } from '../number-text'
 import { type ProblemInput, ProblemList } from '../problem-list'
@@ -64,7 +64,7 @@ async function readWide(
     for (const reader of readers) {
       const cell = cells[reader.column.index] ?? ''
       const value = typeof cell === 'number' ? cell : readNumberText(cell, mark)
-      if (value === null) {
+      if (value === null || value === MISSING_NUMBER) {
         const text = String(cell)
         const absence = absenceOf(text)
         reader.values.push(Number.NaN)

@@ -1,7 +1,7 @@
 import { type ColumnMapSpecification } from '../../domain/column-map'
 import { unitFromAlias } from '../../analysis/units/unit-from-alias'
 import { type Layout } from '../find-layout'
-import { absenceOf } from '../missing-words'
+import { absenceOf, MISSING_NUMBER } from '../missing-words'
 import { NumberColumn } from '../number-column'
 import { readNumberText } from '../number-text'
 import { ProblemList } from '../problem-list'
@@ -104,7 +104,8 @@ export async function readLongInjections(
     }
     injection.lastRow = Math.max(injection.lastRow, line)
     const cell = cells[valueColumn.index] ?? ''
-    const value = typeof cell === 'number' ? cell : readNumberText(cell, mark)
+    const number = typeof cell === 'number' ? cell : readNumberText(cell, mark)
+    const value = number === MISSING_NUMBER ? null : number
     const text = String(cell)
     const absence = value === null ? absenceOf(text) : null
     if (value === null && absence === null) problems.add(notNumber(line, valueColumn, text, mark))
