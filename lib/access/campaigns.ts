@@ -69,6 +69,7 @@ export async function listCampaigns(
   filter: CampaignFilter = {},
   page: Page<string> = wholeList,
 ): Promise<CampaignSummary[]> {
+  authorise(can.listCampaigns(actor))
   const rows = await selectCampaigns(await getDatabase(), readableCampaigns(actor), filter, page)
   return rows.map((row) => summaryFor(actor, row))
 }

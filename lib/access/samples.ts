@@ -74,7 +74,7 @@ export async function createSample(actor: Actor, input: NewSample): Promise<Samp
 }
 
 export async function changeSample(actor: Actor, id: string, change: SampleChange, version: number): Promise<Sample> {
-  authorise(can.addSample(actor))
+  authorise(can.editSample(actor))
   refuseEmpty(change)
   const scope = touchableSamples(actor)
   const db = await getDatabase()

@@ -26,7 +26,7 @@ import { type UploadPreview } from '../domain/upload-preview'
 import { environment } from '../environment'
 import { can } from '../policy/can'
 import { readableCampaigns } from '../policy/campaign-scope'
-import { openFile, pathOf, putFile, requireSpace, withIncomingFolder } from '../storage/file-store'
+import { hasFile, openFile, pathOf, putFile, requireSpace, withIncomingFolder } from '../storage/file-store'
 import { answerQuestions, type Answers } from '../uploads/column-map/answer-question'
 import { findQuestions } from '../uploads/column-map/questions'
 import { detectInThread, readInThread } from '../uploads/read-job'
@@ -92,9 +92,19 @@ export async function getUpload(actor: Actor, id: string): Promise<Upload> {
   return upload
 }
 
+/** A restored database beside a store that was not restored has records without their bytes: said, not stumbled over. */
+async function requireBytes(upload: Upload): Promise<void> {
+  if (!(await hasFile(upload.sha256)))
+    throw new AppError(
+      'not-found',
+      `The bytes of “${upload.fileName}” are not in the file store, though its record is there. Tell an admin: a backup of the folder “files” has them.`,
+    )
+}
+
 /** The bytes as they were handed in. */
 export async function openUploadContent(actor: Actor, id: string) {
   const upload = await getUpload(actor, id)
+  await requireBytes(upload)
   return { upload, ...(await openFile(upload.sha256)) }
 }
 
@@ -265,6 +275,7 @@ async function readingOf(run: Run, upload: Upload) {
   if (upload.detection === null)
     throw new AppError('unprocessable', upload.failure ?? 'The file could not be read as a table.')
   const specification = upload.detection.proposal
+  await requireBytes(upload)
   const context = await contextOf(run)
   const reading = await readInThread(pathOf(upload.sha256), upload.fileName, specification, context)
   const open = findQuestions(specification, upload.detection.facts, context)

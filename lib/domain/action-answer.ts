@@ -4,7 +4,14 @@ import { appErrorOf, type ActionResult, type FieldIssue } from './errors'
 
 /** The fields at fault out of a failed parse, one entry each, by their path: `feed.0.species`. */
 export function issuesOf(error: z.ZodError): FieldIssue[] {
-  return error.issues.map((issue) => ({ field: issue.path.map(String).join('.'), message: issue.message }))
+  return error.issues.flatMap((issue) => {
+    const path = issue.path.map(String)
+    if (issue.code !== 'unrecognized_keys') return [{ field: path.join('.'), message: issue.message }]
+    return issue.keys.map((key) => ({
+      field: [...path, key].join('.'),
+      message: 'There is no such field here. Take it out, or look for its name in the description of the interface.',
+    }))
+  })
 }
 
 /**

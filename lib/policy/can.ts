@@ -72,6 +72,8 @@ export const can = {
   /** know that the campaign exists: everybody who has a part in it, guests included */
   seeCampaign: (actor: Actor, campaignId: string): boolean =>
     mayThroughToken(actor, 'read') && (partIn(actor, campaignId) !== null || isAdminFor(actor, campaignId)),
+  /** ask which campaigns one has a part in */
+  listCampaigns: (actor: Actor): boolean => mayThroughToken(actor, 'read'),
   /** read campaign, runs, ranking */
   readCampaign: (actor: Actor, campaignId: string): boolean =>
     mayThroughToken(actor, 'read') && worksIn(actor, campaignId),
@@ -83,6 +85,9 @@ export const can = {
 
   addSample: (actor: Actor): boolean =>
     mayThroughToken(actor, 'intake') && reachesHouse(actor) && actor.role !== 'guest',
+  /** what is written of a sample bears on results (density, pores): more than an instrument's token may do */
+  editSample: (actor: Actor): boolean =>
+    mayThroughToken(actor, 'write') && reachesHouse(actor) && actor.role !== 'guest',
   addSiteCount: (actor: Actor): boolean =>
     mayThroughToken(actor, 'write') && reachesHouse(actor) && actor.role !== 'guest',
   addLot: (actor: Actor): boolean => mayThroughToken(actor, 'intake') && reachesHouse(actor) && actor.role !== 'guest',

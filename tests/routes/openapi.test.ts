@@ -27,6 +27,14 @@ test('the description names every handler on disk, and no other', () => {
   expect(operations.map((operation) => `${operation.method} ${operation.path}`).sort()).toEqual(handlersOnDisk())
 })
 
+test('every operation says what it answers: a record, bytes of a type, or nothing', () => {
+  for (const one of operations)
+    expect(
+      [one.answer !== undefined, one.answerType !== undefined, one.status === 204].filter(Boolean),
+      `${one.method} ${one.path}`,
+    ).toHaveLength(1)
+})
+
 test('it is OpenAPI 3.1, open to all, and describes a run as its handler parses it', async () => {
   const answer = await GET()
   expect(answer.status).toBe(200)

@@ -1,17 +1,12 @@
 import { z } from 'zod'
 import { newCalibrationSchema, calibrationChangeSchema } from '@/lib/domain/calibration'
-import {
-  campaignChangeSchema,
-  campaignSampleChangeSchema,
-  newCampaignSchema,
-  newMemberSchema,
-} from '@/lib/domain/campaign'
-import { columnMapSpecificationSchema, newColumnMapSchema } from '@/lib/domain/column-map'
+import { campaignChangeSchema, newCampaignSchema, newMemberSchema } from '@/lib/domain/campaign'
+import { newColumnMapSchema } from '@/lib/domain/column-map'
 import { newMethodSchema } from '@/lib/domain/method'
-import { newPersonSchema, personChangeSchema, tokenRequestSchema } from '@/lib/domain/person'
+import { newPersonSchema, tokenRequestSchema } from '@/lib/domain/person'
 import { newReactionSchema, reactionChangeSchema } from '@/lib/domain/reaction'
 import { newRigSchema, rigChangeSchema } from '@/lib/domain/rig'
-import { campaignRoleSchema, type TokenScope } from '@/lib/domain/role'
+import { type TokenScope } from '@/lib/domain/role'
 import {
   decisionSchema,
   exclusionSchema,
@@ -23,7 +18,14 @@ import {
   withdrawalSchema,
 } from '@/lib/domain/run'
 import { newLotSchema, newSampleSchema, newSiteCountSchema, sampleChangeSchema } from '@/lib/domain/sample'
-import { idSchema, reasonSchema } from '@/lib/domain/text'
+import {
+  addedUploadRecord,
+  previewRecord,
+  rankingRecord,
+  runPointsRecord,
+  runResultRecord,
+  uploadRecord,
+} from './_computed-records'
 import {
   calibrationListQuery,
   campaignListQuery,
@@ -40,14 +42,19 @@ import {
   campaignSampleRecord,
   columnMapRecord,
   decisionRecord,
+  draftRecord,
   exclusionRecord,
   historyRecord,
   holdEditRecord,
+  invitationRecord,
   listed,
   loadingRecord,
   lotRecord,
+  meRecord,
   memberRecord,
   methodRecord,
+  newTokenRecord,
+  personRecord,
   reactionRecord,
   remarkRecord,
   rigRecord,
@@ -55,7 +62,20 @@ import {
   runSummaryRecord,
   sampleRecord,
   siteCountRecord,
+  tokenRecord,
 } from './_records'
+import {
+  calibrationFilesQuery,
+  campaignSampleChangeRequest,
+  campaignSampleRequest,
+  draftRequest,
+  memberChangeRequest,
+  personChangeRequest,
+  preferenceRequest,
+  setAsideRequest,
+  tokenListQuery,
+  uploadCorrectionRequest,
+} from './_requests'
 
 export interface Operation {
   readonly method: 'get' | 'post' | 'patch' | 'put' | 'delete'
@@ -71,6 +91,10 @@ export interface Operation {
   readonly answer?: z.ZodType
   readonly answerType?: string
   readonly status?: number
+  /** a second status of success, with the same answer */
+  readonly otherStatus?: number
+  /** for a person at a screen: no token may, whatever its scopes */
+  readonly isForPersons?: boolean
   /** the edit names the version it was made from in If-Match */
   readonly isVersioned?: boolean
 }
@@ -101,6 +125,16 @@ const patch = (path: string, summary: string, more: More = {}): Operation => ({
   ...more,
 })
 
+/** What a person at a screen keeps for themselves. */
+const ofPerson = (method: Operation['method'], path: string, summary: string, more: More): Operation => ({
+  method,
+  path,
+  summary,
+  scope: method === 'get' ? 'read' : 'write',
+  isForPersons: true,
+  ...more,
+})
+
 /** A list with its creation, and one of it with its edit: the shape most records share. */
 function records(
   path: string,
@@ -125,33 +159,56 @@ function records(
 
 /** Every operation of the API. A test holds this list against the handlers on disk, both ways. */
 export const operations: readonly Operation[] = [
-  get('/openapi.json', 'This description', { scope: null } as More),
-  get('/me', 'Who the caller is, with their parts in campaigns'),
-  get('/tokens', 'List tokens, without their secrets'),
+  { ...get('/openapi.json', 'This description', { answer: z.looseObject({ openapi: z.string() }) }), scope: null },
+  get('/me', 'Who the caller is, with their parts in campaigns', { answer: meRecord }),
+  {
+    ...get('/tokens', 'List tokens, without their secrets', {
+      query: tokenListQuery,
+      answer: z.strictObject({ tokens: z.array(tokenRecord) }),
+    }),
+    scope: 'write',
+  },
   post('/tokens', 'A token for e-mail address and password; its secret is in this answer only', {
     body: tokenRequestSchema,
+    answer: newTokenRecord,
     scope: null,
   }),
   { method: 'delete', path: '/tokens/{tokenId}', summary: 'Revoke a token', scope: 'write', status: 204 },
-  get('/people', 'List people, for admins'),
-  post('/people', 'Make a person and the invitation that lets them choose a password', { body: newPersonSchema }),
-  get('/people/{userId}', 'Read a person, for admins'),
-  patch('/people/{userId}', 'Change role, or close and open the account', {
-    body: personChangeSchema.omit({ version: true }),
+  {
+    ...get('/people', 'List people, for admins', { answer: z.strictObject({ people: z.array(personRecord) }) }),
+    scope: 'write',
+  },
+  post('/people', 'Make a person and the invitation that lets them choose a password', {
+    body: newPersonSchema,
+    answer: invitationRecord,
   }),
-  post('/people/{userId}/invitations', 'A new invitation; older ones are worthless from then on'),
+  { ...get('/people/{userId}', 'Read a person, for admins', { answer: personRecord }), scope: 'write' },
+  patch('/people/{userId}', 'Change role, or close and open the account', {
+    body: personChangeRequest,
+    answer: personRecord,
+  }),
+  post('/people/{userId}/invitations', 'A new invitation; older ones are worthless from then on', {
+    answer: invitationRecord,
+  }),
   {
     method: 'delete',
     path: '/people/{userId}/sessions',
     summary: 'End all sessions of a person',
     scope: 'write',
-    status: 204,
+    answer: z.strictObject({ ended: z.int().gte(0) }),
   },
-  get('/drafts/{form}', 'What was typed into a form and not sent yet'),
-  { method: 'put', path: '/drafts/{form}', summary: 'Keep what is typed', scope: 'write' },
-  { method: 'delete', path: '/drafts/{form}', summary: 'Forget what was typed', scope: 'write', status: 204 },
-  get('/preferences/{key}', 'A preference of the caller, such as the columns of a grid'),
-  { method: 'put', path: '/preferences/{key}', summary: 'Keep a preference', scope: 'write' },
+  ofPerson('get', '/drafts/{form}', 'What was typed into a form and not sent yet', {
+    answer: z.strictObject({ draft: draftRecord.nullable() }),
+  }),
+  ofPerson('put', '/drafts/{form}', 'Keep what is typed', {
+    body: draftRequest,
+    answer: z.strictObject({ draft: draftRecord }),
+  }),
+  ofPerson('delete', '/drafts/{form}', 'Forget what was typed', { status: 204 }),
+  ofPerson('get', '/preferences/{key}', 'A preference of the caller, such as the columns of a grid', {
+    answer: z.strictObject({ content: z.unknown() }),
+  }),
+  ofPerson('put', '/preferences/{key}', 'Keep a preference', { body: preferenceRequest, status: 204 }),
 
   ...records('reactions', 'reactionId', 'reaction', {
     query: plainListQuery,
@@ -179,6 +236,7 @@ export const operations: readonly Operation[] = [
     edit: calibrationChangeSchema,
   }),
   post('/calibrations/files', 'Calibrations from dropped tables of response factors', {
+    query: calibrationFilesQuery,
     bodyType: 'multipart/form-data',
     answer: items(calibrationRecord),
   }),
@@ -233,7 +291,7 @@ export const operations: readonly Operation[] = [
   }),
   {
     ...patch('/campaigns/{campaignId}/members/{userId}', 'Give somebody another role', {
-      body: z.strictObject({ role: campaignRoleSchema }),
+      body: memberChangeRequest,
       answer: memberRecord,
     }),
     isVersioned: false,
@@ -255,7 +313,7 @@ export const operations: readonly Operation[] = [
     answer: listed(campaignSampleRecord),
   }),
   post('/campaigns/{campaignId}/samples', 'Put a sample into a campaign', {
-    body: z.strictObject({ sampleId: idSchema }),
+    body: campaignSampleRequest,
     answer: campaignSampleRecord,
     scope: 'intake',
   }),
@@ -263,11 +321,14 @@ export const operations: readonly Operation[] = [
     answer: campaignSampleRecord,
   }),
   patch('/campaigns/{campaignId}/samples/{sampleId}', 'Write remark, shortlist or priority', {
-    body: campaignSampleChangeSchema.omit({ version: true }),
+    body: campaignSampleChangeRequest,
     answer: campaignSampleRecord,
   }),
   get('/campaigns/{campaignId}/history', 'Who changed what', { query: plainListQuery, answer: listed(historyRecord) }),
-  get('/campaigns/{campaignId}/ranking', 'The live ranking', { query: rankingRequestSchema }),
+  get('/campaigns/{campaignId}/ranking', 'The live ranking', {
+    query: rankingRequestSchema,
+    answer: rankingRecord,
+  }),
   get('/campaigns/{campaignId}/ranking.csv', 'The ranking as text', {
     query: rankingRequestSchema,
     answerType: 'text/csv',
@@ -319,26 +380,39 @@ export const operations: readonly Operation[] = [
   }),
   get('/runs/{runId}/remarks', 'Remarks on the run', { answer: items(remarkRecord) }),
   post('/runs/{runId}/remarks', 'Remark on the run', { body: remarkSchema, answer: remarkRecord }),
-  get('/runs/{runId}/result', 'The run with its files, trace, points and line'),
-  get('/runs/{runId}/points', 'The points of the run and its line'),
-  get('/runs/{runId}/uploads', 'Files of the run'),
+  get('/runs/{runId}/result', 'The run with its files, trace, points and line', { answer: runResultRecord }),
+  get('/runs/{runId}/points', 'The points of the run and its line', { answer: runPointsRecord }),
+  get('/runs/{runId}/uploads', 'Files of the run', { answer: items(uploadRecord) }),
   post('/runs/{runId}/uploads', 'Add files; bytes that are there already are answered with 200', {
     bodyType: 'multipart/form-data',
+    answer: items(addedUploadRecord),
+    otherStatus: 200,
     scope: 'intake',
   }),
-  get('/uploads/{uploadId}', 'A file with what was detected and what is still open'),
-  patch('/uploads/{uploadId}', 'Answer what is asked, correct what the columns mean', {
-    body: z.strictObject({
-      specification: columnMapSpecificationSchema.optional(),
-      answers: z.record(z.string(), z.string()).optional(),
+  get('/uploads/{uploadId}', 'A file with what was detected and what is still open', { answer: uploadRecord }),
+  {
+    ...patch('/uploads/{uploadId}', 'Answer what is asked, correct what the columns mean', {
+      body: uploadCorrectionRequest,
+      answer: uploadRecord,
     }),
-  }),
-  get('/uploads/{uploadId}/preview', 'What a confirmation would take in'),
-  post('/uploads/{uploadId}/confirm', 'Take the readings in', { status: 200, isVersioned: true, scope: 'intake' }),
-  post('/uploads/{uploadId}/set-aside', 'Put a file aside', {
-    body: z.strictObject({ reason: reasonSchema }),
+    scope: 'intake',
+  },
+  {
+    ...get('/uploads/{uploadId}/preview', 'What a confirmation would take in', { answer: previewRecord }),
+    scope: 'intake',
+  },
+  post('/uploads/{uploadId}/confirm', 'Take the readings in', {
+    answer: uploadRecord,
     status: 200,
     isVersioned: true,
+    scope: 'intake',
+  }),
+  post('/uploads/{uploadId}/set-aside', 'Put a file aside', {
+    body: setAsideRequest,
+    answer: uploadRecord,
+    status: 200,
+    isVersioned: true,
+    scope: 'intake',
   }),
   get('/uploads/{uploadId}/content', 'The bytes as they were handed in', { answerType: 'application/octet-stream' }),
 ]

@@ -2,11 +2,13 @@ import { z } from 'zod'
 import { calibrationKinds, newCalibrationSchema, type Calibration } from '@/lib/domain/calibration'
 import { type CampaignSample, type CampaignSummary, type Member } from '@/lib/domain/campaign'
 import { newColumnMapSchema, type ColumnMap } from '@/lib/domain/column-map'
+import { type Draft } from '@/lib/access/drafts'
 import { type HistoryEntry } from '@/lib/domain/history'
 import { methodSettingsSchema, type Method } from '@/lib/domain/method'
 import { newReactionSchema, type Reaction } from '@/lib/domain/reaction'
 import { newRigSchema, type Rig } from '@/lib/domain/rig'
-import { campaignRoles } from '@/lib/domain/role'
+import { type Invitation, type NewTokenAnswer, type PersonSummary, type TokenSummary } from '@/lib/domain/person'
+import { campaignRoles, campaignRoleSchema, roleSchema, tokenScopeSchema } from '@/lib/domain/role'
 import {
   decisionSchema,
   exclusionSchema,
@@ -201,3 +203,49 @@ export const holdEditRecord = holdEditSchema.extend({
   withdrawnAt: instant.nullable(),
 }) satisfies z.ZodType<RunHoldEdit>
 export const remarkRecord = remarkSchema.extend(made) satisfies z.ZodType<RunRemark>
+
+export const meRecord = z.strictObject({
+  id: text,
+  email: text,
+  displayName: text,
+  role: roleSchema,
+  memberships: z.record(text, campaignRoleSchema),
+  tokenScopes: z.array(tokenScopeSchema).nullable(),
+  tokenCampaignId: text.nullable(),
+})
+
+export const tokenRecord = z.strictObject({
+  id: text,
+  name: text,
+  scopes: z.array(tokenScopeSchema),
+  campaignId: text.nullable(),
+  createdAt: instant,
+  lastUsedAt: instant.nullable(),
+  expiresAt: instant.nullable(),
+  revokedAt: instant.nullable(),
+}) satisfies z.ZodType<TokenSummary>
+export const newTokenRecord = tokenRecord.extend({ secret: text }) satisfies z.ZodType<NewTokenAnswer>
+
+export const personRecord = z.strictObject({
+  id: text,
+  email: text,
+  displayName: text,
+  role: roleSchema,
+  isDisabled: z.boolean(),
+  hasPassword: z.boolean(),
+  isLocked: z.boolean(),
+  sessionCount: count,
+  lastSeenAt: instant.nullable(),
+  createdAt: instant,
+  version,
+}) satisfies z.ZodType<PersonSummary>
+
+export const invitationRecord = z.strictObject({
+  userId: text,
+  email: text,
+  code: text,
+  url: text,
+  expiresAt: instant,
+}) satisfies z.ZodType<Invitation>
+
+export const draftRecord = z.strictObject({ content: z.unknown(), savedAt: instant }) satisfies z.ZodType<Draft>

@@ -198,17 +198,31 @@ export function versionFromIfMatch(request: Request, id: string): number {
   return Number(match[2])
 }
 
+/** The body as text, read no further than the limit, whatever length was announced. */
+async function readText(request: Request): Promise<string> {
+  const chunks: Uint8Array[] = []
+  let byteCount = 0
+  const reader = request.body?.getReader()
+  for (let part = await reader?.read(); part !== undefined && !part.done; part = await reader?.read()) {
+    byteCount += part.value.length
+    if (byteCount > MAXIMUM_JSON_BYTES) {
+      await reader?.cancel()
+      throw new AppError(
+        'too-large',
+        `A JSON request may have ${MAXIMUM_JSON_BYTES} bytes. Files go to the uploads of a run.`,
+      )
+    }
+    chunks.push(part.value)
+  }
+  return Buffer.concat(chunks, byteCount).toString('utf8')
+}
+
 /** The JSON body of a request, checked against its schema. */
 export async function readJson<T extends z.ZodType>(request: Request, schema: T): Promise<z.output<T>> {
   const type = request.headers.get('content-type') ?? ''
   if (!/^application\/json\s*(;|$)/i.test(type))
     throw new AppError('unsupported', 'Send JSON, with the header Content-Type: application/json.')
-  const text = await request.text()
-  if (Buffer.byteLength(text, 'utf8') > MAXIMUM_JSON_BYTES)
-    throw new AppError(
-      'too-large',
-      `A JSON request may have ${MAXIMUM_JSON_BYTES} bytes. Files go to the uploads of a run.`,
-    )
+  const text = await readText(request)
   let body: unknown
   try {
     body = JSON.parse(text)
@@ -232,7 +246,7 @@ export function readQuery<T extends z.ZodType>(request: Request, schema: T): z.o
 
 /** A POST with an Idempotency-Key and a JSON body is run once; its answer is kept for a day. */
 async function runOnce(request: Request, actor: Actor, key: string, work: () => Promise<Response>): Promise<Response> {
-  const body = await request.clone().text()
+  const body = await readText(request.clone())
   const { pathname, search } = new URL(request.url)
   let made: Response | null = null
   const stored = await onceForKey(actor, key, { method: request.method, path: pathname + search, body }, async () => {

@@ -151,7 +151,7 @@ export default async function SamplePage({ params }: { params: Promise<{ sampleI
             <AddToCampaignForm campaigns={others} action={addToCampaignAction.bind(null, sample.id)} />
           </Section>
         ) : null}
-        {can.addSample(actor) ? (
+        {can.editSample(actor) ? (
           <Section title="Change">
             <Fold label="Change what is written about the sample">
               <div className="max-w-[46rem]">

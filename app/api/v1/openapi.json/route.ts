@@ -65,16 +65,23 @@ function describe(operation: Operation) {
       ? { [operation.answerType]: {} }
       : operation.answer !== undefined
         ? json(operation.answer, 'output')
-        : status === '204'
-          ? undefined
-          : { 'application/json': {} }
+        : undefined
   return {
     summary: operation.summary,
-    ...(operation.scope === null ? { security: [] } : { 'x-token-scope': operation.scope }),
+    ...(operation.scope === null
+      ? { security: [] }
+      : operation.isForPersons === true
+        ? { security: [], description: 'For a person signed in at a screen; no token may.' }
+        : { 'x-token-scope': operation.scope }),
     parameters: parametersOf(operation),
     ...bodyOf(operation),
     responses: {
       [status]: { description: 'done', ...(content === undefined ? {} : { content }) },
+      ...(operation.otherStatus === undefined
+        ? {}
+        : {
+            [operation.otherStatus]: { description: 'was done before', ...(content === undefined ? {} : { content }) },
+          }),
       default: { description: 'what went wrong, as RFC 9457 writes it', content: { 'application/problem+json': {} } },
     },
   }

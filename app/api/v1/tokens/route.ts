@@ -1,16 +1,13 @@
-import { z } from 'zod'
 import { callerFrom } from '@/lib/access/sign-in'
 import { createTokenWithPassword, listTokens } from '@/lib/access/tokens'
 import { tokenRequestSchema } from '@/lib/domain/person'
-import { idSchema } from '@/lib/domain/text'
+import { tokenListQuery } from '../_requests'
 import { answer, handle, handlePublic, readJson, readQuery } from '../_respond'
-
-const querySchema = z.strictObject({ userId: idSchema.optional() })
 
 /** Own tokens, or somebody's for an admin, without their secrets. */
 export async function GET(request: Request): Promise<Response> {
   return handle(request, async (actor) => ({
-    tokens: await listTokens(actor, readQuery(request, querySchema).userId ?? actor.userId),
+    tokens: await listTokens(actor, readQuery(request, tokenListQuery).userId ?? actor.userId),
   }))
 }
 

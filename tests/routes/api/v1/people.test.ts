@@ -270,6 +270,27 @@ describe('a change that rides on a cookie', () => {
 })
 
 describe('drafts and preferences', () => {
+  test('nothing is kept under null: the field is named, and nothing is overwritten', async () => {
+    await signedIn()
+    const here = { Origin: ORIGIN }
+    const form = { params: Promise.resolve({ form: 'log-run' }) }
+    await putDraft(send('PUT', '/api/v1/drafts/log-run', { content: { mass: '80 mg' } }, here), form)
+    const refused = [
+      await putDraft(send('PUT', '/api/v1/drafts/log-run', { content: null }, here), form),
+      await putPreference(send('PUT', '/api/v1/preferences/ranking-columns', { content: null }, here), {
+        params: Promise.resolve({ key: 'ranking-columns' }),
+      }),
+    ]
+    for (const answer of refused) {
+      expect(answer.status).toBe(400)
+      expect(await answer.json()).toMatchObject({
+        issues: [{ field: 'content', message: 'Say what to keep; nothing is kept under null.' }],
+      })
+    }
+    const read = await getDraft(send('GET', '/api/v1/drafts/log-run'), form)
+    expect(await read.json()).toMatchObject({ draft: { content: { mass: '80 mg' } } })
+  })
+
   const here = { Origin: ORIGIN }
   const form = { params: Promise.resolve({ form: 'log-run' }) }
 

@@ -1,10 +1,16 @@
 import { afterAll, beforeAll, describe, expect, test, vi } from 'vitest'
 import { z } from 'zod'
 import { operations } from '@/app/api/v1/_operations'
-import { type OpenDatabase } from '@/db/client'
+import { getDatabase, type OpenDatabase } from '@/db/client'
+import { insertUpload } from '@/db/mutations/uploads'
+import { createCalibration } from '@/lib/access/calibrations'
+import { createColumnMap } from '@/lib/access/column-maps'
 import { createRun } from '@/lib/access/runs'
 import { createToken } from '@/lib/access/tokens'
 import type * as session from '@/lib/auth/session'
+import { newCalibrationSchema } from '@/lib/domain/calibration'
+import { newColumnMapSchema } from '@/lib/domain/column-map'
+import { tokenScopes } from '@/lib/domain/role'
 import { actorOf } from '@/tests/support/actors'
 import { findHandlers } from '@/tests/support/find-handlers'
 import { freshDatabase } from '@/tests/support/fresh-database'
@@ -19,11 +25,13 @@ vi.mock('@/lib/auth/session', async (original) => ({
 
 const handlers = await findHandlers()
 const callers = ['technician', 'researcher', 'lead', 'guest', 'admin', 'stranger'] as const
-type Caller = (typeof callers)[number]
 
 let opened: OpenDatabase
 let lab: Awaited<ReturnType<typeof makeLaboratory>>
-const secrets = new Map<Caller, string>()
+const secrets = new Map<string, string>()
+let uploadId: string
+let calibrationId: string
+let columnMapId: string
 beforeAll(async () => {
   opened = await freshDatabase()
   lab = await makeLaboratory()
@@ -42,6 +50,32 @@ beforeAll(async () => {
     })
     secrets.set(caller, token.secret)
   }
+  for (const scope of tokenScopes) {
+    const others = tokenScopes.filter((one) => one !== scope && !(scope === 'intake' && one === 'write'))
+    for (const [name, scopes] of [
+      [`only ${scope}`, [scope]],
+      [`without ${scope}`, others],
+    ] as const) {
+      const token = await createToken(lab.admin, { name, scopes: [...scopes], campaignId: null, validDays: 1 })
+      secrets.set(name, token.secret)
+    }
+  }
+  uploadId = 'upload-of-own'
+  await (
+    await getDatabase()
+  ).transaction((tx) =>
+    insertUpload(tx, {
+      id: uploadId,
+      campaignId: lab.own.campaign.id,
+      runId: lab.own.run.id,
+      sha256: 'a'.repeat(64),
+      byteCount: 1,
+      fileName: 'log.csv',
+      createdBy: lab.own.lead.userId,
+    }),
+  )
+  calibrationId = (await createCalibration(lab.admin, newCalibrationSchema.parse(calibrationBody()))).id
+  columnMapId = (await createColumnMap(lab.admin, newColumnMapSchema.parse(columnMapBody()))).id
 })
 afterAll(() => opened.close())
 
@@ -52,7 +86,7 @@ interface Asked {
 }
 
 /** Finds the handler of an address and the operation that describes it, asks, and holds the answer to the description. */
-async function ask(caller: Caller | null, method: string, address: string, asked: Asked = {}) {
+async function ask(caller: string | null, method: string, address: string, asked: Asked = {}) {
   const url = new URL(`/api/v1${address}`, 'http://localhost:3000')
   const parts = url.pathname.split('/').slice(3)
   const fits = (pattern: readonly string[]) =>
@@ -83,11 +117,14 @@ async function ask(caller: Caller | null, method: string, address: string, asked
   )
   if (!(answer instanceof Response)) throw new Error('no answer')
   const text = await answer.text()
-  const body: unknown = text === '' ? null : JSON.parse(text)
+  const isJson = /json/.test(answer.headers.get('content-type') ?? '')
+  const body: unknown = text === '' ? null : isJson ? JSON.parse(text) : text
   const path = `/${pattern.map((one) => one.replace(/^\[(.+)\]$/, '{$1}')).join('/')}`
   const operation = operations.find((one) => one.method === method.toLowerCase() && one.path === path)
   if (answer.ok) {
-    expect(answer.status).toBe(operation?.status ?? 200)
+    if (answer.status !== operation?.otherStatus) expect(answer.status).toBe(operation?.status ?? 200)
+    if (operation?.answerType !== undefined)
+      expect(answer.headers.get('content-type')?.split(';')[0]).toBe(operation.answerType)
     // a strict schema: neither a field too many nor one too few
     if (operation?.answer !== undefined) expect(operation.answer.parse(body)).toEqual(body)
   } else {
@@ -108,6 +145,9 @@ const ids = () => ({
   l: lab.own.run.loadingId,
   g: lab.rig.id,
   x: lab.reaction.id,
+  u: uploadId,
+  k: calibrationId,
+  m: columnMapId,
 })
 let counted = 0
 const fresh = () => `N-${++counted}`
@@ -126,11 +166,19 @@ const calibrationBody = () => ({
   validFrom: '2026-01-01T00:00:00Z',
 })
 
+const columnMapBody = () => ({
+  rigId: lab.rig.id,
+  instrument: fresh(),
+  fingerprint: 'f',
+  specification: { kind: 'analyser', columns: [], decimalMark: '.', timeZone: 'UTC' },
+})
+
 interface Line {
   readonly route: string
   readonly body?: () => unknown
   /** an edit made from version 99, so that 412 says: allowed, had it been the version there */
   readonly stale?: string
+  readonly headers?: Readonly<Record<string, string>>
   /** technician, researcher, lead, guest, admin, lead of another campaign */
   readonly is: readonly [number, number, number, number, number, number]
 }
@@ -162,7 +210,83 @@ const table: readonly Line[] = [
   { route: 'GET /rigs/:g', is: [200, 200, 200, 403, 200, 200] },
   { route: 'GET /rigs/:g/last-run', is: [200, 200, 200, 403, 200, 200] },
   { route: 'GET /calibrations', is: [200, 200, 200, 403, 200, 200] },
+  { route: 'GET /calibrations/:k', is: [200, 200, 200, 403, 200, 200] },
   { route: 'GET /column-maps', is: [200, 200, 200, 403, 200, 200] },
+  { route: 'GET /column-maps/:m', is: [200, 200, 200, 403, 200, 200] },
+  { route: 'GET /campaigns/:c/ranking', is: [200, 200, 200, 404, 200, 404] },
+  { route: 'GET /campaigns/:c/ranking.csv', is: [200, 200, 200, 404, 200, 404] },
+  { route: 'GET /campaigns/:c/ranking.xlsx', is: [200, 200, 200, 404, 200, 404] },
+  { route: 'GET /runs/:r/result', is: [200, 200, 200, 404, 200, 404] },
+  { route: 'GET /runs/:r/points', is: [200, 200, 200, 404, 200, 404] },
+  { route: 'GET /runs/:r/uploads', is: [200, 200, 200, 404, 200, 404] },
+  { route: 'GET /uploads/:u', is: [200, 200, 200, 404, 200, 404] },
+  { route: 'GET /uploads/:u/preview', is: [422, 422, 422, 404, 422, 404] },
+  { route: 'GET /uploads/:u/content', is: [404, 404, 404, 404, 404, 404] },
+  {
+    route: 'PATCH /uploads/:u',
+    body: () => ({ answers: { kind: 'attachment' } }),
+    stale: 'u',
+    is: [412, 412, 412, 404, 412, 404],
+  },
+  { route: 'POST /uploads/:u/confirm', stale: 'u', is: [412, 412, 412, 404, 412, 404] },
+  {
+    route: 'POST /uploads/:u/set-aside',
+    body: () => ({ reason: 'of another run' }),
+    stale: 'u',
+    is: [412, 412, 412, 404, 412, 404],
+  },
+  { route: 'GET /me', is: [200, 200, 200, 200, 200, 200] },
+  { route: 'GET /tokens', is: [200, 200, 200, 200, 200, 200] },
+  { route: 'GET /tokens?userId=own-researcher', is: [403, 200, 403, 403, 200, 403] },
+  { route: 'DELETE /tokens/none', is: [404, 404, 404, 404, 404, 404] },
+  { route: 'GET /people', is: [403, 403, 403, 403, 200, 403] },
+  { route: 'GET /people/own-lead', is: [403, 403, 403, 403, 200, 403] },
+  {
+    route: 'POST /people',
+    body: () => ({ email: `${fresh()}@example.test`, displayName: 'New', role: 'technician' }),
+    is: [403, 403, 403, 403, 201, 403],
+  },
+  {
+    route: 'PATCH /people/own-guest',
+    body: () => ({ isDisabled: false }),
+    headers: { 'If-Match': 'W/"own-guest.99"' },
+    is: [403, 403, 403, 403, 412, 403],
+  },
+  { route: 'POST /people/own-guest/invitations', is: [403, 403, 403, 403, 201, 403] },
+  { route: 'DELETE /people/other-guest/sessions', is: [403, 403, 403, 403, 200, 403] },
+  // what a person at a screen keeps is out of reach of every token
+  { route: 'GET /drafts/log-run', is: [403, 403, 403, 403, 403, 403] },
+  { route: 'PUT /drafts/log-run', body: () => ({ content: { notes: 'x' } }), is: [403, 403, 403, 403, 403, 403] },
+  { route: 'DELETE /drafts/log-run', is: [403, 403, 403, 403, 403, 403] },
+  { route: 'GET /preferences/ranking-columns', is: [403, 403, 403, 403, 403, 403] },
+  { route: 'PUT /preferences/ranking-columns', body: () => ({ content: {} }), is: [403, 403, 403, 403, 403, 403] },
+  {
+    route: 'PATCH /calibrations/:k',
+    body: () => ({ validTo: null }),
+    stale: 'k',
+    is: [412, 412, 412, 403, 412, 412],
+  },
+  {
+    route: 'POST /campaigns/:c/reopen',
+    body: () => ({ reason: 'more to do' }),
+    stale: 'c',
+    is: [403, 403, 409, 404, 403, 404],
+  },
+  {
+    route: 'PATCH /campaigns/:c/members/nobody',
+    body: () => ({ role: 'guest' }),
+    is: [403, 403, 404, 404, 404, 404],
+  },
+  {
+    route: 'POST /runs/:r/exclusions/none/withdrawal',
+    body: () => ({ reason: 'it was fine' }),
+    is: [403, 404, 404, 404, 404, 404],
+  },
+  {
+    route: 'POST /runs/:r/hold-edits/none/withdrawal',
+    body: () => ({ reason: 'it was fine' }),
+    is: [403, 404, 404, 404, 404, 404],
+  },
   {
     route: 'POST /campaigns',
     body: () => ({ code: fresh(), name: 'New', reactionId: lab.reaction.id }),
@@ -256,12 +380,7 @@ const table: readonly Line[] = [
   { route: 'POST /calibrations', body: calibrationBody, is: [201, 201, 201, 403, 201, 201] },
   {
     route: 'POST /column-maps',
-    body: () => ({
-      rigId: lab.rig.id,
-      instrument: fresh(),
-      fingerprint: 'f',
-      specification: { kind: 'analyser', columns: [], decimalMark: '.', timeZone: 'UTC' },
-    }),
+    body: columnMapBody,
     is: [201, 201, 201, 403, 201, 201],
   },
 ]
@@ -273,7 +392,7 @@ const addressOf = (route: string) => {
 }
 
 describe('who may do what, by HTTP', () => {
-  test.each(table)('$route is $is', async ({ route, body, stale, is }) => {
+  test.each(table)('$route is $is', async ({ route, body, stale, headers, is }) => {
     const { method, path } = addressOf(route)
     const known: Readonly<Record<string, string>> = ids()
     const got: number[] = []
@@ -281,15 +400,73 @@ describe('who may do what, by HTTP', () => {
       const before = (await trail()).length
       const answer = await ask(caller, method, path, {
         ...(body === undefined ? {} : { body: body() }),
-        ...(stale === undefined ? {} : { headers: { 'If-Match': `W/"${known[stale]}.99"` } }),
+        headers: { ...headers, ...(stale === undefined ? {} : { 'If-Match': `W/"${known[stale]}.99"` }) },
       })
       got.push(answer.status)
       // a change that was made has its entry, one that was refused has none
-      expect((await trail()).length - before, caller).toBe(answer.status === 201 ? 1 : 0)
+      const isDone = answer.status === 201 || (method === 'DELETE' && answer.status === 200)
+      expect((await trail()).length - before, caller).toBe(isDone ? 1 : 0)
     }
     expect(got).toEqual([...is])
     expect((await ask(null, method, path, body === undefined ? {} : { body: body() })).status).toBe(401)
   })
+})
+
+/** Where the table holds no line for an operation, and where it is held instead. */
+const ELSEWHERE: Readonly<Record<string, string>> = {
+  'get /openapi.json': 'openapi.test.ts: open to all',
+  'post /tokens': 'people.test.ts: needs a password, not a token',
+  'post /runs/{runId}/uploads': 'uploads.test.ts: multipart',
+  'post /calibrations/files': 'uploads.test.ts: multipart',
+}
+
+const operationOf = (route: string) => {
+  const [method = '', path = ''] = route.split(' ')
+  const parts = path.replace(/\?.*/, '').split('/')
+  const literals = (pattern: string) => pattern.split('/').filter((part) => !part.startsWith('{')).length
+  return operations
+    .filter((one) => {
+      const pattern = one.path.split('/')
+      return (
+        one.method === method.toLowerCase() &&
+        pattern.length === parts.length &&
+        pattern.every((part, n) => part === parts[n] || part.startsWith('{'))
+      )
+    })
+    .sort((a, b) => literals(b.path) - literals(a.path))[0]
+}
+
+test('the table has a line for every operation of the interface', () => {
+  const held = new Set(table.map(({ route }) => operationOf(route)))
+  expect(
+    operations
+      .filter((one) => !held.has(one))
+      .map((one) => `${one.method} ${one.path}`)
+      .sort(),
+  ).toEqual(Object.keys(ELSEWHERE).sort())
+})
+
+describe('the scope that the description asks for is the one that is needed', () => {
+  test.each(table.filter(({ route }) => operationOf(route)?.isForPersons !== true))(
+    '$route',
+    async ({ route, body, stale, headers, is }) => {
+      const scope = operationOf(route)?.scope
+      if (scope === null || scope === undefined) throw new Error(`${route} needs no scope`)
+      const { method, path } = addressOf(route)
+      const known: Readonly<Record<string, string>> = ids()
+      const statusFor = async (token: string) => {
+        const answer = await ask(token, method, path, {
+          ...(body === undefined ? {} : { body: body() }),
+          headers: { ...headers, ...(stale === undefined ? {} : { 'If-Match': `W/"${known[stale]}.99"` }) },
+        })
+        return answer.status
+      }
+      // to know oneself no scope is needed
+      if (path !== '/me') expect([403, 404]).toContain(await statusFor(`without ${scope}`))
+      // the token is an admin's
+      if (![403, 404].includes(is[4])) expect([403, 404]).not.toContain(await statusFor(`only ${scope}`))
+    },
+  )
 })
 
 describe('edits', () => {

@@ -32,6 +32,50 @@ const post = (body: unknown, headers: Record<string, string> = {}) =>
   })
 const get = () => new Request('http://localhost:3000/api/v1/things')
 
+describe('a body', () => {
+  const schema = z.strictObject({
+    code: z.string(),
+    feed: z.array(z.strictObject({ species: z.string() })).default([]),
+  })
+  const read = (body: string | ReadableStream<Uint8Array>) =>
+    handlePublic(
+      new Request('http://localhost:3000/api/v1/things', {
+        method: 'POST',
+        headers: { 'Content-Type': 'application/json' },
+        body,
+        ...(typeof body === 'string' ? {} : { duplex: 'half' }),
+      }),
+      async (request) => readJson(request, schema),
+    )
+
+  test('that never ends is read to the limit and no further', async () => {
+    let sent = 0
+    let isCancelled = false
+    const endless = new ReadableStream<Uint8Array>({
+      pull(controller) {
+        sent += 65_536
+        controller.enqueue(new Uint8Array(65_536).fill(0x20))
+      },
+      cancel() {
+        isCancelled = true
+      },
+    })
+    const answer = await read(endless)
+    expect(answer.status).toBe(413)
+    expect(await answer.json()).toMatchObject({ code: 'too-large' })
+    expect(isCancelled).toBe(true)
+    expect(sent).toBeLessThan(1_300_000)
+  })
+
+  test('with fields that do not exist is refused with each of them by name', async () => {
+    const answer = await read(JSON.stringify({ code: 'a', colour: 1, feed: [{ species: 'CO2', purity: 2 }] }))
+    expect(answer.status).toBe(400)
+    const { issues } = (await answer.json()) as { issues: { field: string; message: string }[] }
+    expect(issues.map(({ field }) => field).sort()).toEqual(['colour', 'feed.0.purity'])
+    expect(issues[0]?.message).toMatch(/^There is no such field here\./)
+  })
+})
+
 describe('a failure', () => {
   /* The statuses as the product describes them, written out once more by hand. */
   test.each([

@@ -67,8 +67,10 @@ const campaignTable = `
 const houseTable = `
   action           technician researcher lead guest admin
   readHouse        y          y          y    -     y
+  listCampaigns    y          y          y    y     y
   addSample        y          y          y    -     y
   addLot           y          y          y    -     y
+  editSample       y          y          y    -     y
   addSiteCount     y          y          y    -     y
   makeColumnMap    y          y          y    -     y
   makeCalibration  y          y          y    -     y
@@ -138,8 +140,10 @@ function campaignRule(action: string): (actor: Actor, campaignId: string) => boo
 }
 const houseRules: Record<string, (actor: Actor) => boolean> = {
   readHouse: can.readHouse,
+  listCampaigns: can.listCampaigns,
   addSample: can.addSample,
   addLot: can.addLot,
+  editSample: can.editSample,
   addSiteCount: can.addSiteCount,
   makeColumnMap: can.makeColumnMap,
   makeCalibration: can.makeCalibration,
@@ -268,6 +272,9 @@ describe('a token', () => {
     expect(can.addFiles(instrument, runOf('other', 'open'))).toBe(true)
     expect(can.handIn(instrument, runOf('own', 'open'))).toBe(true)
     expect(can.editRun(instrument, runOf('own', 'open'))).toBe(false)
+    expect(can.editSample(instrument)).toBe(false)
+    expect(can.addSiteCount(instrument)).toBe(false)
+    expect(can.makeCalibration(instrument)).toBe(false)
     expect(can.leaveOut(instrument, runOf('own', 'open'))).toBe(false)
     expect(can.remark(instrument, HERE)).toBe(false)
     expect(can.decide(instrument, HERE)).toBe(false)
@@ -293,7 +300,7 @@ describe('a token', () => {
       expect(can.addRun(bound, HERE)).toBe(true)
       expect(can.readCampaign(bound, ELSEWHERE)).toBe(false)
       expect(can.addFiles(bound, runOf('own', 'open', ELSEWHERE))).toBe(false)
-      for (const [action, rule] of Object.entries(houseRules)) expect(rule(bound), action).toBe(action === 'readHouse')
+      for (const [action, rule] of Object.entries(houseRules)) expect(rule(bound), action).toBe(['readHouse', 'listCampaigns'].includes(action))
     }
   })
 })

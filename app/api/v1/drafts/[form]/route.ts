@@ -1,11 +1,10 @@
-import { z } from 'zod'
 import { getDraft, removeDraft, saveDraft } from '@/lib/access/drafts'
+import { draftRequest } from '../../_requests'
 import { answer, handle, readJson } from '../../_respond'
 
 interface Context {
   params: Promise<{ form: string }>
 }
-const draftSchema = z.strictObject({ content: z.json() })
 
 /** What was typed into a form and not sent: `{ "draft": null }` when there is nothing. */
 export async function GET(request: Request, context: Context): Promise<Response> {
@@ -14,7 +13,7 @@ export async function GET(request: Request, context: Context): Promise<Response>
 
 export async function PUT(request: Request, context: Context): Promise<Response> {
   return handle(request, async (actor) => {
-    const { content } = await readJson(request, draftSchema)
+    const { content } = await readJson(request, draftRequest)
     return { draft: await saveDraft(actor, (await context.params).form, content) }
   })
 }

@@ -1,11 +1,10 @@
 import { changePerson, getPerson } from '@/lib/access/users'
-import { personChangeSchema } from '@/lib/domain/person'
+import { personChangeRequest } from '../../_requests'
 import { answer, handle, readJson, versionFromIfMatch } from '../../_respond'
 
 interface Context {
   params: Promise<{ userId: string }>
 }
-const changeSchema = personChangeSchema.omit({ version: true })
 
 export async function GET(request: Request, context: Context): Promise<Response> {
   return handle(request, async (actor) => {
@@ -19,7 +18,7 @@ export async function PATCH(request: Request, context: Context): Promise<Respons
   return handle(request, async (actor) => {
     const { userId } = await context.params
     const version = versionFromIfMatch(request, userId)
-    await changePerson(actor, userId, { ...(await readJson(request, changeSchema)), version })
+    await changePerson(actor, userId, { ...(await readJson(request, personChangeRequest)), version })
     const person = await getPerson(actor, userId)
     return answer(person, { record: person })
   })

@@ -1,11 +1,10 @@
-import { z } from 'zod'
 import { getPreference, savePreference } from '@/lib/access/preferences'
+import { preferenceRequest } from '../../_requests'
 import { answer, handle, readJson } from '../../_respond'
 
 interface Context {
   params: Promise<{ key: string }>
 }
-const preferenceSchema = z.strictObject({ content: z.json() })
 
 /** How something is shown to this person: `{ "content": null }` when nothing was kept. */
 export async function GET(request: Request, context: Context): Promise<Response> {
@@ -14,7 +13,7 @@ export async function GET(request: Request, context: Context): Promise<Response>
 
 export async function PUT(request: Request, context: Context): Promise<Response> {
   return handle(request, async (actor) => {
-    const { content } = await readJson(request, preferenceSchema)
+    const { content } = await readJson(request, preferenceRequest)
     await savePreference(actor, (await context.params).key, content)
     return answer(undefined, { status: 204 })
   })

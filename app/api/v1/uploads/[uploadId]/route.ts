@@ -1,12 +1,6 @@
-import { z } from 'zod'
 import { correctUpload, getUpload } from '@/lib/access/uploads'
-import { columnMapSpecificationSchema } from '@/lib/domain/column-map'
+import { uploadCorrectionRequest } from '../../_requests'
 import { answer, handle, readJson, versionFromIfMatch } from '../../_respond'
-
-const correctionSchema = z.strictObject({
-  specification: columnMapSpecificationSchema.optional(),
-  answers: z.record(z.string().max(40), z.string().max(100)).optional(),
-})
 
 /** One file with what was detected and what is still open. */
 export async function GET(request: Request, { params }: { params: Promise<{ uploadId: string }> }): Promise<Response> {
@@ -24,7 +18,7 @@ export async function PATCH(
   return handle(request, async (actor) => {
     const { uploadId } = await params
     const version = versionFromIfMatch(request, uploadId)
-    const { specification, answers } = await readJson(request, correctionSchema)
+    const { specification, answers } = await readJson(request, uploadCorrectionRequest)
     const upload = await correctUpload(
       actor,
       uploadId,

@@ -1,14 +1,12 @@
 import { z } from 'zod'
 import { addSampleToCampaign, listCampaignSamples } from '@/lib/access/campaigns'
-import { idSchema } from '@/lib/domain/text'
 import { pageOf } from '../../../_page'
 import { pathIds } from '../../../_path-id'
 import { plainListQuery } from '../../../_queries'
+import { campaignSampleRequest } from '../../../_requests'
 import { answer, handle, readJson, readQuery } from '../../../_respond'
 
 type Context = { params: Promise<{ campaignId: string }> }
-
-const bodySchema = z.strictObject({ sampleId: idSchema })
 
 /** Samples of a campaign with what people wrote beside them. */
 export async function GET(request: Request, context: Context): Promise<Response> {
@@ -22,7 +20,7 @@ export async function GET(request: Request, context: Context): Promise<Response>
 export async function POST(request: Request, context: Context): Promise<Response> {
   return handle(request, async (actor) => {
     const { campaignId } = await pathIds(context)
-    const { sampleId } = await readJson(request, bodySchema)
+    const { sampleId } = await readJson(request, campaignSampleRequest)
     return answer(await addSampleToCampaign(actor, campaignId, sampleId), { status: 201 })
   })
 }

@@ -1,16 +1,13 @@
-import { z } from 'zod'
 import { setUploadAside } from '@/lib/access/uploads'
-import { reasonSchema } from '@/lib/domain/text'
+import { setAsideRequest } from '../../../_requests'
 import { answer, handle, readJson, versionFromIfMatch } from '../../../_respond'
-
-const bodySchema = z.strictObject({ reason: reasonSchema })
 
 /** Puts a file aside: it stays, its readings no longer count. */
 export async function POST(request: Request, { params }: { params: Promise<{ uploadId: string }> }): Promise<Response> {
   return handle(request, async (actor) => {
     const { uploadId } = await params
     const version = versionFromIfMatch(request, uploadId)
-    const { reason } = await readJson(request, bodySchema)
+    const { reason } = await readJson(request, setAsideRequest)
     const upload = await setUploadAside(actor, uploadId, version, reason)
     return answer(upload, { record: upload })
   })

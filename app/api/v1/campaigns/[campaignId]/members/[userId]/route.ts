@@ -1,18 +1,15 @@
-import { z } from 'zod'
 import { changeMember, removeMember } from '@/lib/access/campaigns'
-import { campaignRoleSchema } from '@/lib/domain/role'
 import { pathIds } from '../../../../_path-id'
+import { memberChangeRequest } from '../../../../_requests'
 import { answer, handle, readJson } from '../../../../_respond'
 
 type Context = { params: Promise<{ campaignId: string; userId: string }> }
-
-const bodySchema = z.strictObject({ role: campaignRoleSchema })
 
 /** Gives somebody another role in the campaign. */
 export async function PATCH(request: Request, context: Context): Promise<Response> {
   return handle(request, async (actor) => {
     const { campaignId, userId } = await pathIds(context)
-    return changeMember(actor, campaignId, userId, (await readJson(request, bodySchema)).role)
+    return changeMember(actor, campaignId, userId, (await readJson(request, memberChangeRequest)).role)
   })
 }
 

@@ -1,6 +1,6 @@
 import { changeCampaignSample, getCampaignSample } from '@/lib/access/campaigns'
-import { campaignSampleChangeSchema } from '@/lib/domain/campaign'
 import { pathIds } from '../../../../_path-id'
+import { campaignSampleChangeRequest } from '../../../../_requests'
 import { answer, handle, readJson, versionFromIfMatch } from '../../../../_respond'
 
 type Context = { params: Promise<{ campaignId: string; sampleId: string }> }
@@ -18,7 +18,7 @@ export async function PATCH(request: Request, context: Context): Promise<Respons
   return handle(request, async (actor) => {
     const { campaignId, sampleId } = await pathIds(context)
     const version = versionFromIfMatch(request, sampleId)
-    const change = await readJson(request, campaignSampleChangeSchema.omit({ version: true }))
+    const change = await readJson(request, campaignSampleChangeRequest)
     const changed = await changeCampaignSample(actor, campaignId, sampleId, { ...change, version })
     return answer(changed, { record: { id: sampleId, version: changed.version } })
   })
