@@ -6,7 +6,8 @@ import { type Actor } from '../domain/role'
 import { can } from '../policy/can'
 import { putFile, requireSpace, withIncomingFolder } from '../storage/file-store'
 import { receiveFiles } from '../uploads/receive-multipart'
-import { readResponseFactors, type ResponseConvention } from '../uploads/read-response-factors'
+import { readResponseFactorsInThread } from '../uploads/read-job'
+import { type ResponseConvention } from '../uploads/read-response-factors'
 import { authorise } from './authorise'
 import { createCalibration } from './calibrations'
 
@@ -34,7 +35,7 @@ export async function addCalibrationFiles(
   return withIncomingFolder(async (folder) => {
     const made: Calibration[] = []
     for (const file of await receiveFiles(request, { folder, maximumBytes: LARGEST_TABLE_BYTES, maximumFiles: 5 })) {
-      const table = await readResponseFactors(file.path, file.name)
+      const table = await readResponseFactorsInThread(file.path, file.name)
       const convention = table.convention ?? options.convention
       if (convention === null)
         throw new AppError(
@@ -54,7 +55,10 @@ export async function addCalibrationFiles(
             convention,
             entries: table.entries.map((entry) => ({
               ...entry,
-              relativeStandardUncertainty: entry.relativeStandardUncertainty ?? options.relativeStandardUncertainty,
+              relativeStandardUncertainty:
+                entry.absoluteStandardUncertainty === null
+                  ? (entry.relativeStandardUncertainty ?? options.relativeStandardUncertainty)
+                  : null,
             })),
             fileSha256: file.sha256,
             validFrom: options.validFrom,

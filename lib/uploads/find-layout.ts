@@ -154,7 +154,7 @@ function isHeaderRow(row: Row, width: number): boolean {
 }
 
 /** A row of nothing but units under the header. */
-function isUnitsRow(row: Row): boolean {
+export function isUnitsRow(row: Row): boolean {
   const filled = row.cells.map((cell) => unitOf(String(cell))).filter((text) => text !== '')
   if (filled.length === 0) return false
   const known = filled.filter(isUnit).length
@@ -187,7 +187,8 @@ export function isUnit(text: string): boolean {
   )
 }
 
-function withoutMark(row: Row, width: number): Row | null {
+/** The row of a comment line without its mark, where it has as many cells as the table. */
+export function withoutMark(row: Row, width: number): Row | null {
   const cells = row.cells.map(String)
   const first = (cells[0] ?? '').replace(/^[#%/\s]+/, '')
   const stripped = first === '' ? cells.slice(1) : [first, ...cells.slice(1)]

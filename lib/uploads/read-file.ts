@@ -113,7 +113,7 @@ const NOTHING_OPEN = {
 } as const
 
 /** Format by content, whatever the file is called. */
-async function openFile(input: string | Uint8Array): Promise<OpenedFile> {
+export async function openFile(input: string | Uint8Array): Promise<OpenedFile> {
   const head = firstBytes(input)
   if (head[0] === 0x50 && head[1] === 0x4b) return openPackedFile(input)
   if (head[0] === 0x43 && head[1] === 0x44 && head[2] === 0x46 && (head[3] === 1 || head[3] === 2))

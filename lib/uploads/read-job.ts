@@ -9,8 +9,16 @@ import { type Detection, type Problem, type Question } from '../domain/intake'
 import { type AppliedReading, emptyReading } from './column-map/applied-reading'
 import { LIMITS } from './limits'
 import { problem } from './problem-list'
+import { type ResponseFactorReading, type ResponseFactorTable } from './read-response-factors'
 import { type ReadTask } from './read-task'
 import { type ReadingContext } from './reading-context'
+
+/** What has become of the file when its reading fails: uploads stand in the store before they are read, calibrations come after. */
+const STANDING = {
+  detect: 'The file itself is kept.',
+  read: 'The file itself is kept.',
+  'response-factors': 'Nothing of it was kept.',
+} as const satisfies Record<ReadTask['kind'], string>
 
 /** Reading is all arithmetic: two threads leave a small machine with room to answer. */
 const THREADS = 2
@@ -52,6 +60,18 @@ export async function readInThread(
   return outcome.ok ? outcome.value : { ...emptyReading(specification, [outcome.problem]), questions: [] }
 }
 
+/** Reads a table of response factors in a thread of its own. What keeps it from being taken is refused, with the file's name. */
+export async function readResponseFactorsInThread(
+  file: string,
+  name: string,
+  options: JobOptions = {},
+): Promise<ResponseFactorTable> {
+  const outcome = await runTask<ResponseFactorReading>({ kind: 'response-factors', path: file, name }, options)
+  const { table, refusal } = outcome.ok ? outcome.value : { table: null, refusal: outcome.problem.sentence }
+  if (table === null) throw new AppError('unprocessable', `${name}: ${refusal}`)
+  return table
+}
+
 type Outcome<T> = { readonly ok: true; readonly value: T } | { readonly ok: false; readonly problem: Problem }
 
 let running = 0
@@ -60,13 +80,9 @@ const waiting: (() => void)[] = []
 async function runTask<T>(task: ReadTask, options: JobOptions): Promise<Outcome<T>> {
   if (running >= THREADS) {
     if (waiting.length >= LONGEST_QUEUE)
-      throw new AppError(
-        'busy',
-        'Many files are being read just now. Try again in a minute; the file itself is kept.',
-        {
-          retryAfterS: 30,
-        },
-      )
+      throw new AppError('busy', `Many files are being read just now. Try again in a minute. ${STANDING[task.kind]}`, {
+        retryAfterS: 30,
+      })
     await new Promise<void>((resolve) => waiting.push(resolve))
   } else running++
   try {
@@ -111,7 +127,7 @@ function inThread<T>(task: ReadTask, options: JobOptions): Promise<Outcome<T>> {
         console.error(JSON.stringify({ at: new Date().toISOString(), reading: task.name, error: message.message }))
         fail(
           'unreadable',
-          'The file could not be read: something in it was not foreseen. It is kept; tell an admin, who finds the cause in the log.',
+          `The file could not be read: something in it was not foreseen. Tell an admin, who finds the cause in the log. ${STANDING[task.kind]}`,
         )
       }
     })
@@ -124,7 +140,10 @@ function inThread<T>(task: ReadTask, options: JobOptions): Promise<Outcome<T>> {
       else end(() => reject(error))
     })
     worker.on('exit', (code) =>
-      fail('unreadable', `The reading stopped before its end (code ${String(code)}). Try again; the file is kept.`),
+      fail(
+        'unreadable',
+        `The reading stopped before its end (code ${String(code)}). Try again. ${STANDING[task.kind]}`,
+      ),
     )
   })
 }

@@ -74,7 +74,8 @@ function repeats(cells: readonly Cell[], header: readonly string[]): boolean {
   return true
 }
 
-function fits(cells: readonly Cell[], width: number, isPadded: boolean): boolean {
+/** Whether a row has the cells that the header has; empty ones past it do not count. */
+export function fits(cells: readonly Cell[], width: number, isPadded: boolean): boolean {
   if (cells.length === width) return true
   if (cells.length < width) return isPadded
   for (let i = width; i < cells.length; i++) if (String(cells[i]).trim() !== '') return false

@@ -11,3 +11,4 @@ export type ReadTask =
       readonly context: ReadingContext
       readonly specification: ColumnMapSpecification
     }
+  | { readonly kind: 'response-factors'; readonly path: string; readonly name: string }

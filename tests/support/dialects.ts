@@ -690,10 +690,11 @@ interface Book {
   readonly is1904?: boolean
   readonly hidden?: boolean
 }
-const inline = (text: string) => `t="inlineStr"><is><t>${text.replace(/&/g, '&amp;').replace(/</g, '&lt;')}</t></is>`
+export const inline = (text: string) =>
+  `t="inlineStr"><is><t>${text.replace(/&/g, '&amp;').replace(/</g, '&lt;')}</t></is>`
 
 /** Rows of cells, each given as the attributes and content after the reference. */
-function book({ rows, is1904 = false, hidden = false }: Book): Uint8Array {
+export function book({ rows, is1904 = false, hidden = false }: Book): Uint8Array {
   const sheet = (content: readonly (readonly string[])[]) =>
     `<?xml version="1.0" encoding="UTF-8"?><worksheet xmlns="${SHEET_NS}"><sheetData>${content
       .map(

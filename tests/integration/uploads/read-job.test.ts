@@ -1,6 +1,6 @@
 import { expect, test } from 'vitest'
 import path from 'node:path'
-import { detectInThread, readInThread } from '@/lib/uploads/read-job'
+import { detectInThread, readInThread, readResponseFactorsInThread } from '@/lib/uploads/read-job'
 
 const file = (name: string) => path.join(process.cwd(), 'db/demo/files', name)
 const context = { rigTimeZone: 'UTC', barometerPa: 101_325, species: ['CO2', 'H2', 'Ar', 'N2', 'CO', 'CH4'] }
@@ -28,4 +28,18 @@ test('a cancelled reading ends', async () => {
   const reading = detectInThread(file('R-0001-rig.csv'), 'R-0001-rig.csv', context, { signal: controller.signal })
   controller.abort()
   await expect(reading).rejects.toThrow('cancelled')
+})
+
+test('a table of response factors is read in a thread, under the same clock, and its refusal names the file', async () => {
+  const table = await readResponseFactorsInThread(file('response-factors.csv'), 'response-factors.csv')
+  expect(table.entries).toHaveLength(6)
+  await expect(
+    readResponseFactorsInThread(file('response-factors.csv'), 'response-factors.csv', { deadlineMs: 1 }),
+  ).rejects.toThrow(
+    'response-factors.csv: Reading the file took longer than 0 s and was stopped. Nothing of it was taken in.',
+  )
+  await expect(readResponseFactorsInThread(file('R-0001-rig.csv'), 'log.csv')).rejects.toMatchObject({
+    code: 'unprocessable',
+    message: expect.stringMatching(/^log\.csv: /),
+  })
 })
