@@ -300,7 +300,8 @@ describe('a token', () => {
       expect(can.addRun(bound, HERE)).toBe(true)
       expect(can.readCampaign(bound, ELSEWHERE)).toBe(false)
       expect(can.addFiles(bound, runOf('own', 'open', ELSEWHERE))).toBe(false)
-      for (const [action, rule] of Object.entries(houseRules)) expect(rule(bound), action).toBe(['readHouse', 'listCampaigns'].includes(action))
+      for (const [action, rule] of Object.entries(houseRules))
+        expect(rule(bound), action).toBe(['readHouse', 'listCampaigns'].includes(action))
     }
   })
 })
