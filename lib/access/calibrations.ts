@@ -1,7 +1,7 @@
 import 'server-only'
 import { randomUUID } from 'node:crypto'
 import { getDatabase } from '../../db/client'
-import { type Executor } from '../../db/executor'
+import { type Executor, type Transaction } from '../../db/executor'
 import { insertAuditEntry } from '../../db/mutations/audit'
 import { insertCalibration, lockCalibration, updateCalibration } from '../../db/mutations/rigs'
 import {
@@ -54,26 +54,38 @@ export async function getCalibration(actor: Actor, id: string): Promise<Calibrat
 
 /** Keeps a calibration. With `supersedesId` it corrects an earlier one of its kind, which one calibration can do only. */
 export async function createCalibration(actor: Actor, input: NewCalibration): Promise<Calibration> {
+  const [made] = await createCalibrations(actor, [input])
+  if (made === undefined) throw new Error('a calibration that was kept was not read back')
+  return made
+}
+
+/** Keeps several, all or none. */
+export async function createCalibrations(actor: Actor, inputs: readonly NewCalibration[]): Promise<Calibration[]> {
   authorise(can.makeCalibration(actor), 'Calibrations are made by technicians, researchers, leads and admins.')
+  const db = await getDatabase()
+  return db.transaction(async (tx) => {
+    const made: Calibration[] = []
+    for (const input of inputs) made.push(await keepCalibration(tx, actor, input))
+    return made
+  })
+}
+
+async function keepCalibration(tx: Transaction, actor: Actor, input: NewCalibration): Promise<Calibration> {
   if (input.validTo !== null && Date.parse(input.validTo) <= Date.parse(input.validFrom))
     refuseField('validTo', 'A calibration has to be valid from a time before the one it is valid to.')
   const id = randomUUID()
-  const db = await getDatabase()
-  return db.transaction(async (tx) => {
-    if (input.rigId !== null && (await selectRig(tx, input.rigId)) === null)
-      refuseField('rigId', 'There is no such rig.')
-    if (input.supersedesId !== null) await checkSuperseding(tx, input.kind, input.supersedesId)
-    await insertCalibration(tx, { ...input, id, createdBy: actor.userId })
-    const calibration = await foundCalibration(tx, id)
-    await insertAuditEntry(tx, {
-      actor,
-      action: input.supersedesId === null ? 'calibration.create' : 'calibration.supersede',
-      entity: 'calibration',
-      entityId: id,
-      after: calibration,
-    })
-    return calibration
+  if (input.rigId !== null && (await selectRig(tx, input.rigId)) === null) refuseField('rigId', 'There is no such rig.')
+  if (input.supersedesId !== null) await checkSuperseding(tx, input.kind, input.supersedesId)
+  await insertCalibration(tx, { ...input, id, createdBy: actor.userId })
+  const calibration = await foundCalibration(tx, id)
+  await insertAuditEntry(tx, {
+    actor,
+    action: input.supersedesId === null ? 'calibration.create' : 'calibration.supersede',
+    entity: 'calibration',
+    entityId: id,
+    after: calibration,
   })
+  return calibration
 }
 
 async function checkSuperseding(

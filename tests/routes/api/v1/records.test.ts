@@ -417,7 +417,7 @@ const ELSEWHERE: Readonly<Record<string, string>> = {
   'get /openapi.json': 'openapi.test.ts: open to all',
   'post /tokens': 'people.test.ts: needs a password, not a token',
   'post /runs/{runId}/uploads': 'uploads.test.ts: multipart',
-  'post /calibrations/files': 'uploads.test.ts: multipart',
+  'post /calibrations/files': 'tests/integration/access/calibration-files.test.ts: multipart',
 }
 
 const operationOf = (route: string) => {
