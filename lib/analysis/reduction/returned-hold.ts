@@ -3,6 +3,7 @@ import ln from '@stdlib/math-base-special-ln'
 import { type Caution } from '../caution'
 import { raiseCaution } from '../cautions'
 import { type Estimate } from '../estimate'
+import { propagate } from '../propagate'
 import { totalUncertainty } from '../total-uncertainty'
 import { GAS_CONSTANT_J_PER_MOL_K } from '../units/constants'
 import { type Point, type RunReduction } from './run-reduction'
@@ -58,6 +59,54 @@ export function judgeReturnedHold(
     }
   }
   return found
+}
+
+/**
+ * Loss of activity on stream that a returned hold shows, with its uncertainty in parts.
+ *
+ * k_d = -ln(ratio) / t; u^2(ln ratio) = u_r^2(r_returned) + u_r^2(r_first) + (E_a / R)^2 [u^2(T_returned) / T_returned^4 + u^2(T_first) / T_first^4] and
+ * (1/T_returned - 1/T_first)^2 u^2(E_a) / R^2, own parts alone; of a shared source what moves the two rates apart is left. A first-order loss between
+ * two states is assumed: how the loss went between them is not seen. The time between is taken as exact. Below zero the bed became more active.
+ * Source: O. Levenspiel, Chemical Reaction Engineering, 3rd edition, 1999, chapter 21 (first-order loss); JCGM 100:2008, 5.1.2 and 5.2.2.
+ *
+ * @param points - of the run [SI]
+ * @param returned - which hold returns to which, and their ratio [-]
+ * @param activationEnergy - of the run's line; null where there is none, then nothing is corrected for the small difference of temperature [J mol-1]
+ * @returns loss in parts, degrees of freedom by Welch and Satterthwaite, and the time it rests on [h-1; h]; null where one of the two holds is missing
+ */
+export function lossOfReturnedHold(
+  points: readonly Point[],
+  returned: NonNullable<RunReduction['returnedHold']>,
+  activationEnergy: Estimate | null,
+): { readonly lossPerH: Estimate; readonly hours: number } | null {
+  const later = points.find((point) => point.hold.number === returned.holdNumber)
+  const earlier = points.find((point) => point.hold.number === returned.returnsTo)
+  const rateLater = later?.rateMolPerKgS ?? null
+  const rateEarlier = earlier?.rateMolPerKgS ?? null
+  if (later === undefined || earlier === undefined || rateLater === null || rateEarlier === null) return null
+  const hours = (later.timeOnStreamS - earlier.timeOnStreamS) / SECONDS_PER_HOUR
+  if (!(hours > 0) || !(returned.ratio.value > 0)) return null
+  const slope = (activationEnergy?.value ?? 0) / GAS_CONSTANT_J_PER_MOL_K
+  const [x, xFirst] = [1 / later.temperatureK.value, 1 / earlier.temperatureK.value]
+  const energyShare = activationEnergy === null ? [] : [activationEnergy]
+  return {
+    lossPerH: propagate(-ln(returned.ratio.value) / hours, [
+      [
+        { estimate: rateLater, sensitivity: -1 / (rateLater.value * hours) },
+        { estimate: rateEarlier, sensitivity: 1 / (rateEarlier.value * hours) },
+      ],
+      [
+        { estimate: later.temperatureK, sensitivity: (slope * x * x) / hours },
+        { estimate: earlier.temperatureK, sensitivity: -(slope * xFirst * xFirst) / hours },
+      ],
+      // what all points of the line share is in their rates already
+      energyShare.map((estimate) => ({
+        estimate: { ...estimate, sharedEffects: {} },
+        sensitivity: -(x - xFirst) / (GAS_CONSTANT_J_PER_MOL_K * hours),
+      })),
+    ]),
+    hours,
+  }
 }
 
 /**
