@@ -122,7 +122,6 @@ export async function readDemoRun(code: string, change: Partial<ReductionMethod>
         ),
       ),
       carbonNumber: { CO2: 1, CH4: 1, CO: 1 },
-      standardReactionEnthalpyJPerMol: [null, null],
     },
     loading: {
       catalystMassKg: run.catalystMassKg,

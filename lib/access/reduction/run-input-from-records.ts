@@ -15,7 +15,7 @@ import {
 import { calibrationEntrySchema, type CalibrationEntry } from '@/lib/domain/calibration'
 import { canonicalJson } from '@/lib/domain/canonical-json'
 import { type MethodSettings } from '@/lib/domain/method'
-import { stoichiometrySchema } from '@/lib/domain/reaction'
+import { stoichiometrySchema, thermochemistrySchema } from '@/lib/domain/reaction'
 import {
   type CalibrationRecord,
   type CampaignRecords,
@@ -166,6 +166,7 @@ function siteCount(bundle: RunBundle): { input: SiteCountInput | null; source: S
 
 function reactionInput(campaign: CampaignRecords): ReactionInput {
   const steps = stoichiometrySchema.array().parse(campaign.steps)
+  const thermochemistry = thermochemistrySchema.nullable().parse(campaign.thermochemistry)
   const species = [...new Set(steps.flatMap((step) => Object.keys(step)))].sort()
   const carbonNumber = Object.fromEntries(
     species.map((name) => [name, elementCount(name)['C'] ?? 0] as const).filter(([, count]) => count > 0),
@@ -175,7 +176,7 @@ function reactionInput(campaign: CampaignRecords): ReactionInput {
     keyReactant: campaign.keyReactant,
     steps,
     carbonNumber,
-    standardReactionEnthalpyJPerMol: steps.map(() => null),
+    ...(thermochemistry === null ? {} : { thermochemistry }),
   }
 }
 

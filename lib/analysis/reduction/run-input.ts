@@ -72,8 +72,6 @@ export interface ReactionInput {
   readonly steps: readonly Stoichiometry[]
   /** carbon atoms of each carbon-bearing species */
   readonly carbonNumber: Readonly<Record<Species, number>>
-  /** NASA-7 name of each species where the built-in thermochemistry serves; user-given data otherwise */
-  readonly standardReactionEnthalpyJPerMol: readonly (number | null)[]
   /** entered with the reaction, for species the built-in table does not hold */
   readonly thermochemistry?: Readonly<Record<Species, EnteredThermochemistry>>
 }

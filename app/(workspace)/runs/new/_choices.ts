@@ -4,6 +4,7 @@ import { listReactions } from '@/lib/access/reactions'
 import { listRigs } from '@/lib/access/rigs'
 import { lastRunOnRig } from '@/lib/access/runs'
 import { listLots, listSamples } from '@/lib/access/samples'
+import { keyReactantEnthalpy } from '@/lib/domain/reaction-enthalpy'
 import { type Actor } from '@/lib/domain/role'
 import { type Loading, type Run } from '@/lib/domain/run'
 import { type RunFormChoices } from '@/lib/domain/run-form'
@@ -35,7 +36,7 @@ export async function runFormChoices(actor: Actor): Promise<RunFormChoices> {
           reaction === undefined
             ? null
             : { name: reaction.name, keyReactant: reaction.keyReactant, steps: reaction.steps },
-        reactionEnthalpyJPerMol: null,
+        reactionEnthalpyJPerMol: reaction === undefined ? null : keyReactantEnthalpy(reaction),
       }
     }),
     samples: samples.map(({ id, code, name, activeMetal }) => ({
