@@ -1,11 +1,10 @@
 'use client'
 
 import { unstable_rethrow } from 'next/navigation'
-import { type ReactNode, useEffect, useMemo, useRef, useState, useTransition } from 'react'
+import { useEffect, useMemo, useRef, useState, useTransition } from 'react'
 import { Button } from '@/components/ui/button'
-import { CheckField } from '@/components/ui/check-field'
-import { classNames } from '@/components/ui/class-names'
 import { type FormState } from '@/components/ui/form-state'
+import { LinkButton } from '@/components/ui/link-button'
 import { Notice } from '@/components/ui/notice'
 import { SelectField } from '@/components/ui/select-field'
 import { TextArea } from '@/components/ui/text-area'
@@ -13,14 +12,13 @@ import { TextField } from '@/components/ui/text-field'
 import { formatQuantity } from '@/lib/analysis/units/format-quantity'
 import { readRunForm } from '@/lib/domain/read-run-form'
 import { openRunForm, type RunFormChoices, type RunFormValues, runFormValuesSchema } from '@/lib/domain/run-form'
-import { speciesText } from '@/lib/domain/species-text'
 import { CautionList } from './caution-list'
 import { DraftLine } from './draft-line'
 import { flowReferenceChoices } from './flow-reference-choices'
 import { unsentDraft } from './draft-keeper'
+import { FeedRow, Part, Radio, Said } from './run-form-parts'
 import { useDraft } from './use-draft'
 
-const FORM = 'log-run'
 const BED_CODES = ['tube-per-particle', 'bed-per-particle']
 const PRESSURE_CODES = ['over-pressure', 'near-pressure-limit', 'over-temperature']
 const GASES = ['CO2', 'CO', 'H2', 'CH4', 'N2', 'Ar', 'He', 'O2', 'H2O', 'NH3', 'C2H4', 'C2H6', 'C3H6', 'C3H8', 'NO']
@@ -33,10 +31,14 @@ export interface RunFormProps {
   /** now, as the server had it when the page was made: both sides render the same */
   readonly now: string
   readonly save: (values: RunFormValues) => Promise<FormState>
+  /** name under which what is typed is kept */
+  readonly draftName?: string
+  /** a run that was logged and is corrected: what it is (campaign, rig, sample, name) stays */
+  readonly corrects?: { readonly code: string; readonly place: string; readonly href: `/runs/${string}` }
 }
 
 /** Log a run: what is in the bed, what flows, and what to be careful about; units as people write them. */
-export function RunForm({ choices, initial, isDraft, now, save }: RunFormProps) {
+export function RunForm({ choices, initial, isDraft, now, save, draftName = 'log-run', corrects }: RunFormProps) {
   const [values, setValues] = useState(initial)
   const [touched, setTouched] = useState<ReadonlySet<string>>(new Set())
   const [hasChanged, setHasChanged] = useState(false)
@@ -44,17 +46,17 @@ export function RunForm({ choices, initial, isDraft, now, save }: RunFormProps) 
   const [isKept, setIsKept] = useState(false)
   const [isPending, startSaving] = useTransition()
   const form = useRef<HTMLFormElement>(null)
-  const draft = useDraft(FORM, values, hasChanged)
+  const draft = useDraft(draftName, values, hasChanged)
   const reading = useMemo(() => readRunForm(values, choices), [values, choices])
 
   // what this tab could not send before it was loaded again is newer than what the server kept
   useEffect(() => {
-    const parsed = runFormValuesSchema.safeParse(unsentDraft(FORM))
+    const parsed = runFormValuesSchema.safeParse(unsentDraft(draftName))
     if (!parsed.success) return
     // eslint-disable-next-line react-hooks/set-state-in-effect -- the tab's store exists only in the browser, after the first render
     setValues(parsed.data)
     setHasChanged(true)
-  }, [])
+  }, [draftName])
 
   const change = (part: Partial<RunFormValues>) => {
     setValues((before) => ({ ...before, ...part }))
@@ -105,7 +107,7 @@ export function RunForm({ choices, initial, isDraft, now, save }: RunFormProps) 
       setAnswer({
         ok: false,
         code: 'invalid',
-        message: 'Not logged yet: some fields need a look.',
+        message: `Not ${corrects === undefined ? 'logged' : 'saved'} yet: some fields need a look.`,
         issues: reading.issues,
       })
       focusFirstFault(form.current)
@@ -125,7 +127,7 @@ export function RunForm({ choices, initial, isDraft, now, save }: RunFormProps) 
         setAnswer({
           ok: false,
           code: 'busy',
-          message: 'Not logged: no connection. What you typed stays here; try again when the connection is back.',
+          message: 'Not saved: no connection. What you typed stays here; try again when the connection is back.',
           issues: [],
         })
       }
@@ -143,14 +145,16 @@ export function RunForm({ choices, initial, isDraft, now, save }: RunFormProps) 
       }}
     >
       <header className="pt-5">
-        <h1>Log a run</h1>
+        <h1>{corrects === undefined ? 'Log a run' : `Correct ${corrects.code}`}</h1>
         <p className="mt-1 text-[13px] text-ink-2">
-          {isDraft
-            ? 'This is what you had typed and not logged yet.'
-            : last === undefined
-              ? 'The first run on this rig. Write quantities with their units, as you are used to.'
-              : `Filled in from ${last.code}, the last run on ${last.rigCode}. Change what differs.`}
-          {isDraft && last !== undefined ? (
+          {corrects !== undefined
+            ? `${corrects.place}. What the run is stays; what was written of it can be corrected, and its numbers follow. Who changed what is kept.`
+            : isDraft
+              ? 'This is what you had typed and not logged yet.'
+              : last === undefined
+                ? 'The first run on this rig. Write quantities with their units, as you are used to.'
+                : `Filled in from ${last.code}, the last run on ${last.rigCode}. Change what differs.`}
+          {corrects === undefined && isDraft && last !== undefined ? (
             <>
               {' '}
               <button type="button" className="cursor-pointer text-accent underline" onClick={fillFromLast}>
@@ -161,40 +165,42 @@ export function RunForm({ choices, initial, isDraft, now, save }: RunFormProps) 
         </p>
       </header>
 
-      <Part title="" aside={null}>
-        <SelectField
-          {...text('campaignId')}
-          label="Campaign"
-          unchosen="Choose a campaign"
-          choices={choices.campaigns.map(({ id, code, name }) => ({ value: id, label: `${name} (${code})` }))}
-          className="col-span-2"
-        />
-        <SelectField
-          {...text('rigId')}
-          label="Rig"
-          unchosen="Choose a rig"
-          choices={choices.rigs.map(({ id, code, name }) => ({
-            value: id,
-            label: code === name ? code : `${code}, ${name}`,
-          }))}
-          onChange={(event) => changeRig(event.target.value)}
-        />
-        <SelectField
-          {...text('channel')}
-          label="Channel"
-          choices={(rig?.channels ?? []).map(({ code }) => ({ value: code, label: code }))}
-        />
-        <SelectField
-          {...text('kind')}
-          label="Kind of run"
-          choices={[
-            { value: 'catalyst', label: 'Catalyst' },
-            { value: 'blank', label: 'Blank, no catalyst' },
-            { value: 'diluent', label: 'Diluent alone' },
-          ]}
-          className="col-span-2"
-        />
-      </Part>
+      {corrects === undefined ? (
+        <Part title="" aside={null}>
+          <SelectField
+            {...text('campaignId')}
+            label="Campaign"
+            unchosen="Choose a campaign"
+            choices={choices.campaigns.map(({ id, code, name }) => ({ value: id, label: `${name} (${code})` }))}
+            className="col-span-2"
+          />
+          <SelectField
+            {...text('rigId')}
+            label="Rig"
+            unchosen="Choose a rig"
+            choices={choices.rigs.map(({ id, code, name }) => ({
+              value: id,
+              label: code === name ? code : `${code}, ${name}`,
+            }))}
+            onChange={(event) => changeRig(event.target.value)}
+          />
+          <SelectField
+            {...text('channel')}
+            label="Channel"
+            choices={(rig?.channels ?? []).map(({ code }) => ({ value: code, label: code }))}
+          />
+          <SelectField
+            {...text('kind')}
+            label="Kind of run"
+            choices={[
+              { value: 'catalyst', label: 'Catalyst' },
+              { value: 'blank', label: 'Blank, no catalyst' },
+              { value: 'diluent', label: 'Diluent alone' },
+            ]}
+            className="col-span-2"
+          />
+        </Part>
+      ) : null}
 
       <Part
         title="Bed"
@@ -205,7 +211,7 @@ export function RunForm({ choices, initial, isDraft, now, save }: RunFormProps) 
           </>
         }
       >
-        {bedIn === undefined ? null : (
+        {bedIn === undefined || corrects !== undefined ? null : (
           <fieldset className="col-span-2">
             <legend className="sr-only">Which bed</legend>
             <Radio
@@ -226,16 +232,20 @@ export function RunForm({ choices, initial, isDraft, now, save }: RunFormProps) 
         )}
         {isNewBed ? (
           <>
-            <SelectField
-              {...text('sampleId')}
-              label="Sample"
-              unchosen={
-                samples.length === 0 && values.campaignId !== '' ? 'No sample in this campaign yet' : 'Choose a sample'
-              }
-              choices={samples.map(({ id, code, name }) => ({ value: id, label: `${code}, ${name}` }))}
-              onChange={(event) => change({ sampleId: event.target.value, lotId: '' })}
-              className={(sample?.lots.length ?? 0) > 0 ? 'col-span-1' : 'col-span-2'}
-            />
+            {corrects === undefined ? (
+              <SelectField
+                {...text('sampleId')}
+                label="Sample"
+                unchosen={
+                  samples.length === 0 && values.campaignId !== ''
+                    ? 'No sample in this campaign yet'
+                    : 'Choose a sample'
+                }
+                choices={samples.map(({ id, code, name }) => ({ value: id, label: `${code}, ${name}` }))}
+                onChange={(event) => change({ sampleId: event.target.value, lotId: '' })}
+                className={(sample?.lots.length ?? 0) > 0 ? 'col-span-1' : 'col-span-2'}
+              />
+            ) : null}
             {(sample?.lots.length ?? 0) > 0 ? (
               <SelectField
                 {...text('lotId')}
@@ -356,12 +366,14 @@ export function RunForm({ choices, initial, isDraft, now, save }: RunFormProps) 
         />
         <TextArea {...text('pretreatment')} label="Pretreatment" isOptional className="col-span-2" rows={2} />
         <TextArea {...text('notes')} label="Notes" isOptional className="col-span-2" rows={2} />
-        <TextField
-          {...text('code')}
-          label="Name of the run"
-          hint="Left empty, it gets the next free number."
-          className="col-span-2"
-        />
+        {corrects === undefined ? (
+          <TextField
+            {...text('code')}
+            label="Name of the run"
+            hint="Left empty, it gets the next free number."
+            className="col-span-2"
+          />
+        ) : null}
       </Part>
 
       <div className="fixed inset-x-0 bottom-0 z-30 border-t border-line bg-paper px-4 py-2 sm:px-6">
@@ -375,173 +387,41 @@ export function RunForm({ choices, initial, isDraft, now, save }: RunFormProps) 
               </ul>
             </Notice>
           ) : null}
-          <DraftLine state={draft.state} signInHref="/sign-in?next=%2Fruns%2Fnew" />
+          <DraftLine
+            state={draft.state}
+            signInHref={`/sign-in?next=${encodeURIComponent(corrects === undefined ? '/runs/new' : `${corrects.href}/edit`)}`}
+          />
           {isKept ? <p className="text-[13px] text-sound">Kept. Open “Log a run” again to go on.</p> : null}
           <div className="mt-1.5 flex gap-2.5">
-            <Button
-              className="min-h-[46px] flex-1 text-[16px]"
-              onClick={() => {
-                setHasChanged(true)
-                draft.keeper.take(values)
-                void draft.keeper.send().then(setIsKept)
-              }}
-            >
-              Save for later
-            </Button>
+            {corrects === undefined ? (
+              <Button
+                className="min-h-[46px] flex-1 text-[16px]"
+                onClick={() => {
+                  setHasChanged(true)
+                  draft.keeper.take(values)
+                  void draft.keeper.send().then(setIsKept)
+                }}
+              >
+                Save for later
+              </Button>
+            ) : (
+              <LinkButton href={corrects.href} className="min-h-[46px] flex-1 text-[16px]">
+                Leave as it was
+              </LinkButton>
+            )}
             <Button
               type="submit"
               kind="main"
               className="min-h-[46px] flex-1 text-[16px]"
               busyWith={isPending ? 'Saving' : null}
             >
-              Save and add files
+              {corrects === undefined ? 'Save and add files' : 'Save corrections'}
             </Button>
           </div>
         </div>
       </div>
     </form>
   )
-}
-
-function Part({
-  title,
-  aside,
-  children,
-}: {
-  readonly title: string
-  readonly aside: ReactNode
-  readonly children: ReactNode
-}) {
-  return (
-    <fieldset className="mt-4 min-w-0">
-      {title === '' ? (
-        <legend className="sr-only">What and where</legend>
-      ) : (
-        <legend className="flex w-full items-center gap-3 font-head text-[17px] font-[560]">
-          {title}
-          <span className="h-px flex-1 bg-line" aria-hidden="true" />
-        </legend>
-      )}
-      <div className="mt-2 grid gap-x-10 gap-y-3 lg:grid-cols-[minmax(0,34rem)_minmax(0,30rem)]">
-        <div className="grid grid-cols-2 content-start gap-x-3 gap-y-2.5">{children}</div>
-        <div className="grid content-start gap-2.5">{aside}</div>
-      </div>
-    </fieldset>
-  )
-}
-
-function Said({ children }: { readonly children: ReactNode }) {
-  return <p className="text-[13px] text-ink-2">{children}</p>
-}
-
-function Radio({
-  name,
-  value,
-  label,
-  isChecked,
-  onChoose,
-}: {
-  readonly name: string
-  readonly value: string
-  readonly label: string
-  readonly isChecked: boolean
-  readonly onChoose: () => void
-}) {
-  return (
-    <label className="flex min-h-8 items-center gap-2.5 touch:min-h-11">
-      <input
-        type="radio"
-        name={name}
-        value={value}
-        checked={isChecked}
-        onChange={onChoose}
-        className="size-[18px] shrink-0 accent-(--accent) touch:size-6"
-      />
-      {label}
-    </label>
-  )
-}
-
-type FeedRowValues = RunFormValues['feed'][number]
-
-function FeedRow({
-  position,
-  row,
-  moleFraction,
-  speciesIssue,
-  flowIssue,
-  said,
-  onChange,
-  onTouch,
-  onRemove,
-}: {
-  readonly position: number
-  readonly row: FeedRowValues
-  readonly moleFraction: number | null
-  readonly speciesIssue: string | undefined
-  readonly flowIssue: string | undefined
-  readonly said: string | undefined
-  readonly onChange: (part: Partial<FeedRowValues>) => void
-  readonly onTouch: (name: 'species' | 'flow') => void
-  readonly onRemove: () => void
-}) {
-  const number = String(position + 1)
-  const gas = row.species.trim() === '' ? `gas ${number}` : speciesText(row.species.trim())
-  const note = `feed-${number}-note`
-  return (
-    <div className="grid grid-cols-[4.5rem_minmax(0,1fr)_auto] items-center gap-x-2.5 gap-y-0.5 sm:grid-cols-[5rem_minmax(0,1fr)_7rem_auto]">
-      <input
-        name={`feed.${String(position)}.species`}
-        aria-label={`Gas ${number}, formula`}
-        value={row.species}
-        list="gases"
-        autoComplete="off"
-        autoCapitalize="off"
-        spellCheck={false}
-        placeholder="CO2"
-        className="control"
-        aria-invalid={speciesIssue === undefined ? undefined : true}
-        aria-describedby={note}
-        onChange={(event) => onChange({ species: event.target.value })}
-        onBlur={() => onTouch('species')}
-      />
-      <input
-        name={`feed.${String(position)}.flow`}
-        aria-label={`Flow of ${gas}`}
-        value={row.flow}
-        autoComplete="off"
-        placeholder="7.2 mL/min"
-        className="control"
-        aria-invalid={flowIssue === undefined ? undefined : true}
-        aria-describedby={note}
-        onChange={(event) => onChange({ flow: event.target.value })}
-        onBlur={() => onTouch('flow')}
-      />
-      <div className="hidden text-[13px] text-ink-2 sm:block">{share(moleFraction, row.isStandard)}</div>
-      <Button kind="quiet" className="px-1 touch:px-1" onClick={onRemove} aria-label={`Take ${gas} out`}>
-        Take out
-      </Button>
-      <div id={note} className="col-span-full text-[13px] text-ink-2">
-        <span className="sm:hidden">{share(moleFraction, row.isStandard)} </span>
-        {said === undefined ? null : <span className={classNames('max-sm:hidden')}>{said}</span>}
-        {speciesIssue === undefined ? null : <span className="block text-fault">{speciesIssue}</span>}
-        {flowIssue === undefined ? null : <span className="block text-fault">{flowIssue}</span>}
-      </div>
-      <CheckField
-        className="col-span-full"
-        label={`${gas === `gas ${number}` ? 'This gas' : gas} is the internal standard`}
-        checked={row.isStandard}
-        onChange={(event) => onChange({ isStandard: event.target.checked })}
-      />
-    </div>
-  )
-}
-
-function share(moleFraction: number | null, isStandard: boolean): string {
-  const standard = isStandard ? 'standard' : ''
-  if (moleFraction === null) return standard
-  const percent = 100 * moleFraction
-  return `${percent >= 10 ? percent.toFixed(1) : percent.toPrecision(2)} %${isStandard ? `, ${standard}` : ''}`
 }
 
 function focusFirstFault(form: HTMLFormElement | null): void {

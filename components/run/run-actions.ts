@@ -15,6 +15,7 @@ export interface RunActions {
 /** What this person may do with this run. */
 export interface RunPermissions {
   readonly canAddFiles: boolean
+  readonly canEdit: boolean
   readonly canHandIn: boolean
   readonly canDecide: boolean
   readonly canLeaveOut: boolean

@@ -44,6 +44,7 @@ export function RunButtons({ runId, runCode, state, decision, version, permissio
         // the part is this run's own id, put together at run time
         <LinkButton href={`/runs/${runId}/intake` as Route}>Add files</LinkButton>
       ) : null}
+      {permissions.canEdit ? <LinkButton href={`/runs/${runId}/edit` as Route}>Correct</LinkButton> : null}
       {permissions.canDecide && state !== 'open' ? (
         <Button kind={state === 'handed-in' ? 'main' : 'plain'} onClick={() => setIsDeciding(true)}>
           {decision === null ? 'Decide' : 'Decide again'}

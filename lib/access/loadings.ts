@@ -84,30 +84,39 @@ export async function changeLoading(
   version: number,
 ): Promise<Loading> {
   refuseEmpty(change)
-  const scope = touchableSamples(actor)
   const db = await getDatabase()
-  return db.transaction(async (tx) => {
-    const before = await foundLoading(tx, scope, id)
-    const runs = await selectRunSummaries(tx, 'all', { loadingId: id }, wholeList)
-    const campaignIds = [...new Set(runs.map((run) => run.campaignId))].sort()
-    authorise(
-      runs.length > 0 && runs.every((run) => can.editRun(actor, run)),
-      'A loading is corrected by who may edit every run on it.',
-    )
-    for (const campaignId of campaignIds) await holdOpenCampaign(tx, campaignId)
-    await checkLot(tx, before.sampleId, change.lotId)
-    if (!(await updateLoading(tx, id, version, change))) refuseStale(await foundLoading(tx, scope, id))
-    const after = await foundLoading(tx, scope, id)
-    for (const run of runs) checkBed(after, run.kind)
-    for (const campaignId of campaignIds)
-      await insertAuditEntry(tx, {
-        actor,
-        action: 'loading.change',
-        entity: 'loading',
-        entityId: id,
-        campaignId,
-        ...changedFields(before, after),
-      })
-    return after
-  })
+  return db.transaction((tx) => changeLoadingIn(tx, actor, id, change, version))
+}
+
+/** The same within a larger change. */
+export async function changeLoadingIn(
+  tx: Transaction,
+  actor: Actor,
+  id: string,
+  change: LoadingChange,
+  version: number,
+): Promise<Loading> {
+  const scope = touchableSamples(actor)
+  const before = await foundLoading(tx, scope, id)
+  const runs = await selectRunSummaries(tx, 'all', { loadingId: id }, wholeList)
+  const campaignIds = [...new Set(runs.map((run) => run.campaignId))].sort()
+  authorise(
+    runs.length > 0 && runs.every((run) => can.editRun(actor, run)),
+    'A loading is corrected by who may edit every run on it.',
+  )
+  for (const campaignId of campaignIds) await holdOpenCampaign(tx, campaignId)
+  await checkLot(tx, before.sampleId, change.lotId)
+  if (!(await updateLoading(tx, id, version, change))) refuseStale(await foundLoading(tx, scope, id))
+  const after = await foundLoading(tx, scope, id)
+  for (const run of runs) checkBed(after, run.kind)
+  for (const campaignId of campaignIds)
+    await insertAuditEntry(tx, {
+      actor,
+      action: 'loading.change',
+      entity: 'loading',
+      entityId: id,
+      campaignId,
+      ...changedFields(before, after),
+    })
+  return after
 }

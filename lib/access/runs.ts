@@ -38,6 +38,7 @@ import { type Actor } from '../domain/role'
 import {
   type FeedEntry,
   type Loading,
+  type LoadingChange,
   type NewDecision,
   type NewExclusion,
   type NewHoldEdit,
@@ -55,7 +56,7 @@ import { readableCampaigns } from '../policy/campaign-scope'
 import { authorise, hideUnless } from './authorise'
 import { authoriseIn, holdOpenCampaign, touchableCampaigns } from './campaign-rights'
 import { codeAfter } from './code-after'
-import { checkBed, packLoading } from './loadings'
+import { changeLoadingIn, checkBed, packLoading } from './loadings'
 import { refuseEmpty, refuseField, refuseStale } from './stale'
 
 const EDITORS =
@@ -171,26 +172,53 @@ async function loadingFor(tx: Transaction, actor: Actor, input: NewRun): Promise
 /** Changes what was noted of a run. */
 export async function changeRun(actor: Actor, id: string, change: RunChange, version: number): Promise<Run> {
   refuseEmpty(change)
+  const db = await getDatabase()
+  return db.transaction((tx) => changeRunIn(tx, actor, id, change, version))
+}
+
+async function changeRunIn(
+  tx: Transaction,
+  actor: Actor,
+  id: string,
+  change: RunChange,
+  version: number,
+): Promise<Run> {
   const { feed, ...fields } = change
   if (feed !== undefined) checkFeed(feed)
+  const before = await holdRun(tx, actor, id)
+  authorise(can.editRun(actor, before), EDITORS)
+  const { campaignId } = before
+  const isChanged = await updateRun(tx, [campaignId], { id, version, states: [before.state] }, fields)
+  if (!isChanged) refuseStale(before)
+  if (feed !== undefined) await replaceFeed(tx, id, feed)
+  const after = await foundRun(tx, campaignId, id)
+  await insertAuditEntry(tx, {
+    actor,
+    action: 'run.change',
+    entity: 'run',
+    entityId: id,
+    campaignId,
+    ...changedFields(before, after),
+  })
+  return after
+}
+
+/** Corrects what was logged, the bed's record with it: both or neither. A part without a field is left alone. */
+export async function correctRun(
+  actor: Actor,
+  id: string,
+  corrected: { readonly run: RunChange; readonly bed: LoadingChange },
+  versions: { readonly run: number; readonly bed: number },
+): Promise<Run> {
   const db = await getDatabase()
   return db.transaction(async (tx) => {
     const before = await holdRun(tx, actor, id)
     authorise(can.editRun(actor, before), EDITORS)
-    const { campaignId } = before
-    const isChanged = await updateRun(tx, [campaignId], { id, version, states: [before.state] }, fields)
-    if (!isChanged) refuseStale(before)
-    if (feed !== undefined) await replaceFeed(tx, id, feed)
-    const after = await foundRun(tx, campaignId, id)
-    await insertAuditEntry(tx, {
-      actor,
-      action: 'run.change',
-      entity: 'run',
-      entityId: id,
-      campaignId,
-      ...changedFields(before, after),
-    })
-    return after
+    if (Object.keys(corrected.bed).length > 0)
+      await changeLoadingIn(tx, actor, before.loadingId, corrected.bed, versions.bed)
+    return Object.keys(corrected.run).length > 0
+      ? changeRunIn(tx, actor, id, corrected.run, versions.run)
+      : foundRun(tx, before.campaignId, id)
   })
 }
 

@@ -131,6 +131,37 @@ export function openRunForm(
   return last === undefined ? blank : { ...blank, ...fromLastRun(last), campaignId: blank.campaignId }
 }
 
+/** The form of a run that was logged, to correct it. */
+export function formOfRun(run: Run, timeZone: string, key: string): RunFormValues {
+  return {
+    key,
+    campaignId: run.campaignId,
+    kind: run.kind,
+    code: run.code,
+    sampleId: run.sampleId,
+    lotId: '',
+    rigId: run.rigId,
+    channel: run.channel,
+    bed: 'new',
+    catalyst: '',
+    weighing: '',
+    diluent: '',
+    sieve: '',
+    tube: '',
+    bedLength: '',
+    feed: [],
+    flowReference: '',
+    pressure: '',
+    pressureKind: '',
+    highestTemperature: '',
+    pretreatment: '',
+    ...fromLastRun(run),
+    barometer: run.barometerPa === null ? '' : typedQuantity(run.barometerPa, 'pressure'),
+    start: localFromInstant(new Date(run.startedAt), timeZone),
+    notes: run.notes,
+  }
+}
+
 function fromLastRun(run: Run): Partial<RunFormValues> {
   const { loading } = run
   const firstFeed = run.feed[0]

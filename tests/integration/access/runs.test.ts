@@ -6,6 +6,7 @@ import {
   addExclusion,
   addRemark,
   changeRun,
+  correctRun,
   createRun,
   decide,
   editHold,
@@ -317,4 +318,49 @@ test('lists go on after any row of theirs, without gap or repeat', async () => {
     after = { startedAt: last.startedAt, id: last.id }
   }
   expect(seen).toEqual(all.map((row) => row.id))
+})
+
+describe('corrections', () => {
+  test('of run and bed are one change: both or neither', async () => {
+    const technician = lab.own.actor('technician')
+    const run = await createRun(technician, lab.own.runInput())
+    const versions = { run: run.version, bed: run.loading.version }
+    const before = (await trail()).length
+    const done = await correctRun(
+      technician,
+      run.id,
+      { run: { notes: 'weighed again' }, bed: { catalystMassKg: 8.2e-5 } },
+      versions,
+    )
+    expect([done.notes, done.loading.catalystMassKg]).toEqual(['weighed again', 8.2e-5])
+    expect((await trail()).slice(before).map(({ action }) => action)).toEqual(['loading.change', 'run.change'])
+
+    // the bed's version is new, the run's is the old one: nothing of it may stay
+    const stale = { run: versions.run, bed: done.loading.version }
+    const refusal = await refusalOf(
+      correctRun(technician, run.id, { run: { notes: 'x' }, bed: { catalystMassKg: 9e-5 } }, stale),
+    )
+    expect(refusal.code).toBe('stale')
+    expect((await getRun(technician, run.id)).loading.catalystMassKg).toBe(8.2e-5)
+    expect((await trail()).length).toBe(before + 2)
+  })
+
+  test('with nothing in them change nothing', async () => {
+    const technician = lab.own.actor('technician')
+    const run = await createRun(technician, lab.own.runInput())
+    const before = (await trail()).length
+    const same = await correctRun(technician, run.id, { run: {}, bed: {} }, { run: 1, bed: 1 })
+    expect([same.version, (await trail()).length]).toEqual([run.version, before])
+  })
+
+  test('are made by who may edit the run', async () => {
+    const run = await createRun(lab.own.actor('technician'), lab.own.runInput())
+    const versions = { run: run.version, bed: run.loading.version }
+    const change = { run: { notes: 'x' }, bed: {} }
+    const other = lab.own.actor('technician', { userId: 'own-researcher' })
+    expect((await refusalOf(correctRun(other, run.id, change, versions))).code).toBe('not-allowed')
+    for (const actor of [lab.own.actor('guest'), lab.other.lead])
+      expect((await refusalOf(correctRun(actor, run.id, change, versions))).code).toBe('not-found')
+    expect((await correctRun(lab.own.actor('researcher'), run.id, change, versions)).notes).toBe('x')
+  })
 })

@@ -88,6 +88,7 @@ export default async function RunPage({ params }: RunPageProps) {
   ])
   const permissions = {
     canAddFiles: can.addFiles(actor, run),
+    canEdit: can.editRun(actor, run),
     canHandIn: can.handIn(actor, run),
     canDecide: can.decide(actor, run.campaignId, run),
     canLeaveOut: can.leaveOut(actor, run),
