@@ -7,6 +7,7 @@ import { drizzle as drizzlePool } from 'drizzle-orm/node-postgres'
 import { environment } from '@/lib/environment'
 import { databaseLimits, INTERACTIVE_LIMITS } from './database-limits'
 import { insideTransaction } from './inside-transaction'
+import { rememberKeyedChanges } from './keyed-request'
 import { mapDatabaseError } from './map-database-error'
 import { migrateDatabase } from './migrate'
 import { acquireDataFolderLock } from './pglite/data-folder-lock'
@@ -43,7 +44,7 @@ function mapTransactionErrors(database: Database): Database {
 export function databaseOnThread(thread: PGliteThread): Database {
   const client = thread as unknown as Parameters<typeof drizzleThread>[0]
   const built = drizzleThread({ client, schema } as { client: never; schema: typeof schema })
-  return mapTransactionErrors(built as PgliteDatabase<typeof schema> as unknown as Database)
+  return rememberKeyedChanges(mapTransactionErrors(built as PgliteDatabase<typeof schema> as unknown as Database))
 }
 
 export async function openServerDatabase(url: string): Promise<OpenDatabase> {
@@ -63,7 +64,7 @@ export async function openServerDatabase(url: string): Promise<OpenDatabase> {
       return result
     }, config).finally(() => (scope.isOpen = false))
   }
-  mapTransactionErrors(database)
+  rememberKeyedChanges(mapTransactionErrors(database))
   try {
     await migrateDatabase(database)
   } catch (error) {

@@ -1,6 +1,7 @@
 import 'server-only'
 import type { Actor } from '@/lib/domain/role'
 import type { Transaction } from '../executor'
+import { noteChange } from '../keyed-request'
 import { auditEntries } from '../schema'
 
 export interface AuditEntryInput {
@@ -18,6 +19,7 @@ export interface AuditEntryInput {
 
 /** Writes who did what, in the transaction of the change itself. Number, time and hashes are the database's own. */
 export async function insertAuditEntry(tx: Transaction, input: AuditEntryInput): Promise<void> {
+  noteChange()
   await tx.insert(auditEntries).values({
     actorId: input.actor.userId,
     sessionRef: input.actor.sessionRef,

@@ -312,7 +312,7 @@ export async function claimIdempotencyKey(
     .where(
       and(
         eq(idempotencyKeys.userId, claim.userId),
-        sql`(${lt(idempotencyKeys.createdAt, claim.answeredBefore)} or (${isNull(idempotencyKeys.status)} and ${lt(idempotencyKeys.createdAt, claim.unansweredBefore)}))`,
+        sql`(${lt(idempotencyKeys.createdAt, claim.answeredBefore)} or (${isNull(idempotencyKeys.status)} and ${isNull(idempotencyKeys.response)} and ${lt(idempotencyKeys.createdAt, claim.unansweredBefore)}))`,
       ),
     )
   const made = await tx
@@ -323,21 +323,28 @@ export async function claimIdempotencyKey(
   return made.length === 1
 }
 
+/** One claim of a key; the time tells it from a later one that took its place. */
+export interface KeyClaim {
+  readonly userId: string
+  readonly key: string
+  readonly claimedAt: Date
+}
+
+const ofClaim = ({ userId, key, claimedAt }: KeyClaim) =>
+  and(eq(idempotencyKeys.userId, userId), eq(idempotencyKeys.key, key), eq(idempotencyKeys.createdAt, claimedAt))
+
 export async function storeIdempotentAnswer(
   db: Executor,
-  userId: string,
-  key: string,
+  claim: KeyClaim,
   status: number,
   response: unknown,
 ): Promise<void> {
-  await db
-    .update(idempotencyKeys)
-    .set({ status, response })
-    .where(and(eq(idempotencyKeys.userId, userId), eq(idempotencyKeys.key, key)))
+  await db.update(idempotencyKeys).set({ status, response }).where(ofClaim(claim))
 }
 
-export async function releaseIdempotencyKey(db: Executor, userId: string, key: string): Promise<void> {
+/** Frees the key of a request that came to nothing; one whose change was committed keeps it. */
+export async function releaseIdempotencyKey(db: Executor, claim: KeyClaim): Promise<void> {
   await db
     .delete(idempotencyKeys)
-    .where(and(eq(idempotencyKeys.userId, userId), eq(idempotencyKeys.key, key), isNull(idempotencyKeys.status)))
+    .where(and(ofClaim(claim), isNull(idempotencyKeys.status), isNull(idempotencyKeys.response)))
 }

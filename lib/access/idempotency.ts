@@ -1,13 +1,14 @@
 import 'server-only'
 import { createHash } from 'node:crypto'
 import { getDatabase } from '../../db/client'
+import { changesOf, runKeyed } from '../../db/keyed-request'
 import { claimIdempotencyKey, releaseIdempotencyKey, storeIdempotentAnswer } from '../../db/mutations/people'
 import { selectIdempotencyKey } from '../../db/queries/people'
 import { AppError } from '../domain/errors'
 import { type Actor } from '../domain/role'
 
 const ANSWERED_LIFE_S = 86_400
-/** A request that never answered, because the process died under it, frees its key after this. */
+/** A request that never answered nor changed anything, because the process died under it, frees its key after this. */
 const UNANSWERED_LIFE_S = 600
 const KEY = /^[\x21-\x7e]{8,200}$/
 
@@ -35,12 +36,17 @@ function storedAnswer(status: number, response: unknown): StoredAnswer {
  * Runs a creating request at most once for its key. The same key with the same request answers what was answered the
  * first time; with another request it is refused; while the first is still running the second is asked to wait. An
  * answer that is not a success is not kept, so that the request may be mended and sent again.
+ *
+ * What a change gave is written beside the key in the transaction of the change. Where the process died between commit and
+ * answer, the work runs again on that: it makes nothing twice and comes to the same answer.
+ *
+ * @param work - the request; told whether an earlier try of it changed something
  */
 export async function onceForKey(
   actor: Actor,
   key: string,
   request: { readonly method: string; readonly path: string; readonly body: string },
-  work: () => Promise<StoredAnswer>,
+  work: (isResumed: boolean) => Promise<StoredAnswer>,
   now = new Date(),
 ): Promise<StoredAnswer> {
   if (!KEY.test(key))
@@ -63,6 +69,8 @@ export async function onceForKey(
       unansweredBefore: before(UNANSWERED_LIFE_S),
     }),
   )
+  let claimedAt = now
+  let done: ReadonlyMap<number, unknown> = new Map()
   if (!isClaimed) {
     const earlier = await selectIdempotencyKey(db, actor.userId, key)
     if (earlier !== null && earlier.requestHash !== requestHash)
@@ -70,7 +78,9 @@ export async function onceForKey(
         'unprocessable',
         'This Idempotency-Key was used for another request. Take a new key for a new request.',
       )
-    if (earlier === null || earlier.status === null)
+    if (earlier !== null && earlier.status !== null) return storedAnswer(earlier.status, earlier.response)
+    const changes = earlier === null ? null : changesOf(earlier.response)
+    if (earlier === null || changes === null)
       throw new AppError(
         'conflict',
         'The first request with this Idempotency-Key is still running. Send it again in a moment.',
@@ -78,16 +88,18 @@ export async function onceForKey(
           retryAfterS: 2,
         },
       )
-    return storedAnswer(earlier.status, earlier.response)
+    claimedAt = earlier.createdAt
+    done = changes
   }
+  const claim = { userId: actor.userId, key, claimedAt }
   try {
-    const answer = await work()
+    const answer = await runKeyed({ ...claim, done }, () => work(done.size > 0))
     if (answer.status >= 200 && answer.status < 300)
-      await storeIdempotentAnswer(db, actor.userId, key, answer.status, { body: answer.body, headers: answer.headers })
-    else await releaseIdempotencyKey(db, actor.userId, key)
+      await storeIdempotentAnswer(db, claim, answer.status, { body: answer.body, headers: answer.headers })
+    else await releaseIdempotencyKey(db, claim)
     return answer
   } catch (error) {
-    await releaseIdempotencyKey(db, actor.userId, key)
+    await releaseIdempotencyKey(db, claim)
     throw error
   }
 }

@@ -132,7 +132,7 @@ function answerToError(error: unknown, requestId: string): Response {
       status: 500,
       code: 'internal',
       title: 'Something went wrong here',
-      detail: `The request could not be finished. Nothing of it was kept. The log has the cause under ${requestId}.`,
+      detail: `The request could not be answered. Look whether it was done before you repeat it; with an Idempotency-Key nothing is done twice. The log has the cause under ${requestId}.`,
     },
     requestId,
   )
@@ -249,17 +249,27 @@ async function runOnce(request: Request, actor: Actor, key: string, work: () => 
   const body = await readText(request.clone())
   const { pathname, search } = new URL(request.url)
   let made: Response | null = null
-  const stored = await onceForKey(actor, key, { method: request.method, path: pathname + search, body }, async () => {
-    made = await work()
-    // What holds a secret is answered and not kept: the table of answers would give it away.
-    if (made.headers.has(HOLDS_SECRET)) return { status: made.status, body: null, headers: { [HOLDS_SECRET]: '1' } }
-    const kept: Record<string, string> = {}
-    for (const name of ['etag', 'location', 'content-type']) {
-      const value = made.headers.get(name)
-      if (value !== null) kept[name] = value
-    }
-    return { status: made.status, body: await made.clone().text(), headers: kept }
-  })
+  const stored = await onceForKey(
+    actor,
+    key,
+    { method: request.method, path: pathname + search, body },
+    async (isResumed) => {
+      made = await work()
+      // What holds a secret is answered and not kept: the table of answers would give it away.
+      if (made.headers.has(HOLDS_SECRET)) {
+        const { status } = made
+        // made anew for what was kept with the first try, it would open nothing
+        if (isResumed) made = null
+        return { status, body: null, headers: { [HOLDS_SECRET]: '1' } }
+      }
+      const kept: Record<string, string> = {}
+      for (const name of ['etag', 'location', 'content-type']) {
+        const value = made.headers.get(name)
+        if (value !== null) kept[name] = value
+      }
+      return { status: made.status, body: await made.clone().text(), headers: kept }
+    },
+  )
   if (made !== null) return made
   if (Object.hasOwn(stored.headers, HOLDS_SECRET))
     throw new AppError(
