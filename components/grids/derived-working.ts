@@ -2,7 +2,19 @@ import { type Working } from '@/lib/analysis/working'
 import { plainSymbol } from '@/lib/analysis/working-symbols'
 import { type Ranking, type RankingRow } from '@/lib/domain/ranking'
 import { formatFixed } from '@/components/numbers/format-fixed'
-import { speciesLabel } from '@/components/numbers/species-label'
+import { whyMissing, workingKeyOf } from './ranking-columns'
+
+const missingMeanings: Readonly<Record<string, string>> = {
+  rank: 'Rank',
+  activationEnergyJPerMol: 'Apparent activation energy',
+  lnPreExponential: 'ln A',
+  rateMolPerKgS: 'Rate at the reference',
+  turnoverFrequencyPerS: 'Turnover frequency at the reference',
+  selectivity: 'Selectivity at the target conversion',
+  temperatureForConversionK: 'Temperature for the target conversion',
+  carbonBalance: 'Carbon balance',
+  decayPerH: 'Loss of activity',
+}
 
 function rankWorking(ranking: Ranking, row: RankingRow): Working | null {
   if (row.rank === null || row.rankInterval === null) return null
@@ -31,28 +43,26 @@ function rankWorking(ranking: Ranking, row: RankingRow): Working | null {
   }
 }
 
-function selectivityWorking(ranking: Ranking, row: RankingRow, species: string): Working | null {
-  const value = row.selectivity[species]
-  if (value === undefined) return null
-  const target = ranking.targetConversion
+/** What there is to say about a number that cannot be told. */
+function missingWorking(row: RankingRow, colId: string): Working | null {
+  const why = row.kind === 'blank' ? '' : whyMissing(row, colId)
+  const meaning = missingMeanings[colId.split('.')[0] ?? ''] ?? null
+  if (why === '' || meaning === null) return null
   return {
-    title: `Selectivity to ${speciesLabel(species)} of ${row.sampleCode}`,
-    formula: 'S = S_1 + (X − X_1)/(X_2 − X_1) · (S_2 − S_1)',
-    symbols: [plainSymbol('X', 'target conversion of the method', target === undefined ? null : target * 100, '%')],
-    result: plainSymbol('S', `share of the converted carbon found as ${speciesLabel(species)}`, value * 100, 'C-mol %'),
-    assumptions: [
-      'At equal conversion for all samples, by a straight line between the two neighbouring holds; mean of the runs in the line.',
-    ],
-    source: 'common practice',
-    from: row.runs.filter((run) => run.isIncluded).map((run) => `${run.code}: points in the line`),
-    leftOut: [],
-    notes: [],
+    title: `${meaning} of ${row.sampleCode}`,
+    formula: 'cannot tell',
+    symbols: [],
+    result: plainSymbol('', meaning, null),
+    assumptions: [],
+    source: 'nothing computed',
+    from: [],
+    leftOut: row.runs.filter((run) => !run.isIncluded && run.reason !== '').map((run) => `${run.code}: ${run.reason}`),
+    notes: [`Cannot tell: ${why}`],
   }
 }
 
 /** The working of a number that the grid's rows carry without one: it follows from the ranking as a whole. */
 export function derivedWorking(ranking: Ranking, row: RankingRow, colId: string): Working | null {
-  if (colId === 'rank' || colId === 'rankInterval' || colId === 'probabilityBest') return rankWorking(ranking, row)
-  if (colId.startsWith('selectivity.')) return selectivityWorking(ranking, row, colId.slice('selectivity.'.length))
-  return null
+  const key = workingKeyOf(colId)
+  return key === 'rank' ? (rankWorking(ranking, row) ?? missingWorking(row, key)) : missingWorking(row, key)
 }

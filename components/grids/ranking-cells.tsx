@@ -23,18 +23,40 @@ type CellProps = CustomCellRendererProps<RankingGridRow, unknown, RankingCellCon
 
 const dash = <span className="text-ink-3">–</span>
 
-/** Value large, uncertainty small; where none is known a mark says so. */
-export function QuantityCell({ value, half }: { value: number | null; half: number | null }) {
-  if (value === null || !Number.isFinite(value)) return dash
+interface QuantityCellProps {
+  readonly value: number | null
+  readonly half: number | null
+  /** why the value or its uncertainty is missing */
+  readonly why?: string
+  /** a blank is not asked for its numbers */
+  readonly isBlank?: boolean
+}
+
+/** Value large, uncertainty small; where one of them is missing the cell says so, and why to a pointer, a screen reader and on a click. */
+export function QuantityCell({ value, half, why = '', isBlank = false }: QuantityCellProps) {
+  if (value === null || !Number.isFinite(value)) {
+    if (isBlank || why === '') return dash
+    return (
+      <span className="text-[12.5px] text-ink-3" title={why}>
+        cannot tell<span className="sr-only">: {why}</span>
+      </span>
+    )
+  }
   return (
     <>
       <ValueWithUncertainty value={value} uncertainty={half} />
-      {half === null ? <span className="text-[.8em] text-ink-3"> ± ?</span> : null}
+      {half === null ? (
+        <span className="text-[.84em] text-ink-2" title={why}>
+          {' '}
+          ± ?<span className="sr-only">, the uncertainty cannot be told{why === '' ? '' : `: ${why}`}</span>
+        </span>
+      ) : null}
+      {half === 0 ? <span className="text-[.84em] text-ink-2"> ± 0</span> : null}
     </>
   )
 }
 
-/** A number that has no uncertainty of its own here. */
+/** A count or a place: exact, without an uncertainty. */
 export function PlainNumberCell({ value, decimals }: { value: number | null; decimals: number }) {
   return value === null || !Number.isFinite(value) ? dash : <span>{formatFixed(value, decimals)}</span>
 }
@@ -76,9 +98,7 @@ export function SampleCell({ data }: CellProps) {
           <span className="rounded-[3px] bg-well px-1.5 text-[12.5px] text-ink-2">provisional</span>
         ) : null}
       </span>
-      <span className="block truncate text-[12.5px] text-ink-3" title={row.sampleName}>
-        {row.sampleName}
-      </span>
+      <span className="block text-[12.5px] leading-[16px] whitespace-normal text-ink-3">{row.sampleName}</span>
     </span>
   )
 }

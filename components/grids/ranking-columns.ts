@@ -68,16 +68,24 @@ const header = (unit: string, scale: IntervalScale | null = null) => ({
 const rowOf = (parameters: ValueGetterParams<RankingGridRow> | ICellRendererParams<RankingGridRow>) =>
   parameters.data?.row
 
-/** A value with half its interval behind ±. */
+/** Why a number of this column, or its uncertainty, is missing; empty where the row does not say. */
+export function whyMissing(row: RankingRow, colId: string): string {
+  return row.cannotTell[colId] ?? (colId.startsWith('selectivity.') ? (row.cannotTell['selectivity'] ?? '') : '')
+}
+
+/** A value with half its interval behind ±; where one of the two is missing the cell says so and why. */
 function quantity(
   colId: string,
   headerName: string,
   unit: PracticalUnit,
-  read: (row: RankingRow) => { estimate: Estimate | null; interval: readonly [number, number] | null },
+  read: (row: RankingRow) => {
+    estimate: Estimate | null | undefined
+    interval: readonly [number, number] | null | undefined
+  },
   more: Column = {},
 ): Column {
   const half = (row: RankingRow) => {
-    const width = halfWidth(read(row).interval)
+    const width = halfWidth(read(row).interval ?? null)
     return width === null ? null : unit.differenceFromSi(width)
   }
   return {
@@ -85,11 +93,11 @@ function quantity(
     ...header(unit.label),
     colId,
     headerName,
-    width: 104,
+    width: 88,
     valueGetter: (parameters) => {
       const row = rowOf(parameters)
       const estimate = row ? read(row).estimate : null
-      return estimate === null ? null : unit.fromSi(estimate.value)
+      return estimate ? unit.fromSi(estimate.value) : null
     },
     cellRenderer: (parameters: ICellRendererParams<RankingGridRow>) => {
       const row = rowOf(parameters)
@@ -97,13 +105,15 @@ function quantity(
       return createElement(QuantityCell, {
         value: typeof value === 'number' ? value : null,
         half: row ? half(row) : null,
+        why: row ? whyMissing(row, colId) : '',
+        isBlank: row?.kind === 'blank',
       })
     },
     ...more,
   }
 }
 
-/** A number without an interval of its own. */
+/** A count, which has no uncertainty. */
 function plain(
   colId: string,
   headerName: string,
@@ -142,7 +152,7 @@ export function formatProbability(probability: number | null): string {
 export function selectivitySpecies(rows: readonly RankingRow[]): string[] {
   const largest = new Map<string, number>()
   for (const row of rows) {
-    for (const [species, value] of Object.entries(row.selectivity)) {
+    for (const [species, { value }] of Object.entries(row.selectivity)) {
       largest.set(species, Math.max(largest.get(species) ?? 0, value))
     }
   }
@@ -156,7 +166,7 @@ function rankColumns(isNarrow: boolean): Column[] {
       ...numeric,
       colId: 'rank',
       headerName: 'Rank',
-      width: 64,
+      width: 56,
       pinned: isNarrow ? null : 'left',
       sort: 'asc',
       valueGetter: (parameters) => rowOf(parameters)?.rank ?? null,
@@ -170,7 +180,7 @@ function rankColumns(isNarrow: boolean): Column[] {
       type: [],
       colId: 'rankInterval',
       headerName: '90 % of draws',
-      width: 96,
+      width: 84,
       pinned: isNarrow ? null : 'left',
       valueGetter: (parameters) => rowOf(parameters)?.rankInterval?.[0] ?? null,
       cellRenderer: RankIntervalCell,
@@ -178,7 +188,8 @@ function rankColumns(isNarrow: boolean): Column[] {
     {
       colId: 'sample',
       headerName: 'Sample',
-      width: isNarrow ? 150 : 170,
+      width: isNarrow ? 140 : 146,
+      autoHeight: true,
       pinned: 'left',
       filter: 'agTextColumnFilter',
       valueGetter: (parameters) => {
@@ -195,7 +206,7 @@ function rankColumns(isNarrow: boolean): Column[] {
 function rateGroups(ranking: Ranking): { first: Group; second: Group } {
   const celsius = formatFixed(ranking.referenceTemperatureK - 273.15, 1).replace('.0', '')
   const best = plain('probabilityBest', 'P(best)', '', 2, (row) => row.probabilityBest, {
-    width: 68,
+    width: 60,
     cellRenderer: (parameters: ICellRendererParams<RankingGridRow>) => {
       const probability = rowOf(parameters)?.probabilityBest ?? null
       return createElement(
@@ -251,53 +262,53 @@ function slopeGroup(ranking: Ranking, scale: IntervalScale | null): Group {
         type: [],
         colId: 'activationEnergyInterval',
         headerName: `${percent} % interval`,
-        width: 114,
+        width: 96,
         filter: false,
         valueGetter: (parameters) => rowOf(parameters)?.activationEnergyInterval?.[0] ?? null,
         cellRenderer: IntervalCell,
       },
-      quantity('lnPreExponential', 'ln A', practicalUnits.lnPreExponential, (row) => ({
-        estimate: row.lnPreExponential,
-        interval: row.lnPreExponentialInterval,
-      })),
+      quantity(
+        'lnPreExponential',
+        'ln A',
+        practicalUnits.lnPreExponential,
+        (row) => ({
+          estimate: row.lnPreExponential,
+          interval: row.lnPreExponentialInterval,
+        }),
+        { width: 94 },
+      ),
     ],
   }
 }
 
 function stateGroup(ranking: Ranking): Group {
   const target = ranking.targetConversion
+  const at = target === undefined ? '' : ` ${String(Number((target * 100).toPrecision(3)))} %`
   return {
     groupId: 'conversion',
-    headerName: 'selectivity and state',
+    headerName: target === undefined ? 'at equal conversion, and on stream' : `at X =${at}, and on stream`,
     headerClass: GROUP_CLASS,
     children: [
-      plain(
+      quantity(
         'temperatureForConversionK',
-        target === undefined ? 'T for X' : `T for X = ${String(Number((target * 100).toPrecision(3)))} %`,
-        '°C',
-        1,
-        (row) =>
-          row.temperatureForConversionK === null
-            ? null
-            : practicalUnits.temperature.fromSi(row.temperatureForConversionK),
-        { width: 110 },
+        'T for X',
+        practicalUnits.temperature,
+        (row) => ({ estimate: row.temperatureForConversionK, interval: row.temperatureForConversionInterval }),
+        { width: 102 },
       ),
       ...selectivitySpecies(ranking.rows).map((species) =>
-        plain(
+        quantity(
           `selectivity.${species}`,
           `S(${speciesLabel(species)})`,
-          'C-mol %',
-          1,
-          (row) => {
-            const value = row.selectivity[species]
-            return value === undefined ? null : value * 100
-          },
-          { width: 88 },
+          practicalUnits.carbonPercent,
+          (row) => ({ estimate: row.selectivity[species], interval: row.selectivityIntervals[species] }),
+          { width: 98 },
         ),
       ),
-      plain('decayPerH', 'Decay', '% h⁻¹', 1, (row) => (row.decayPerH === null ? null : row.decayPerH * 100), {
-        width: 80,
-      }),
+      quantity('decayPerH', 'Decay', practicalUnits.percentPerHour, (row) => ({
+        estimate: row.decayPerH,
+        interval: row.decayInterval,
+      })),
       plain('distinctTemperatures', 'Temps', '', 0, (row) => row.distinctTemperatures, { width: 78 }),
       {
         ...numeric,
@@ -315,7 +326,13 @@ function stateGroup(ranking: Ranking): Group {
   }
 }
 
-const carbonColumn = plain('carbonBalance', 'Carbon', 'out/in', 2, (row) => row.carbonBalance, { width: 66 })
+const carbonColumn = quantity(
+  'carbonBalance',
+  'Carbon',
+  practicalUnits.carbonBalance,
+  (row) => ({ estimate: row.carbonBalance, interval: row.carbonBalanceInterval }),
+  { width: 98 },
+)
 
 /** Doubts and decisions; and the cells that people write. */
 function judgementColumns(permissions: RankingPermissions): { doubts: Column[]; written: Column[] } {
@@ -324,7 +341,7 @@ function judgementColumns(permissions: RankingPermissions): { doubts: Column[]; 
     {
       colId: 'cautions',
       headerName: 'Cautions',
-      width: 172,
+      width: 136,
       filter: 'agTextColumnFilter',
       autoHeight: true,
       valueGetter: (parameters) =>
@@ -336,7 +353,7 @@ function judgementColumns(permissions: RankingPermissions): { doubts: Column[]; 
     {
       colId: 'decision',
       headerName: 'Decision',
-      width: 104,
+      width: 92,
       filter: 'agTextColumnFilter',
       autoHeight: true,
       valueGetter: (parameters) =>
@@ -411,6 +428,5 @@ export function buildRankingColumns(
 export function workingKeyOf(colId: string): string {
   if (colId === 'activationEnergyInterval') return 'activationEnergyJPerMol'
   if (colId === 'rankInterval' || colId === 'probabilityBest') return 'rank'
-  if (colId.startsWith('selectivity.')) return 'selectivity'
   return colId
 }

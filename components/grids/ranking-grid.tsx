@@ -47,7 +47,7 @@ const rowSelection: RowSelectionOptions<RankingGridRow> = {
   enableClickSelection: false,
   isRowSelectable: (node) => node.data?.row.fit != null,
 }
-const selectionColumnDef = { width: 34, pinned: 'left', resizable: false, headerName: '' } as const
+const selectionColumnDef = { width: 30, pinned: 'left', resizable: false, headerName: '' } as const
 /** Filters stand in a row of their own, shown on request: a filter button in each header leaves no room for the unit. */
 const columnDefaults: ColDef<RankingGridRow> = {
   resizable: true,
@@ -98,7 +98,7 @@ export function RankingGrid(props: RankingGridProps) {
           const value = row.activationEnergyJPerMol?.value
           return value === undefined ? null : [value / 1_000, value / 1_000]
         }),
-        98,
+        82,
       ),
     [ranking.rows],
   )

@@ -23,6 +23,9 @@ export const practicalUnits = {
   turnoverFrequency: scaled('10⁻³ s⁻¹', 1e3),
   percent: scaled('%', 100),
   percentPerHour: scaled('% h⁻¹', 100),
+  carbonPercent: scaled('C-mol %', 100),
+  /** carbon out over carbon in */
+  carbonBalance: scaled('out/in', 1),
   hours: scaled('h', 1 / 3_600),
   ratio: scaled('', 1),
   temperature: {

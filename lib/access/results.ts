@@ -20,7 +20,7 @@ import { methodInForce, reduceRuns } from './reduction/reduce-runs'
 import { getRun } from './runs'
 import { listUploads } from './uploads'
 
-type RankingTable = ReturnType<typeof rankingRows>
+type RankingTable = ReturnType<typeof rankingRows> & { readonly computedAt: string }
 
 const shared = globalThis as typeof globalThis & { [key: symbol]: unknown }
 const keptTraces = (shared[Symbol.for('inverse-kelvin.traces')] ??=
@@ -95,9 +95,11 @@ export async function getRanking(actor: Actor, campaignId: string, options: Rank
     })),
   }
   const key = createHash('sha256').update(canonicalJson(named)).digest('hex')
-  const table = await keptTables.getOrCompute(key, async () =>
-    rankingRows({ samples, runs, settings, referenceTemperatureK, includeProvisional }),
-  )
+  const table = await keptTables.getOrCompute(key, async () => ({
+    ...rankingRows({ samples, runs, settings, referenceTemperatureK, includeProvisional }),
+    // of the computing, not of the answer: a kept table is as old as it is
+    computedAt: new Date().toISOString(),
+  }))
   return {
     campaignId,
     campaignCode: summary.code,
@@ -112,7 +114,7 @@ export async function getRanking(actor: Actor, campaignId: string, options: Rank
     draws: settings.draws,
     seed: settings.seed,
     engineId: engineId(),
-    computedAt: new Date().toISOString(),
+    computedAt: table.computedAt,
     includesProvisional: includeProvisional,
     rows: table.rows,
     holdTemperaturesK: runs.flatMap((entry) =>

@@ -35,10 +35,19 @@ export interface RankingRow {
   readonly turnoverFrequencyPerS: Estimate | null
   readonly turnoverFrequencyInterval: readonly [number, number] | null
   /** temperature at which the target conversion is reached at the run's own contact time; null outside the measured range */
-  readonly temperatureForConversionK: number | null
-  readonly selectivity: Readonly<Record<string, number>>
-  readonly carbonBalance: number | null
-  readonly decayPerH: number | null
+  readonly temperatureForConversionK: Estimate | null
+  readonly temperatureForConversionInterval: readonly [number, number] | null
+  /** carbon selectivity at the target conversion, by species */
+  readonly selectivity: Readonly<Record<string, Estimate>>
+  readonly selectivityIntervals: Readonly<Record<string, readonly [number, number] | null>>
+  /** carbon out over carbon in, mean of the runs in the line */
+  readonly carbonBalance: Estimate | null
+  readonly carbonBalanceInterval: readonly [number, number] | null
+  /** first-order loss of activity on stream that returned holds show; below zero the bed became more active */
+  readonly decayPerH: Estimate | null
+  readonly decayInterval: readonly [number, number] | null
+  /** by field name (`selectivity.CH4` for one species): why there is no number, or none behind ± */
+  readonly cannotTell: Readonly<Record<string, string>>
   readonly distinctTemperatures: number
   readonly lowestTemperatureK: number | null
   readonly highestTemperatureK: number | null
@@ -48,8 +57,11 @@ export interface RankingRow {
   readonly priority: number | null
   readonly remark: string
   readonly version: number
+  /** the sample's line as it is ranked: one slope for all its runs */
   readonly fit: ArrheniusFit | null
-  /** keyed by field name of this record */
+  /** each run's own line, where the sample has several in the ranking; empty where the sample's line is that of its one run */
+  readonly runFits: readonly ArrheniusFit[]
+  /** keyed by field name of this record, `selectivity.CH4` for one species */
   readonly workings: Readonly<Record<string, Working>>
 }
 
@@ -69,6 +81,7 @@ export interface Ranking {
   readonly draws: number
   readonly seed: number
   readonly engineId: string
+  /** when these rows were computed; asked for again unchanged, they keep it */
   readonly computedAt: string
   readonly includesProvisional: boolean
   readonly rows: readonly RankingRow[]

@@ -18,19 +18,22 @@ function numberColumns(
   estimate: (row: RankingRow) => Estimate | null,
   interval: (row: RankingRow) => readonly [number, number] | null,
   level: number,
+  /** a unit with a zero of its own: what is added to the value and the ends, and the unit of a difference */
+  zero: { readonly offset: number; readonly differenceUnit: string } = { offset: 0, differenceUnit: unit },
 ): RankingColumn[] {
+  const place = (value: number | undefined) => (value === undefined ? null : value * factor + zero.offset)
   const percent = `${Math.round(level * 1000) / 10} %`
   return [
-    { header: `${name} [${unit}]`, value: (row) => scaled(estimate(row)?.value, factor) },
+    { header: `${name} [${unit}]`, value: (row) => place(estimate(row)?.value) },
     {
-      header: `${name}, standard uncertainty [${unit}]`,
+      header: `${name}, standard uncertainty [${zero.differenceUnit}]`,
       value: (row) => {
         const found = estimate(row)
         return found === null ? null : scaled(totalUncertainty(found)?.standardUncertainty, factor)
       },
     },
-    { header: `${name}, ${percent} interval, low [${unit}]`, value: (row) => scaled(interval(row)?.[0], factor) },
-    { header: `${name}, ${percent} interval, high [${unit}]`, value: (row) => scaled(interval(row)?.[1], factor) },
+    { header: `${name}, ${percent} interval, low [${unit}]`, value: (row) => place(interval(row)?.[0]) },
+    { header: `${name}, ${percent} interval, high [${unit}]`, value: (row) => place(interval(row)?.[1]) },
   ]
 }
 
@@ -44,6 +47,10 @@ export function rankingColumns(ranking: Ranking): RankingColumn[] {
   const level = ranking.confidenceLevel
   const celsius = Math.round((ranking.referenceTemperatureK - 273.15) * 100) / 100
   const at = `at ${celsius} °C, feed composition`
+  const target =
+    ranking.targetConversion === undefined
+      ? 'the method’s target'
+      : `${String(Number((ranking.targetConversion * 100).toPrecision(6)))} %`
   const species = [...new Set(ranking.rows.flatMap((row) => Object.keys(row.selectivity)))].sort()
   return [
     { header: 'Rank', value: (row) => row.rank },
@@ -84,16 +91,50 @@ export function rankingColumns(ranking: Ranking): RankingColumn[] {
       (row) => row.lnPreExponentialInterval,
       level,
     ),
+    ...numberColumns(
+      `Temperature for a conversion of ${target}`,
+      '°C',
+      1,
+      (row) => row.temperatureForConversionK,
+      (row) => row.temperatureForConversionInterval,
+      level,
+      { offset: -273.15, differenceUnit: 'K' },
+    ),
+    ...species.flatMap((name) =>
+      numberColumns(
+        `Carbon selectivity to ${name} at a conversion of ${target}`,
+        'C-mol %',
+        100,
+        (row) => row.selectivity[name] ?? null,
+        (row) => row.selectivityIntervals[name] ?? null,
+        level,
+      ),
+    ),
+    ...numberColumns(
+      'Carbon out over carbon in',
+      'mol mol⁻¹',
+      1,
+      (row) => row.carbonBalance,
+      (row) => row.carbonBalanceInterval,
+      level,
+    ),
+    ...numberColumns(
+      'Loss of activity on stream',
+      '% h⁻¹',
+      100,
+      (row) => row.decayPerH,
+      (row) => row.decayInterval,
+      level,
+    ),
     {
-      header: 'Temperature for the target conversion [°C]',
-      value: (row) => (row.temperatureForConversionK === null ? null : row.temperatureForConversionK - 273.15),
+      header: 'What cannot be told',
+      value: (row) =>
+        row.kind === 'blank'
+          ? ''
+          : Object.entries(row.cannotTell)
+              .map(([name, why]) => `${name}: ${why}`)
+              .join(' | '),
     },
-    ...species.map((name) => ({
-      header: `Carbon selectivity to ${name}, mean of the points`,
-      value: (row: RankingRow) => row.selectivity[name] ?? null,
-    })),
-    { header: 'Carbon out over carbon in', value: (row) => row.carbonBalance },
-    { header: 'Loss of activity [% h⁻¹]', value: (row) => scaled(row.decayPerH, 100) },
     { header: 'Distinct temperatures', value: (row) => row.distinctTemperatures },
     {
       header: 'Lowest temperature [°C]',

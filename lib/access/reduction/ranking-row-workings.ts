@@ -2,7 +2,7 @@ import 'server-only'
 import exp from '@stdlib/math-base-special-exp'
 import { type Estimate } from '../../analysis/estimate'
 import { type SiteCountInput } from '../../analysis/reduction/run-input'
-import { type ArrheniusFit, type RunReduction } from '../../analysis/reduction/run-reduction'
+import { type ArrheniusFit } from '../../analysis/reduction/run-reduction'
 import { type Working } from '../../analysis/working'
 import { estimateSymbol, plainSymbol } from '../../analysis/working-symbols'
 import { type MethodSettings } from '../../domain/method'
@@ -37,12 +37,6 @@ export function rowWorkings(
   numbers: SampleNumbers,
   sites: SiteCountInput | null,
   settings: MethodSettings,
-  others: {
-    readonly runs: readonly RunReduction[]
-    readonly temperatureForConversionK: number | null
-    readonly carbonBalance: number | null
-    readonly decayPerH: number | null
-  },
 ): Record<string, Working> {
   const { fit, lnRate, lnTurnover, loadingCount } = numbers
   const base = fit.workings
@@ -93,56 +87,5 @@ export function rowWorkings(
         ],
       }
   }
-  const codes = others.runs.map((run) => run.runCode)
-  const common = {
-    assumptions: [],
-    source: 'common practice',
-    from: codes.map((code) => `${code}: points in the line`),
-    leftOut: [],
-    notes: [],
-  }
-  if (others.temperatureForConversionK !== null)
-    workings['temperatureForConversionK'] = {
-      ...common,
-      title: `Temperature at which ${sampleCode} converts ${settings.targetConversion * 100} %`,
-      formula: '1/T = 1/T_1 + (ln X − ln X_1)/(ln X_2 − ln X_1) · (1/T_2 − 1/T_1)',
-      symbols: [plainSymbol('X', 'target conversion of the method', settings.targetConversion * 100, '%')],
-      result: plainSymbol(
-        'T',
-        'temperature, at the run’s own contact time',
-        others.temperatureForConversionK - 273.15,
-        '°C',
-      ),
-      assumptions: [
-        'Between the two neighbouring holds ln X is straight in 1/T; nothing is said outside the measured range.',
-      ],
-    }
-  if (others.carbonBalance !== null)
-    workings['carbonBalance'] = {
-      ...common,
-      title: `Carbon balance of ${sampleCode}`,
-      formula: 'B_C = Σ n_C F_out / Σ n_C F_in',
-      symbols: others.runs.map((run) => plainSymbol('B_C', `mean of ${run.runCode}`, run.meanCarbonBalance, '')),
-      result: plainSymbol('B_C', 'mean of the runs in the line', others.carbonBalance, ''),
-    }
-  if (others.decayPerH !== null)
-    workings['decayPerH'] = {
-      ...common,
-      title: `Loss of activity of ${sampleCode}`,
-      formula: 'k_d = −ln(r_returned / r_first) / Δt',
-      symbols: others.runs.flatMap((run) =>
-        run.returnedHold === null
-          ? []
-          : [
-              plainSymbol(
-                'r_returned / r_first',
-                `${run.runCode}, hold ${run.returnedHold.holdNumber} against hold ${run.returnedHold.returnsTo}`,
-                run.returnedHold.ratio.value,
-                '',
-              ),
-            ],
-      ),
-      result: plainSymbol('k_d', 'loss per hour on stream, mean of the runs', others.decayPerH * 100, '% h⁻¹'),
-    }
   return workings
 }

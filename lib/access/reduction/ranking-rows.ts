@@ -7,13 +7,15 @@ import { type Caution } from '../../analysis/caution'
 import { mayCountWith, raiseCaution } from '../../analysis/cautions'
 import { type Estimate } from '../../analysis/estimate'
 import { type SiteCountInput } from '../../analysis/reduction/run-input'
-import { type ArrheniusFit, type Point, type RunReduction } from '../../analysis/reduction/run-reduction'
+import { type ArrheniusFit, type RunReduction } from '../../analysis/reduction/run-reduction'
 import { rankSamples, type RankResult } from '../../analysis/ranking/rank-samples'
 import { intervalOf } from '../../analysis/total-uncertainty'
 import { type CampaignSample } from '../../domain/campaign'
 import { type MethodSettings } from '../../domain/method'
 import { type RankingRow, type RankingRun } from '../../domain/ranking'
 import { type RunDecision, type RunState } from '../../domain/run'
+import { withBetweenLoading } from './between-loading'
+import { rowFigures } from './ranking-row-figures'
 import { exponential, rowWorkings, type SampleNumbers } from './ranking-row-workings'
 import { type ReducedRun } from './reduce-runs'
 
@@ -80,19 +82,6 @@ function linePoints(reduction: RunReduction): ArrheniusPoint[] {
   })
 }
 
-/** Spread from one packed bed to another: it belongs to the sample's number beside the scatter of the line, and shrinks with the number of beds. */
-function withBetweenLoading(estimate: Estimate, standardDeviation: number): Estimate {
-  const own = estimate.randomStandardUncertainty
-  if (own === null || standardDeviation === 0) return estimate
-  const variance = own * own + standardDeviation * standardDeviation
-  const nu = estimate.degreesOfFreedom
-  return {
-    ...estimate,
-    randomStandardUncertainty: Math.sqrt(variance),
-    degreesOfFreedom: nu === null || own === 0 ? null : (nu * variance * variance) / (own * own * own * own),
-  }
-}
-
 function expInterval(lnEstimate: Estimate, level: number): readonly [number, number] | null {
   const interval = intervalOf(lnEstimate, level)
   return interval === null ? null : [exp(interval[0]), exp(interval[1])]
@@ -110,54 +99,6 @@ function lnPerSite(lnRate: Estimate, sites: SiteCountInput): Estimate {
   }
 }
 
-const usedPoints = (reduction: RunReduction): Point[] => {
-  const used = new Set((reduction.fit?.points ?? []).filter((point) => point.isUsed).map((point) => point.holdNumber))
-  return reduction.points.filter((point) => used.has(point.hold.number))
-}
-
-const mean = (values: readonly number[]): number | null =>
-  values.length === 0 ? null : values.reduce((total, value) => total + value, 0) / values.length
-
-/** Temperature at which a run reaches a conversion, between two measured holds: ln X is close to straight in 1/T. Null outside them. */
-function temperatureAtConversion(points: readonly Point[], target: number): number | null {
-  const rising = points
-    .flatMap((point) => {
-      const conversion = point.conversion?.value ?? 0
-      return conversion > 0 ? [{ x: 1 / point.temperatureK.value, y: ln(conversion) }] : []
-    })
-    .sort((a, b) => b.x - a.x)
-  const goal = ln(target)
-  for (let i = 0; i + 1 < rising.length; i++) {
-    const cold = rising[i]
-    const hot = rising[i + 1]
-    if (cold === undefined || hot === undefined || cold.y === hot.y || cold.x === hot.x) continue
-    if (cold.y <= goal && goal <= hot.y) return 1 / (cold.x + ((goal - cold.y) / (hot.y - cold.y)) * (hot.x - cold.x))
-  }
-  return null
-}
-
-/** Carbon selectivities of a run at a conversion, by interpolation between measured points only. */
-function selectivityAtConversion(points: readonly Point[], target: number): Record<string, number> {
-  const sorted = points
-    .flatMap((point) => (point.conversion === null ? [] : [{ conversion: point.conversion.value, point }]))
-    .sort((a, b) => a.conversion - b.conversion)
-  for (let i = 0; i + 1 < sorted.length; i++) {
-    const low = sorted[i]
-    const high = sorted[i + 1]
-    if (low === undefined || high === undefined || low.conversion === high.conversion) continue
-    if (low.conversion > target || target > high.conversion) continue
-    const share = (target - low.conversion) / (high.conversion - low.conversion)
-    const result: Record<string, number> = {}
-    for (const species of Object.keys(low.point.carbonSelectivity).sort()) {
-      const a = low.point.carbonSelectivity[species]
-      const b = high.point.carbonSelectivity[species]
-      if (a !== undefined && b !== undefined) result[species] = a.value + share * (b.value - a.value)
-    }
-    return result
-  }
-  return {}
-}
-
 const emptyNumbers = {
   rank: null,
   rankInterval: null,
@@ -171,15 +112,76 @@ const emptyNumbers = {
   turnoverFrequencyPerS: null,
   turnoverFrequencyInterval: null,
   temperatureForConversionK: null,
+  temperatureForConversionInterval: null,
   selectivity: {},
+  selectivityIntervals: {},
   carbonBalance: null,
+  carbonBalanceInterval: null,
   decayPerH: null,
+  decayInterval: null,
+  cannotTell: {},
   distinctTemperatures: 0,
   lowestTemperatureK: null,
   highestTemperatureK: null,
   fit: null,
+  runFits: [],
   workings: {},
 } as const
+
+/** Numbers of a row that may be missing, by the name of their field. */
+const COMPUTED = [
+  'rank',
+  'activationEnergyJPerMol',
+  'lnPreExponential',
+  'rateMolPerKgS',
+  'turnoverFrequencyPerS',
+  'temperatureForConversionK',
+  'selectivity',
+  'carbonBalance',
+  'decayPerH',
+] as const
+
+/** Why a row has no number at all. */
+function whyNothing(runs: readonly RankingRun[], noLine: string): string {
+  if (runs.length === 0) return 'no run of this sample yet.'
+  const reasons = runs.filter((run) => !run.isIncluded).map((run) => `${run.code}: ${run.reason.replace(/\.$/, '')}`)
+  return `${[...reasons, ...(noLine === '' ? [] : [noLine.replace(/\.$/, '')])].join('; ')}.`
+}
+
+/** What the line and the figures beside it cannot say, by field. */
+function cannotTellOf(
+  numbers: SampleNumbers,
+  figures: ReturnType<typeof rowFigures>,
+  rankedBy: MethodSettings['rankedBy'],
+): Record<string, string> {
+  const { fit } = numbers
+  const found: Record<string, string> = {}
+  const noScatter = `${fit.distinctTemperatures} temperatures leave no scatter to judge the line by; three or more are needed.`
+  if (fit.activationEnergyJPerMol.randomStandardUncertainty === null)
+    for (const name of [
+      'rank',
+      'activationEnergyJPerMol',
+      'lnPreExponential',
+      'rateMolPerKgS',
+      'turnoverFrequencyPerS',
+    ])
+      found[name] = noScatter
+  if (fit.isReferenceExtrapolated)
+    found['rank'] = 'the reference temperature lies outside the measured range, where a line says nothing to rank by.'
+  if (numbers.lnTurnover === null) {
+    found['turnoverFrequencyPerS'] = 'no site count for this sample.'
+    if (rankedBy === 'turnover-frequency') found['rank'] = found['turnoverFrequencyPerS']
+  }
+  if (figures.noSelectivity !== '') found['selectivity'] = figures.noSelectivity
+  for (const [name, entry] of [
+    ['temperatureForConversionK', figures.temperatureForConversionK],
+    ['carbonBalance', figures.carbonBalance],
+    ['decayPerH', figures.decayPerH],
+    ...Object.entries(figures.selectivity).map(([species, entry]) => [`selectivity.${species}`, entry] as const),
+  ] as const)
+    if (entry.cannotTell !== '') found[name] = entry.cannotTell
+  return found
+}
 
 /** Same doubt of several runs once; notes stay on the run's own page. */
 function rowCautions(
@@ -239,12 +241,17 @@ function prepareSample(sample: CampaignSample, request: RankingRequest): Prepare
     version: sample.version,
   }
   const reductions = included.flatMap((entry) => (entry.reduction === null ? [] : [entry.reduction]))
-  const nothing = (): Prepared => ({
-    row: { ...head, ...emptyNumbers, cautions: rowCautions(included, leftOut, []) },
+  const nothing = (noLine: string): Prepared => ({
+    row: {
+      ...head,
+      ...emptyNumbers,
+      cannotTell: Object.fromEntries(COMPUTED.map((name) => [name, whyNothing(runs, noLine)])),
+      cautions: rowCautions(included, leftOut, []),
+    },
     numbers: null,
     merit: null,
   })
-  if (reductions.length === 0) return nothing()
+  if (reductions.length === 0) return nothing('')
   let fit: ArrheniusFit
   try {
     fit = fitArrhenius({
@@ -256,7 +263,7 @@ function prepareSample(sample: CampaignSample, request: RankingRequest): Prepare
       betweenRunVariance: settings.betweenLoadingRate * settings.betweenLoadingRate,
     })
   } catch (error) {
-    if (error instanceof AnalysisError) return nothing()
+    if (error instanceof AnalysisError) return nothing(error.message)
     throw error
   }
   const loadingCount = new Set(included.map((entry) => entry.run.loadingId)).size
@@ -275,13 +282,13 @@ function prepareSample(sample: CampaignSample, request: RankingRequest): Prepare
     loadingCount,
   }
   const level = settings.confidenceLevel
-  const perRun = reductions.map((reduction) => usedPoints(reduction))
-  const temperatures = perRun.flatMap((points) => temperatureAtConversion(points, settings.targetConversion) ?? [])
-  const temperatureForConversionK = mean(temperatures)
-  const selectivities = perRun.map((points) => selectivityAtConversion(points, settings.targetConversion))
-  const species = [...new Set(selectivities.flatMap((entry) => Object.keys(entry)))].sort()
-  const carbonBalance = mean(reductions.flatMap((reduction) => reduction.meanCarbonBalance ?? []))
-  const decayPerH = mean(reductions.flatMap((reduction) => reduction.returnedHold?.lossPerH ?? []))
+  const figures = rowFigures({ sampleCode: sample.sampleCode, runs: reductions, loadingCount, settings })
+  const intervalIn = (estimate: Estimate | null) => (estimate === null ? null : intervalOf(estimate, level))
+  const selectivity = Object.fromEntries(
+    Object.entries(figures.selectivity).flatMap(([name, { estimate }]) =>
+      estimate === null ? [] : [[name, estimate]],
+    ),
+  )
   const own: Caution[] = [
     ...(sites === null && settings.rankedBy === 'turnover-frequency'
       ? [raiseCaution('no-site-count', { value: null, limit: null })]
@@ -304,23 +311,32 @@ function prepareSample(sample: CampaignSample, request: RankingRequest): Prepare
     rateInterval: expInterval(numbers.lnRate, level),
     turnoverFrequencyPerS: numbers.lnTurnover === null ? null : exponential(numbers.lnTurnover),
     turnoverFrequencyInterval: numbers.lnTurnover === null ? null : expInterval(numbers.lnTurnover, level),
-    temperatureForConversionK,
-    selectivity: Object.fromEntries(
-      species.map((name) => [name, mean(selectivities.flatMap((entry) => entry[name] ?? [])) ?? Number.NaN]),
+    temperatureForConversionK: figures.temperatureForConversionK.estimate,
+    temperatureForConversionInterval: intervalIn(figures.temperatureForConversionK.estimate),
+    selectivity,
+    selectivityIntervals: Object.fromEntries(
+      Object.entries(selectivity).map(([name, estimate]) => [name, intervalIn(estimate)]),
     ),
-    carbonBalance,
-    decayPerH,
+    carbonBalance: figures.carbonBalance.estimate,
+    carbonBalanceInterval: intervalIn(figures.carbonBalance.estimate),
+    decayPerH: figures.decayPerH.estimate,
+    decayInterval: intervalIn(figures.decayPerH.estimate),
+    cannotTell: cannotTellOf(numbers, figures, settings.rankedBy),
     distinctTemperatures: fit.distinctTemperatures,
     lowestTemperatureK: fit.lowestTemperatureK,
     highestTemperatureK: fit.highestTemperatureK,
     cautions: rowCautions(included, leftOut, own),
     fit,
-    workings: rowWorkings(sample.sampleCode, numbers, sites, settings, {
-      runs: reductions,
-      temperatureForConversionK,
-      carbonBalance,
-      decayPerH,
-    }),
+    runFits: reductions.length > 1 ? reductions.flatMap((reduction) => reduction.fit ?? []) : [],
+    workings: {
+      ...rowWorkings(sample.sampleCode, numbers, sites, settings),
+      temperatureForConversionK: figures.temperatureForConversionK.working,
+      ...Object.fromEntries(
+        Object.entries(figures.selectivity).map(([name, entry]) => [`selectivity.${name}`, entry.working]),
+      ),
+      carbonBalance: figures.carbonBalance.working,
+      decayPerH: figures.decayPerH.working,
+    },
   }
   // outside its own range a line says nothing to rank by
   const mayRank = lnMerit !== null && lnMerit.randomStandardUncertainty !== null && !fit.isReferenceExtrapolated

@@ -21,7 +21,7 @@ const dataDir = await vi.hoisted(async () => {
   return process.env.DATA_DIR
 })
 
-const WANTED = ['R-0001', 'R-0004', 'R-0009']
+const WANTED = ['R-0001', 'R-0004', 'R-0008', 'R-0009']
 let opened: OpenDatabase
 let campaignId = ''
 let actors: Record<CampaignRole, Actor>
@@ -63,6 +63,63 @@ describe('results from files, kept under their content', () => {
     const again = await getRanking(actors.lead, campaignId)
     expect(again.rows).toEqual(first.rows)
     expect(await countOf()).toBe(before)
+    // the time is that of the computing, not of the answer
+    expect(again.computedAt).toBe(first.computedAt)
+    const elsewhere = await getRanking(actors.lead, campaignId, { referenceTemperatureK: 521.15 })
+    expect(Date.parse(elsewhere.computedAt)).toBeGreaterThan(Date.parse(first.computedAt))
+  })
+
+  test('every number of a row carries its uncertainty, or the row says why it cannot', async () => {
+    const { rows } = await getRanking(actors.researcher, campaignId)
+    for (const row of rows) {
+      const numbers = {
+        activationEnergyJPerMol: [row.activationEnergyJPerMol, row.activationEnergyInterval],
+        lnPreExponential: [row.lnPreExponential, row.lnPreExponentialInterval],
+        rateMolPerKgS: [row.rateMolPerKgS, row.rateInterval],
+        turnoverFrequencyPerS: [row.turnoverFrequencyPerS, row.turnoverFrequencyInterval],
+        temperatureForConversionK: [row.temperatureForConversionK, row.temperatureForConversionInterval],
+        carbonBalance: [row.carbonBalance, row.carbonBalanceInterval],
+        decayPerH: [row.decayPerH, row.decayInterval],
+        ...Object.fromEntries(
+          Object.entries(row.selectivity).map(([name, estimate]) => [
+            `selectivity.${name}`,
+            [estimate, row.selectivityIntervals[name] ?? null],
+          ]),
+        ),
+      } as const
+      for (const [name, [estimate, interval]] of Object.entries(numbers)) {
+        if (estimate === null || interval === null)
+          expect(row.cannotTell[name], `${row.sampleCode} ${name}`).toMatch(/\.$/)
+        else {
+          expect(interval[0], `${row.sampleCode} ${name}`).toBeLessThan(interval[1])
+          expect(row.workings[name]?.result.standardUncertainty, `${row.sampleCode} ${name}`).toBeGreaterThan(0)
+        }
+      }
+    }
+  })
+
+  test('the figures beside the line hold what the invented reactor was given', async () => {
+    const [fresh, decaying] = [await rowOf('CQ-101'), await rowOf('CQ-107')]
+    const inside = (value: number, interval: readonly [number, number] | null | undefined, widest: number) => {
+      expect(interval?.[0]).toBeLessThan(value)
+      expect(interval?.[1]).toBeGreaterThan(value)
+      expect((interval?.[1] ?? Infinity) - (interval?.[0] ?? 0)).toBeLessThan(widest)
+    }
+    // 2 % lies between 245 and 255 °C, where the reactor was at 1.6157 % and 2.3405 %
+    const [low, high] = [3, 4].map((hold) => truth.runs[0]?.holds[hold]?.conversion_at_end ?? Number.NaN)
+    const share = Math.log(0.02 / (low ?? NaN)) / Math.log((high ?? NaN) / (low ?? NaN))
+    inside(1 / ((1 - share) / 518.15 + share / 528.15), fresh?.temperatureForConversionInterval, 14)
+    // nothing was lost in these three; three standard uncertainties, since one run in twenty lies beyond two
+    for (const row of [fresh, decaying, await rowOf('CQ-103')]) {
+      const [balance, interval] = [row?.carbonBalance?.value ?? Number.NaN, row?.carbonBalanceInterval]
+      const u = ((interval?.[1] ?? Number.NaN) - (interval?.[0] ?? Number.NaN)) / 4
+      expect(Math.abs(balance - 1)).toBeLessThan(3 * u)
+      expect(u).toBeLessThan(0.005)
+    }
+    const lossOf = (code: string) => truth.samples.find((sample) => sample.code === code)?.decay_per_h ?? Number.NaN
+    inside(lossOf('CQ-107'), decaying?.decayInterval, 0.02)
+    inside(lossOf('CQ-101'), fresh?.decayInterval, 0.02)
+    expect(decaying?.decayInterval?.[0]).toBeGreaterThan(0)
   })
 
   test('a corrected site count moves the turnover frequency and not the rate or the energy', async () => {

@@ -76,3 +76,31 @@ test('the workbook holds no formula cell, and its numbers are numbers', async ()
   const values = [...sheet.matchAll(/<v>([^<]+)<\/v>/g)].map((found) => Number(found[1]))
   expect(values).toContain(energy * 1e-3)
 })
+
+test('every computed column of the file has its standard uncertainty and both ends of its interval beside it, with units', () => {
+  const columns = rankingColumns({ ...exampleRanking, targetConversion: 0.02 })
+  const row = exampleRanking.rows[0]
+  if (row === undefined) throw new Error('the example has rows')
+  const value = (header: string) => columns.find((column) => column.header === header)?.value(row)
+  for (const [name, unit, difference] of [
+    ['Turnover frequency at 250 °C, feed composition', 's⁻¹', 's⁻¹'],
+    ['Rate at 250 °C, feed composition', 'µmol g⁻¹ s⁻¹', 'µmol g⁻¹ s⁻¹'],
+    ['Apparent activation energy', 'kJ mol⁻¹', 'kJ mol⁻¹'],
+    ['ln A of the rate', 'A in mol kg⁻¹ s⁻¹', 'A in mol kg⁻¹ s⁻¹'],
+    ['Temperature for a conversion of 2 %', '°C', 'K'],
+    ['Carbon selectivity to CH4 at a conversion of 2 %', 'C-mol %', 'C-mol %'],
+    ['Carbon out over carbon in', 'mol mol⁻¹', 'mol mol⁻¹'],
+    ['Loss of activity on stream', '% h⁻¹', '% h⁻¹'],
+  ] as const) {
+    const [low, middle, high] = [`, 95 % interval, low [${unit}]`, ` [${unit}]`, `, 95 % interval, high [${unit}]`].map(
+      (end) => Number(value(`${name}${end}`)),
+    )
+    expect(low, name).toBeLessThan(middle ?? NaN)
+    expect(middle, name).toBeLessThan(high ?? NaN)
+    expect(Number(value(`${name}, standard uncertainty [${difference}]`)), name).toBeGreaterThan(0)
+  }
+  // 530.2 K, from 528.2 to 532.2; own part 0.6 K and thermocouple 0.5 K
+  expect(value('Temperature for a conversion of 2 % [°C]')).toBeCloseTo(257.05, 9)
+  expect(value('Temperature for a conversion of 2 %, 95 % interval, low [°C]')).toBeCloseTo(255.05, 9)
+  expect(value('Temperature for a conversion of 2 %, standard uncertainty [K]')).toBeCloseTo(Math.sqrt(0.61), 12)
+})

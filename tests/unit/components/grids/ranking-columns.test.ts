@@ -1,3 +1,5 @@
+import { createElement, type ReactElement } from 'react'
+import { renderToStaticMarkup } from 'react-dom/server'
 import { describe, expect, it } from 'vitest'
 import { derivedWorking } from '@/components/grids/derived-working'
 import { intervalScale } from '@/components/grids/interval-scale'
@@ -8,6 +10,7 @@ import {
   selectivitySpecies,
   workingKeyOf,
 } from '@/components/grids/ranking-columns'
+import { QuantityCell } from '@/components/grids/ranking-cells'
 import { cellChange } from '@/components/grids/ranking-cell-change'
 import { rankingGridRows } from '@/components/grids/ranking-grid-row'
 import { savedGridState } from '@/components/grids/saved-grid-state'
@@ -73,7 +76,7 @@ describe('ranking columns', () => {
   it('name the selectivities by amount, and the working of a derived column', () => {
     expect(selectivitySpecies(ranking.rows)).toEqual(['CH4', 'CO'])
     expect(workingKeyOf('activationEnergyInterval')).toBe('activationEnergyJPerMol')
-    expect(workingKeyOf('selectivity.CH4')).toBe('selectivity')
+    expect(workingKeyOf('selectivity.CH4')).toBe('selectivity.CH4')
     expect(workingKeyOf('carbonBalance')).toBe('carbonBalance')
   })
   it('do not claim certainty from draws', () => {
@@ -93,13 +96,54 @@ describe('working of a number that follows from the whole ranking', () => {
     expect(working?.symbols.find((symbol) => symbol.symbol === 'N')?.value).toBe(20_000)
     expect(working?.result.value).toBe(2)
   })
-  it('says at which conversion a selectivity stands, and nothing where there is no number', () => {
+  it('says why a number is missing, where one was asked for', () => {
     const [row, blank] = [ranking.rows[0], ranking.rows[7]]
     if (!row || !blank) throw new Error('the example has them')
-    expect(derivedWorking(ranking, row, 'selectivity.CH4')?.result.value).toBeCloseTo(95.2, 9)
-    expect(derivedWorking(ranking, blank, 'selectivity.CH4')).toBeNull()
-    expect(derivedWorking(ranking, blank, 'rank')).toBeNull()
+    const without = {
+      ...row,
+      decayPerH: null,
+      cannotTell: { decayPerH: 'no hold of R-0001 returns.', selectivity: 'x.' },
+    }
+    const working = derivedWorking(ranking, without, 'decayPerH')
+    expect(working?.title).toBe(`Loss of activity of ${row.sampleCode}`)
+    expect(working?.notes).toEqual(['Cannot tell: no hold of R-0001 returns.'])
+    expect(working?.result.value).toBeNull()
+    // one reason for all species
+    expect(derivedWorking(ranking, without, 'selectivity.CH4')?.notes).toEqual(['Cannot tell: x.'])
+    expect(derivedWorking(ranking, row, 'decayPerH')).toBeNull()
+    expect(derivedWorking(ranking, blank, 'activationEnergyJPerMol')).toBeNull()
     expect(derivedWorking(ranking, row, 'remark')).toBeNull()
+  })
+})
+
+describe('cell of a number', () => {
+  const textOf = (props: Parameters<typeof QuantityCell>[0]) =>
+    renderToStaticMarkup(createElement(QuantityCell, props)).replace(/<[^>]+>/g, '')
+  it('carries its uncertainty, or says that none can be told and why', () => {
+    expect(textOf({ value: 1.0123, half: 0.018 })).toBe('1.012 ± 0.018')
+    expect(textOf({ value: 1.0123, half: null, why: 'one injection.' })).toBe(
+      '1.012 ± ?, the uncertainty cannot be told: one injection.',
+    )
+    expect(textOf({ value: 100, half: 0 })).toBe('100.0 ± 0')
+    expect(textOf({ value: null, half: null, why: 'no hold returns.' })).toBe('cannot tell: no hold returns.')
+    expect(textOf({ value: null, half: null, why: 'a blank.', isBlank: true })).toBe('–')
+  })
+  it('is what every computed column of the table shows: a value, half its interval, in the unit of the header', () => {
+    const row = rankingGridRows(ranking.rows)[0]
+    const cell = (colId: string) => {
+      const column = leaves(none).find((candidate) => candidate.colId === colId)
+      const { valueGetter, cellRenderer } = column ?? {}
+      if (typeof valueGetter !== 'function' || typeof cellRenderer !== 'function') throw new Error(colId)
+      const given = { data: row, value: undefined as unknown } as never
+      const value: unknown = valueGetter(given)
+      const element: unknown = (cellRenderer as (given: unknown) => unknown)({ data: row, value })
+      return renderToStaticMarkup(element as ReactElement).replace(/<[^>]+>/g, '')
+    }
+    // the example: 530.2 K from 528.2 to 532.2; 0.952 from 0.944 to 0.960; 1.00 from 0.984 to 1.016; 0.001 from -0.0016 to 0.0036
+    expect(cell('temperatureForConversionK')).toBe('257.1 ± 2.0')
+    expect(cell('selectivity.CH4')).toBe('95.20 ± 0.80')
+    expect(cell('carbonBalance')).toBe('1.000 ± 0.016')
+    expect(cell('decayPerH')).toBe('0.10 ± 0.26')
   })
 })
 
