@@ -53,6 +53,7 @@ export function findLayout(table: RawTable): Layout | null {
     }
   }
   if (first < 0) return null
+  first = firstOfFaulty(rows, kinds, majority, first)
   const above = rows.slice(0, first)
   const filled = above.filter((row) => row.cells.length > 0 && row.comment === null)
   let units: Row | null = null
@@ -88,6 +89,30 @@ export function findLayout(table: RawTable): Layout | null {
     firstDataLine: rows[first]?.line ?? 1,
     preamble: readPreamble(above.filter((row) => row !== header && row !== units)),
   }
+}
+
+/**
+ * The data begin before the first good row where rows stand between it and the header that have a reading in some column and a fault in another:
+ * taken for part of the header they would be lost without a word.
+ */
+function firstOfFaulty(
+  rows: readonly Row[],
+  kinds: readonly (readonly CellKind[])[],
+  majority: readonly (CellKind | null)[],
+  first: number,
+): number {
+  const isTyped = (kind: CellKind | undefined) => kind === 'number' || kind === 'date' || kind === 'time'
+  let earliest = first
+  for (let i = first - 1; i >= 0; i--) {
+    const row = rows[i]
+    const found = kinds[i] ?? []
+    if (row === undefined || row.comment !== null || row.cells.length === 0) continue
+    const hasReading = majority.some((wanted, column) => isTyped(found[column]) && found[column] === wanted)
+    if (found.length >= majority.length && hasReading && !isUnitsRow(row)) earliest = i
+    // a header of words above them, or nothing: a preamble of numbers is not told from them otherwise
+    else return isUnitsRow(row) || (isHeaderRow(row, majority.length) && !found.some(isTyped)) ? earliest : first
+  }
+  return majority.length > 2 ? earliest : first
 }
 
 function tableWidth(table: RawTable): number {

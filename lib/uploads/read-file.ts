@@ -59,7 +59,14 @@ export async function detectFile(
   if (found.length === 0 && !problems.some((one) => one.severity === 'fatal')) problems.push(noTable())
   return {
     detections: found.map(({ detection }) => detection),
-    problems: [...problems, ...(found[0]?.problems ?? [])],
+    problems: [
+      ...problems,
+      ...notRead(
+        found.slice(1).map(({ detection }) => detection.tableName),
+        found[0]?.detection.tableName,
+      ),
+      ...(found[0]?.problems ?? []),
+    ],
   }
 }
 
@@ -93,7 +100,14 @@ export async function readFile(
   return {
     ...reading,
     specification: moved.specification,
-    problems: [...file.problems, ...reading.problems],
+    problems: [
+      ...file.problems,
+      ...notRead(
+        file.tables.filter((one) => one !== table && findLayout(one) !== null).map((one) => one.name),
+        table.name,
+      ),
+      ...reading.problems,
+    ],
     questions,
   }
 }
@@ -162,6 +176,19 @@ function foreignFormat(head: Uint8Array): string | null {
   if (starts(0x52, 0x61, 0x72, 0x21)) return 'a RAR archive'
   if (starts(0x7f, 0x45, 0x4c, 0x46) || starts(0x4d, 0x5a)) return 'a program'
   return null
+}
+
+/** Tables of a workbook beside the one that is read: whoever has a log on two sheets must know that half of it is not here. */
+function notRead(names: readonly string[], read = ''): Problem[] {
+  return names.map((name) =>
+    problem({
+      code: 'footer',
+      severity: 'note',
+      found: `a table on sheet “${name}”`,
+      expected: 'one table in a file',
+      sentence: `Sheet “${name}” holds a table too and was not read; “${read}” was. To have it read as well, save that sheet as a file of its own and add it.`,
+    }),
+  )
 }
 
 function noTable(sheet = ''): Problem {

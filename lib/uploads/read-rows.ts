@@ -1,5 +1,5 @@
 import { type Problem } from '../domain/intake'
-import { type Layout } from './find-layout'
+import { cellKind, type Layout } from './find-layout'
 import { type ProblemInput, ProblemList } from './problem-list'
 import { type Cell, type OpenedFile, type RawTable, type Row } from './table'
 
@@ -35,7 +35,18 @@ export async function readRows(
   }
 
   const found = await table.forEachRow((row) => {
-    if (row.line < layout.firstDataLine || row.comment !== null || row.cells.length === 0) return true
+    if (row.line < layout.firstDataLine || row.cells.length === 0) return true
+    if (row.comment !== null) {
+      if (looksLikeRow(row, width))
+        problems.add({
+          code: 'footer',
+          severity: 'note',
+          line: row.line,
+          found: row.comment,
+          sentence: `Line ${String(row.line)} is marked as a comment and was passed over, though it has the cells of a row.`,
+        })
+      return true
+    }
     const cells = row.cells
     if (layout.headerLine !== null && String(cells[0]).trim() === firstHeader && repeats(cells, header)) {
       flush()
@@ -67,6 +78,12 @@ export async function readRows(
   closeWith(pending, file, problems, width)
   problems.addAll(found)
   return { rowCount, problems: problems.list() }
+}
+
+/** A row that somebody took out of the data by a mark before it. */
+function looksLikeRow(row: Row, width: number): boolean {
+  const kinds = row.cells.map((cell) => cellKind(typeof cell === 'number' ? cell : cell.replace(/^[#%/\s]+/, '')))
+  return row.cells.length === width && kinds.filter((kind) => kind !== 'text' && kind !== 'empty').length * 2 > width
 }
 
 function repeats(cells: readonly Cell[], header: readonly string[]): boolean {

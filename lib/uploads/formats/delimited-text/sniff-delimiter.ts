@@ -46,9 +46,13 @@ export function sniffDelimiter(lines: readonly string[]): DelimiterChoice | null
   return best === null || best.score < 0.05 ? null : { delimiter: best.delimiter, columnCount: best.columnCount }
 }
 
+/** What a spreadsheet writes into a cell that it could not work out: a row that begins with it is a row. */
+const CELL_ERROR = /^#(n\/a|na\b|div\/0!|value!|wert!|ref!|bezug!|num!|zahl!|name\?|null!)/i
+
 /** Lines that instruments mark as no data. */
 export function isComment(line: string): boolean {
   const first = line.charCodeAt(0)
+  if (first === 0x23 && CELL_ERROR.test(line)) return false
   return first === 0x23 || first === 0x25 || (first === 0x2f && line.charCodeAt(1) === 0x2f)
 }
 

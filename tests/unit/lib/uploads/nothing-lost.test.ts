@@ -1,0 +1,97 @@
+import { strToU8 } from 'fflate'
+import { describe, expect, test } from 'vitest'
+import { type ColumnMapSpecification } from '@/lib/domain/column-map'
+import { detectFile, readFile } from '@/lib/uploads/read-file'
+import { packWorkbook } from '@/tests/support/pack-workbook'
+
+/* What is not read of a file is said, with its line; nothing is left out in silence. */
+
+const CONTEXT = { rigTimeZone: 'UTC', barometerPa: 101_325, species: ['CO2', 'H2', 'CH4'] }
+const bytesOf = (...lines: readonly string[]) => strToU8(`${lines.join('\n')}\n`)
+
+async function read(bytes: Uint8Array, change: Partial<ColumnMapSpecification> = {}) {
+  const found = await detectFile(bytes, CONTEXT)
+  const detection = found.detections[0]
+  if (detection === undefined) throw new Error(found.problems[0]?.sentence)
+  const reading = await readFile(bytes, { ...detection.proposal, ...change }, CONTEXT)
+  return {
+    headers: detection.headers,
+    seen: detection.rowCount,
+    rowCount: reading.rowCount,
+    problems: reading.problems.map(({ code, line }) => [code, line]),
+    detected: found.problems.map(({ code, found: text }) => [code, text]),
+    sentences: reading.problems.map(({ sentence }) => sentence),
+    values: (name: string) => [...(reading.channels.find((one) => one.name === name)?.values ?? [])],
+  }
+}
+
+describe('rows of a log', () => {
+  const HEAD = 'time;T bed [°C];T wall [°C]'
+  const row = (minute: number, bed = '451.5') => `2026-03-02 07:${String(minute).padStart(2, '0')}:00;${bed};460`
+  const good = Array.from({ length: 12 }, (_, index) => row(index + 20))
+
+  test.each([
+    ['its temperature', [row(10, 'ERR7')], [['not-a-number', 2]], 13],
+    ['its time', ['x;451.5;460'], [['bad-date', 2]], 12],
+    ['two cells', ['x;y;460', row(11)], [['bad-date', 2]], 13],
+    [
+      'the same in two rows',
+      [row(10, 'ERR7'), row(11, 'ERR8')],
+      [
+        ['not-a-number', 2],
+        ['not-a-number', 3],
+      ],
+      14,
+    ],
+  ])(
+    'a first row that is faulty in %s is a row, and the header stays the header',
+    async (_name, first, problems, count) => {
+      const { headers, ...reading } = await read(bytesOf(HEAD, ...first, ...good))
+      expect(headers).toEqual(['time', 'T bed [°C]', 'T wall [°C]'])
+      expect([reading.problems, reading.rowCount]).toEqual([problems, count])
+    },
+  )
+
+  test('a faulty first row under a row of units', async () => {
+    const { headers, problems, rowCount } = await read(
+      bytesOf('time;T bed;T wall', 'hh:mm:ss;°C;°C', row(10, 'ERR7'), ...good),
+    )
+    expect(headers).toEqual(['time [hh:mm:ss]', 'T bed [°C]', 'T wall [°C]'])
+    expect([problems, rowCount]).toEqual([[['not-a-number', 3]], 13])
+  })
+
+  test('a preamble with numbers is no row', async () => {
+    const { problems, rowCount } = await read(bytesOf('Rig;B;2', 'Tube;8;mm', HEAD, ...good))
+    expect([problems, rowCount]).toEqual([[], 12])
+  })
+
+  test('a row that begins with the error of a spreadsheet cell is no comment', async () => {
+    const { problems, rowCount } = await read(bytesOf(HEAD, ...good, '#N/A;450.1;459', row(50)))
+    expect([problems, rowCount]).toEqual([[['bad-date', 14]], 13])
+  })
+
+  test('a row that somebody marked as a comment is passed over and said; a comment of words is not', async () => {
+    const { problems, rowCount } = await read(bytesOf(HEAD, ...good, `# ${row(49)}`, '# gas changed here', row(50)))
+    expect([problems, rowCount]).toEqual([[['footer', 14]], 13])
+  })
+})
+
+describe('sheets of a workbook', () => {
+  const head = ['time', 'T bed [°C]', 'T wall [°C]']
+  const rows = (day: number) => Array.from({ length: 8 }, (_, index) => [`2026-03-0${day} 07:0${index}:00`, 451.5, 460])
+
+  test('a second table is not read and that is said, at the look and at the reading', async () => {
+    const { rowCount, detected, sentences } = await read(
+      packWorkbook([
+        ['log', [head, ...rows(2)]],
+        ['log (2)', [head, ...rows(3)]],
+        ['notes', [['by A. B.']]],
+      ]),
+    )
+    expect(rowCount).toBe(8)
+    expect(detected).toEqual([['footer', 'a table on sheet “log (2)”']])
+    expect(sentences).toEqual([
+      'Sheet “log (2)” holds a table too and was not read; “log” was. To have it read as well, save that sheet as a file of its own and add it.',
+    ])
+  })
+})
