@@ -9,6 +9,7 @@ export interface RunActions {
   readonly putBack: (runId: string, exclusionId: string, reason: string) => Promise<ActionResult<string>>
   readonly moveHold: (runId: string, edit: NewHoldEdit) => Promise<ActionResult<string>>
   readonly withdrawHoldEdit: (runId: string, holdEditId: string, reason: string) => Promise<ActionResult<string>>
+  readonly setClock: (runId: string, version: number, offsetS: number) => Promise<ActionResult<string>>
   readonly remark: (runId: string, body: string) => Promise<ActionResult<string>>
 }
 

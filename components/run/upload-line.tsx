@@ -1,7 +1,14 @@
+'use client'
+
 import { type Route } from 'next'
 import Link from 'next/link'
+import { useRouter } from 'next/navigation'
+import { useState } from 'react'
 import { type Upload } from '@/lib/domain/intake'
 import { formatFixed } from '@/components/numbers/format-fixed'
+import { type ClockOffsetProposal } from '@/lib/analysis/reduction/clock-offset'
+import { ClockDialog } from './clock-dialog'
+import { type RunActions } from './run-actions'
 
 const kinds = { 'rig-log': 'Rig log', analyser: 'Analyser', attachment: 'Attachment' } as const
 
@@ -30,14 +37,25 @@ function stateText(upload: Upload): string {
 export function UploadLine({
   uploads,
   runId,
+  version,
   clockOffsetS,
+  clockProposal,
   canOpen,
+  canSetClock,
+  setClock,
 }: {
   uploads: readonly Upload[]
   runId: string
+  version: number
   clockOffsetS: number
+  clockProposal: ClockOffsetProposal | null
   canOpen: boolean
+  canSetClock: boolean
+  setClock: RunActions['setClock']
 }) {
+  const router = useRouter()
+  const [isSetting, setIsSetting] = useState(false)
+  const isAnalysed = uploads.some((upload) => upload.kind === 'analyser' && upload.state === 'confirmed')
   return (
     <div className="flex flex-wrap gap-x-[22px] gap-y-0.5 text-[12.5px]">
       {uploads.length === 0 ? <span>No files yet.</span> : null}
@@ -50,6 +68,27 @@ export function UploadLine({
             : ''}
         </span>
       ))}
+      {canSetClock && isAnalysed ? (
+        <button
+          type="button"
+          className="min-h-6 cursor-pointer text-accent underline underline-offset-2"
+          onClick={() => setIsSetting(true)}
+        >
+          Set the clock
+        </button>
+      ) : null}
+      {isSetting ? (
+        <ClockDialog
+          offsetS={clockOffsetS}
+          proposal={clockProposal}
+          onClose={() => setIsSetting(false)}
+          onConfirm={(offsetS) => setClock(runId, version, offsetS)}
+          onDone={() => {
+            setIsSetting(false)
+            router.refresh()
+          }}
+        />
+      ) : null}
       {canOpen ? (
         <Link href={`/runs/${runId}/intake` as Route} className="inline-block min-h-6">
           Preview and problems

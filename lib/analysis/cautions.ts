@@ -24,6 +24,7 @@ const celsius = (value: number | string | undefined): string =>
   typeof value === 'number' ? `${numberText(value - 273.15, 4)} °C` : String(value ?? '')
 const kilojoules = (value: number | string | undefined): string =>
   typeof value === 'number' ? `${numberText(value / 1000, 3)} kJ/mol` : String(value ?? '')
+const minutes = (seconds: number | null): string => `${numberText(Math.abs(seconds ?? Number.NaN) / 60, 2)} min`
 const number = (value: number | string | undefined): number => (typeof value === 'number' ? value : Number.NaN)
 const word = (value: number | string | undefined): string => (value === undefined ? '' : String(value))
 
@@ -124,6 +125,14 @@ export const CAUTIONS = {
     tag: ({ value }) => `changed ${percent(Math.abs(1 - (value ?? 1)))} on stream`,
     sentence: ({ value, limit, more }) =>
       `Back at ${celsius(more?.temperatureK)}, the rate was ${percent(Math.abs(1 - (value ?? 1)), 3)} ${(value ?? 1) < 1 ? 'lower' : 'higher'} than before, beyond ${percent(limit)}: the line says little about the fresh catalyst.${word(more?.corrected)}`,
+  },
+  'clocks-disagree': {
+    severity: 'caution',
+    unit: 's',
+    source: 'common practice (cross-correlation of a by-pass step)',
+    tag: ({ value }) => `clock off by ${minutes(value)}`,
+    sentence: ({ value, more }) =>
+      `By the turning of the bypass valve the analyser’s clock is ${minutes(value)} ${(value ?? 0) > 0 ? 'behind' : 'ahead of'} the rig’s (anything from ${minutes(number(more?.low))} to ${minutes(number(more?.high))} fits as well): ${word(more?.agreeing)} of ${word(more?.compared)} injections would then agree with the valve, as the clocks are set ${word(more?.asSet)} do. Injections may stand in the wrong hold until the clock is set.`,
   },
   'carbon-balance': {
     severity: 'caution',

@@ -270,6 +270,7 @@ export function exampleRunResult(): RunResult {
     lnRates,
   )
   const reduction: RunReduction = {
+    clockOffset: null,
     runCode: 'R-0008',
     holds,
     injections,

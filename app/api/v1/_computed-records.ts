@@ -193,6 +193,16 @@ const reduction = z.strictObject({
   noFitReason: text,
   returnedHold: z.strictObject({ holdNumber: count, returnsTo: count, ratio: estimate, lossPerH: number }).nullable(),
   meanCarbonBalance: numberOrNull,
+  clockOffset: z
+    .strictObject({
+      offsetS: number,
+      lowS: number,
+      highS: number,
+      agreeing: count,
+      agreeingAsSet: count,
+      compared: count,
+    })
+    .nullable(),
   sharedSources: z.array(sharedSource),
   cautions: z.array(caution),
   mayCount: z.boolean(),

@@ -6,6 +6,7 @@ import { type Estimate, type SharedSource } from '../estimate'
 import { totalUncertainty } from '../total-uncertainty'
 import { conversionOfInjection, measureConversions, type HoldConversion } from './conversion'
 import { planGasAnalysis } from './gas-analysis'
+import { type ClockOffsetProposal, proposeClockOffset } from './clock-offset'
 import { averageConditions, type HoldConditions } from './hold-conditions'
 import { findHolds } from './holds'
 import { assignInjections, type AssignedInjection } from './injections'
@@ -356,12 +357,42 @@ export function reduceRun(input: RunInput): RunReduction {
     }
   }
 
+  const clockOffset = proposeClockOffset(
+    input.log,
+    injections,
+    analysis.products
+      .map((product) => product.species)
+      .filter((species) => !((drafts[0]?.conditions.flowMolPerS[species] ?? 0) > 0)),
+    analysis.base,
+    0,
+  )
   return {
-    ...lineOf(input, points, inletCautions),
+    ...lineOf(input, points, [...inletCautions, ...clockCautions(clockOffset)]),
+    clockOffset,
     holds,
     injections: injectionUses(input, assigned, conversionAt),
     sharedSources,
   }
+}
+
+/** One injection more may be the old gas in the line after a turn of the valve; two are not. */
+const INJECTIONS_TO_DOUBT_A_CLOCK = 2
+
+function clockCautions(clock: ClockOffsetProposal | null): Caution[] {
+  if (clock === null || clock.agreeing - clock.agreeingAsSet < INJECTIONS_TO_DOUBT_A_CLOCK) return []
+  return [
+    raiseCaution('clocks-disagree', {
+      value: clock.offsetS,
+      limit: null,
+      more: {
+        low: clock.lowS,
+        high: clock.highS,
+        agreeing: clock.agreeing,
+        compared: clock.compared,
+        asSet: clock.agreeingAsSet,
+      },
+    }),
+  ]
 }
 
 // The line, the returned hold and the doubts about the run as a whole.
@@ -369,7 +400,7 @@ function lineOf(
   input: RunInput,
   reduced: readonly Point[],
   inletCautions: readonly Caution[],
-): Omit<RunReduction, 'holds' | 'injections' | 'sharedSources'> {
+): Omit<RunReduction, 'holds' | 'injections' | 'sharedSources' | 'clockOffset'> {
   const { method } = input
   const isFree = (point: Point): boolean => point.excluded === null
   const first = fitLine(

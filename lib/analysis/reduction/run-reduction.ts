@@ -1,6 +1,7 @@
 import { type Caution } from '../caution'
 import { type Estimate, type SharedSource } from '../estimate'
 import { type Working } from '../working'
+import { type ClockOffsetProposal } from './clock-offset'
 import { type Species } from './run-input'
 
 /** A time at constant set conditions, or a stretch through the bypass. */
@@ -142,6 +143,8 @@ export interface RunReduction {
     readonly lossPerH: number
   } | null
   readonly meanCarbonBalance: number | null
+  /** what to add to the analyser's clock as it is set now, by the turning of the valve; null where that tells nothing */
+  readonly clockOffset: ClockOffsetProposal | null
   readonly sharedSources: readonly SharedSource[]
   readonly cautions: readonly Caution[]
   /** false while a grave caution stands and no lead has decided */

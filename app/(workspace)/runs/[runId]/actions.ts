@@ -5,6 +5,7 @@ import { requireActor } from '@/lib/access/actor'
 import {
   addExclusion,
   addRemark,
+  changeRun,
   decide,
   editHold,
   handIn,
@@ -19,6 +20,7 @@ import {
   exclusionSchema,
   holdEditSchema,
   remarkSchema,
+  runChangeSchema,
   withdrawalSchema,
   type NewDecision,
   type NewExclusion,
@@ -83,6 +85,14 @@ export async function withdrawHoldEditAction(
     const { reason: why } = withdrawalSchema.parse({ reason })
     await withdrawHoldEdit(actor, idSchema.parse(runId), idSchema.parse(holdEditId), why)
     return 'The window that the rule found is in force again.'
+  })
+}
+
+export async function setClockAction(runId: string, version: number, offsetS: number): Promise<ActionResult<string>> {
+  return changing(async (actor) => {
+    const change = runChangeSchema.pick({ clockOffsetS: true }).parse({ clockOffsetS: offsetS })
+    const run = await changeRun(actor, idSchema.parse(runId), change, Number(version))
+    return `The analyser’s clock of ${run.code} is set.`
   })
 }
 

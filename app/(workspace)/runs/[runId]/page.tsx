@@ -29,6 +29,7 @@ import {
   moveHoldAction,
   putBackAction,
   remarkAction,
+  setClockAction,
   withdrawHoldEditAction,
 } from './actions'
 
@@ -132,8 +133,12 @@ export default async function RunPage({ params }: RunPageProps) {
         <UploadLine
           uploads={result.uploads}
           runId={run.id}
+          version={run.version}
           clockOffsetS={run.clockOffsetS}
+          clockProposal={result.reduction?.clockOffset ?? null}
           canOpen={permissions.canAddFiles}
+          canSetClock={permissions.canEdit}
+          setClock={setClockAction}
         />
         {run.decisionReason === null ? null : (
           <p className="mt-1 mb-0 text-[12.5px] text-ink-2">

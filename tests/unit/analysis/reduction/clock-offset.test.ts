@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest'
 import { proposeClockOffset } from '@/lib/analysis/reduction/clock-offset'
+import { reduceRun } from '@/lib/analysis/reduction/reduce-run'
 import { type InjectionTable, type RigLog } from '@/lib/analysis/reduction/run-input'
 import { readDemoRun } from '@/tests/support/read-demo-run'
 
@@ -37,6 +38,19 @@ describe('an analyser clock that is wrong by a known time', () => {
     expect(found?.lowS).toBeLessThanOrEqual(0)
     expect(found?.highS).toBeGreaterThanOrEqual(0)
   })
+})
+
+test('a run whose clocks disagree says so, with the offset; one whose clocks agree does not', async () => {
+  const input = await readDemoRun('R-0001')
+  const codes = (fastS: number) =>
+    reduceRun({ ...input, injections: shifted(input.injections, fastS) }).cautions.filter(
+      ({ code }) => code === 'clocks-disagree',
+    )
+  expect(codes(0)).toEqual([])
+  const [caution] = codes(2_400)
+  expect(caution?.tag).toBe('clock off by 40 min')
+  expect(Math.abs((caution?.value ?? 0) + 2_400)).toBeLessThanOrEqual(375)
+  expect(caution?.sentence).toMatch(/ahead of the rig’s .* 50 of 50 injections would then agree/)
 })
 
 describe('a signal every ten seconds times the valve to ten seconds', () => {
