@@ -21,7 +21,10 @@ interface ClockDialogProps {
 }
 
 const LARGEST_S = 86_400
-const signedMinutes = (seconds: number) => `${seconds < 0 ? '−' : '+'}${formatFixed(Math.abs(seconds) / 60, 1)} min`
+const signedMinutes = (seconds: number) => {
+  const minutes = formatFixed(Math.abs(seconds) / 60, 1)
+  return Number(minutes) === 0 ? '0 min' : `${seconds < 0 ? '−' : '+'}${minutes} min`
+}
 const signedText = (seconds: number) =>
   seconds < 0 ? `-${typedQuantity(-seconds, 'time')}` : typedQuantity(seconds, 'time')
 
@@ -72,7 +75,7 @@ export function ClockDialog({ offsetS, proposal, onClose, onConfirm, onDone }: C
         </>
       }
     >
-      <p className="mt-0">
+      <p className="mt-0 mb-3">
         Each injection belongs to the hold that the rig was in when it was taken. Where the two computers’ clocks
         differ, say what to add to the analyser’s.
       </p>

@@ -71,7 +71,7 @@ export function UploadLine({
       {canSetClock && isAnalysed ? (
         <button
           type="button"
-          className="min-h-6 cursor-pointer text-accent underline underline-offset-2"
+          className="inline-block min-h-6 cursor-pointer border-0 bg-transparent p-0 text-accent"
           onClick={() => setIsSetting(true)}
         >
           Set the clock
