@@ -42,7 +42,17 @@ export async function readSheet(
       return
     }
     while (cells.length < column) cells.push('')
-    cells[column] = cell
+    const isCut = typeof cell === 'string' && cell.length > LIMITS.cellLength
+    if (isCut)
+      problems.add({
+        code: 'limit-reached',
+        severity: 'problem',
+        line,
+        column: columnLetters(column),
+        expected: `at most ${String(LIMITS.cellLength)} characters in a cell`,
+        sentence: `Sheet “${sheet.name}”, cell ${columnLetters(column)}${String(line)} holds more than ${LIMITS.cellLength.toLocaleString('en-GB')} characters; what comes after them was not read.`,
+      })
+    cells[column] = isCut ? cell.slice(0, LIMITS.cellLength) : cell
     if (cell !== '') hasContent = true
   }
 
@@ -60,8 +70,20 @@ export async function readSheet(
         })
       return
     }
-    if (type === 's') put(parts.sharedStrings[Number(value)] ?? '')
-    else if (type === 'b') put(value === '1' ? 'TRUE' : 'FALSE')
+    if (type === 's') {
+      const text = parts.sharedStrings[Number(value)]
+      if (text === undefined)
+        problems.add({
+          code: 'unreadable',
+          severity: 'fatal',
+          line,
+          column: columnLetters(column),
+          found: `text number ${value}`,
+          expected: `one of the ${String(parts.sharedStrings.length)} texts of the workbook`,
+          sentence: `Sheet “${sheet.name}”, cell ${columnLetters(column)}${String(line)} names a text that the workbook does not hold: the file is damaged. Open it in the spreadsheet program, save it and add it again.`,
+        })
+      else put(text)
+    } else if (type === 'b') put(value === '1' ? 'TRUE' : 'FALSE')
     else if (type === 'str' || type === 'inlineStr' || type === 'e' || type === 'd') put(value)
     else {
       const number = value.trim() === '' ? Number.NaN : Number(value)
@@ -103,7 +125,16 @@ export async function readSheet(
       else if (name === 'c') endCell()
       else if (name === 'row' && hasContent) {
         rowCount++
-        if (rowCount > LIMITS.rowCount || !visit({ cells, line, comment: null })) isDone = true
+        if (rowCount > LIMITS.rowCount) {
+          problems.add({
+            code: 'limit-reached',
+            severity: 'fatal',
+            line,
+            expected: `at most ${String(LIMITS.rowCount)} rows`,
+            sentence: `Sheet “${sheet.name}” has more than ${LIMITS.rowCount.toLocaleString('en-GB')} rows; nothing of it was taken in. Divide it and add the parts.`,
+          })
+          isDone = true
+        } else if (!visit({ cells, line, comment: null })) isDone = true
       }
     },
     isDone: () => isDone,

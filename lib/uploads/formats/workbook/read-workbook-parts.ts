@@ -34,7 +34,14 @@ export async function readWorkbookParts(archive: Archive): Promise<WorkbookParts
   await parseXml(await archive.open(workbookPart), {
     open: (name, attributes) => {
       if (name === 'workbookPr') is1904 = isTrue(attributes['date1904'])
-      if (name === 'sheet' && listed.length < LIMITS.workbook.sheets)
+      if (name === 'sheet' && listed.length >= LIMITS.workbook.sheets)
+        throw new Refusal({
+          code: 'too-large',
+          found: `more than ${String(LIMITS.workbook.sheets)} sheets`,
+          expected: `at most ${String(LIMITS.workbook.sheets)} sheets`,
+          sentence: `The workbook has more than ${String(LIMITS.workbook.sheets)} sheets. Save the sheet with the readings as a file of its own and add that.`,
+        })
+      if (name === 'sheet')
         listed.push({
           name: (attributes['name'] ?? '').slice(0, 100),
           id: attributes['r:id'] ?? idOf(attributes),
@@ -44,7 +51,16 @@ export async function readWorkbookParts(archive: Archive): Promise<WorkbookParts
   })
   const sheets = listed.flatMap(({ name, id, isHidden }) => {
     const part = targets.get(id)
-    return part !== undefined && archive.has(part) ? [{ name, part, isHidden }] : []
+    // a sheet of charts has another kind of part, and no rows
+    if (part === undefined) return []
+    if (!archive.has(part))
+      throw new Refusal({
+        code: 'unreadable',
+        found: `no part ${part}`,
+        expected: `the part with the rows of sheet “${name}”`,
+        sentence: `The workbook lists the sheet “${name}” and does not hold it: the file is damaged. Open it in the spreadsheet program, save it and add it again.`,
+      })
+    return [{ name, part, isHidden }]
   })
   return {
     sheets,

@@ -2,7 +2,7 @@ import { strToU8 } from 'fflate'
 import { describe, expect, test } from 'vitest'
 import { type ColumnMapSpecification } from '@/lib/domain/column-map'
 import { detectFile, readFile } from '@/lib/uploads/read-file'
-import { packWorkbook } from '@/tests/support/pack-workbook'
+import { packWorkbook, type PackedCell } from '@/tests/support/pack-workbook'
 
 /* What is not read of a file is said, with its line; nothing is left out in silence. */
 
@@ -93,5 +93,44 @@ describe('sheets of a workbook', () => {
     expect(sentences).toEqual([
       'Sheet “log (2)” holds a table too and was not read; “log” was. To have it read as well, save that sheet as a file of its own and add it.',
     ])
+  })
+
+  const refusal = async (bytes: Uint8Array) => (await detectFile(bytes, CONTEXT)).problems[0]?.sentence
+
+  test('a cell that names a text which is not there is a damaged file, not an empty cell', async () => {
+    const shared = (number: number) => ({ raw: `t="s"><v>${number}</v>` })
+    const book = (number: number) =>
+      packWorkbook([['log', [head, ...rows(2), [shared(0), 451.5, shared(number)]]]], ['2026-03-02 07:30:00', '461'])
+    expect((await read(book(1))).values('wallTemperatureK').at(-1)).toBeCloseTo(461 + 273.15, 9)
+    const { sentences } = await read(book(2))
+    expect(sentences).toEqual([
+      'Sheet “log”, cell C10 names a text that the workbook does not hold: the file is damaged. Open it in the spreadsheet program, save it and add it again.',
+    ])
+  })
+
+  test('a sheet that is listed and not there, and more sheets than are read, are refused', async () => {
+    expect(
+      await refusal(
+        packWorkbook([
+          ['log', [head, ...rows(2)]],
+          ['gone', []],
+        ]),
+      ),
+    ).toContain('The workbook lists the sheet “gone” and does not hold it')
+    const many = Array.from({ length: 65 }, (_, index) => [`s${index}`, [head, ...rows(2)]] as const)
+    expect(await refusal(packWorkbook(many))).toContain('The workbook has more than 64 sheets.')
+    expect((await detectFile(packWorkbook(many.slice(1)), CONTEXT)).detections).toHaveLength(64)
+  })
+
+  test('a text that is cut is said, inline and shared', async () => {
+    const long = 'x'.repeat(4_097)
+    const withNote = (note: PackedCell) =>
+      packWorkbook([['log', [[...head, 'note'], ...rows(2), ['2026-03-02 07:30:00', 452, 461, note]]]], [long])
+    for (const note of [long, { raw: 't="s"><v>0</v>' }]) {
+      const { rowCount, problems, sentences } = await read(withNote(note))
+      expect([rowCount, problems]).toEqual([9, [['limit-reached', 10]]])
+      expect(sentences[0]).toContain('cell D10 holds more than 4,096 characters')
+    }
+    expect((await read(withNote('x'.repeat(4_096)))).problems).toEqual([])
   })
 })
