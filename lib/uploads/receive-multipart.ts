@@ -100,14 +100,26 @@ async function receiveMultipart(
     minFileSize: 1,
     allowEmptyFiles: false,
     hashAlgorithm: 'sha256',
-    // a part with a file name and no type would be kept in memory as a field
     filter: (part) => part.originalFilename !== null && part.mimetype !== null,
   })
+  // with a name and no type a part would be kept in memory as a field, with a type and no name be passed over: a file lost either way
+  let half: string | null = null
+  const handle = form.onPart.bind(form)
+  form.onPart = (part) => {
+    if ((part.originalFilename === null) !== (part.mimetype === null))
+      half ??= cleanFileName(part.originalFilename ?? part.name ?? '')
+    return handle(part)
+  }
   const piped = pipeline(source, counter)
   // the pipe's own failure is told by the parse below, which it makes fail
   piped.catch(() => undefined)
   const [, files] = await form.parse(incoming)
   await piped
+  if (half !== null)
+    throw new AppError(
+      'invalid',
+      `The part “${String(half)}” of the form needs both a file name and a Content-Type, such as application/octet-stream. Nothing was taken in.`,
+    )
   const received: ReceivedFile[] = []
   for (const field of Object.keys(files)) {
     if (!Object.hasOwn(files, field)) continue
