@@ -70,9 +70,29 @@ export async function createCalibrations(actor: Actor, inputs: readonly NewCalib
   })
 }
 
+/** What the reduction of a run could only guess at or pass over: which way the factors go, a factor of nothing, one that is not above zero, two for one species. */
+function checkFactors({ convention, entries }: NewCalibration): void {
+  if (convention === null)
+    refuseField(
+      'convention',
+      'Say whether the values are amounts per area (factor) or areas per amount (sensitivity): the two are reciprocals.',
+    )
+  entries.forEach(({ species, value }, index) => {
+    if (species === null) refuseField(`entries.${index}.species`, 'A response factor is that of a species; name it.')
+    if (value <= 0)
+      refuseField(`entries.${index}.value`, `The response factor of ${species} is ${value}; it has to be above zero.`)
+    if (entries.findIndex((other) => other.species === species) !== index)
+      refuseField(
+        `entries.${index}.species`,
+        `${species} stands in the calibration twice; give it one response factor.`,
+      )
+  })
+}
+
 async function keepCalibration(tx: Transaction, actor: Actor, input: NewCalibration): Promise<Calibration> {
   if (input.validTo !== null && Date.parse(input.validTo) <= Date.parse(input.validFrom))
     refuseField('validTo', 'A calibration has to be valid from a time before the one it is valid to.')
+  if (input.kind === 'response-factors') checkFactors(input)
   const id = randomUUID()
   if (input.rigId !== null && (await selectRig(tx, input.rigId)) === null) refuseField('rigId', 'There is no such rig.')
   if (input.supersedesId !== null) await checkSuperseding(tx, input.kind, input.supersedesId)

@@ -70,6 +70,22 @@ const map = (more: object = {}) =>
     ...more,
   })
 
+test('response factors that the reduction would pass over or guess at are refused, and nothing of them is kept', async () => {
+  const entry = { species: 'CO2', value: 2e-8, unit: '' }
+  const before = (await trail()).length
+  for (const [field, more] of [
+    ['convention', { convention: null }],
+    ['entries.1.species', { entries: [entry, { ...entry, species: null }] }],
+    ['entries.1.species', { entries: [entry, entry] }],
+    ['entries.0.value', { entries: [{ ...entry, value: 0 }] }],
+    ['entries.1.value', { entries: [entry, { ...entry, species: 'CO', value: -1e-8 }] }],
+  ] as const) {
+    const refusal = await refusalOf(createCalibration(lab.own.actor('technician'), factors(more)))
+    expect([refusal.code, refusal.details.issues?.map((issue) => issue.field)]).toEqual(['unprocessable', [field]])
+  }
+  expect((await trail()).length).toBe(before)
+})
+
 describe('who may', () => {
   test('a guest of the house reads nothing of it', async () => {
     const guest = lab.own.actor('guest')
