@@ -4,6 +4,7 @@ import { maintainDatabase } from './db/maintain'
 import { deleteStagedReadingSets } from './db/mutations/readings'
 import { ensureSetUpCode } from './lib/access/set-up'
 import { sweepStoredFiles } from './lib/access/sweep-files'
+import { resumeReadings } from './lib/access/uploads'
 import { stampCallerAddress } from './lib/auth/stamp-caller-address'
 import { environment } from './lib/environment'
 
@@ -23,6 +24,16 @@ async function sweep(): Promise<void> {
   await database.transaction((tx) => deleteStagedReadingSets(tx, before))
   // with a server behind it, another process may be taking a file in just now
   if (backEnd === 'thread') await sweepStoredFiles()
+}
+
+/** Files that were stored when the process before this one ended and were not looked at yet. Beside the requests, like the upkeep. */
+async function finishReadings(): Promise<void> {
+  const { backEnd } = await getOpenDatabase()
+  // with a server behind it, another process may be looking at a file just now
+  const before = new Date(Date.now() - (backEnd === 'thread' ? 0 : DAY_MS / 24))
+  void resumeReadings(before).catch((error: unknown) =>
+    console.error('Files that were waiting to be read could not all be read.', error),
+  )
 }
 
 /** Now and four times a day. Beside the requests: nobody waits for it, and a fault in it is no fault of theirs. */
@@ -69,6 +80,7 @@ export async function startServer(): Promise<void> {
     if (httpServer()) console.log(`\nInverse Kelvin: ${environment.APP_ORIGIN}\n`)
     await printSetUpCode()
     await keepInShape()
+    await finishReadings()
   } catch (error) {
     console.error(`The server did not start. ${error instanceof Error ? error.message : String(error)}`)
     if (error instanceof Error && error.cause !== undefined) console.error(error.cause)

@@ -1,5 +1,5 @@
 import 'server-only'
-import { and, asc, eq, isNotNull, isNull } from 'drizzle-orm'
+import { and, asc, eq, isNotNull, isNull, lt } from 'drizzle-orm'
 import { alias } from 'drizzle-orm/pg-core'
 import { detectionSchema, problemSchema, type Upload, type UploadState } from '@/lib/domain/intake'
 import { type Executor } from '../executor'
@@ -78,6 +78,18 @@ export async function selectUploadIdByHash(db: Executor, runId: string, sha256: 
     .from(uploads)
     .where(and(eq(uploads.runId, runId), eq(uploads.sha256, sha256)))
   return rows[0]?.id ?? null
+}
+
+/** Files that were stored and never looked at: their process ended in between. */
+export async function selectUnreadUploads(
+  db: Executor,
+  addedBefore: Date,
+): Promise<{ id: string; runId: string; campaignId: string }[]> {
+  return db
+    .select({ id: uploads.id, runId: uploads.runId, campaignId: uploads.campaignId })
+    .from(uploads)
+    .where(and(eq(uploads.state, 'received'), lt(uploads.createdAt, addedBefore), isNull(uploads.erasedAt)))
+    .orderBy(asc(uploads.createdAt), asc(uploads.id))
 }
 
 /** Hash of every file that a record names: of runs, of calibrations, of column maps. Erased ones are named by no bytes any more. */

@@ -15,7 +15,7 @@ import {
   selectValidCalibrations,
 } from '../../db/queries/rigs'
 import { selectRun } from '../../db/queries/runs'
-import { selectUpload, selectUploadIdByHash, selectUploads } from '../../db/queries/uploads'
+import { selectUnreadUploads, selectUpload, selectUploadIdByHash, selectUploads } from '../../db/queries/uploads'
 import { canonicalJson } from '../domain/canonical-json'
 import { columnMapSpecificationSchema, type ColumnMapSpecification } from '../domain/column-map'
 import { AppError } from '../domain/errors'
@@ -227,6 +227,29 @@ async function detect(run: Run, id: string): Promise<Upload> {
     problems: found.problems,
     columnMapId: map?.id ?? null,
   })
+}
+
+/**
+ * Looks at the files whose process ended between storing and reading them, one after the other, so that none stays in between for ever. What cannot be
+ * looked at is marked as failed with the reason.
+ *
+ * @returns how many were looked at
+ */
+export async function resumeReadings(addedBefore: Date): Promise<number> {
+  const db = await getDatabase()
+  const unread = await selectUnreadUploads(db, addedBefore)
+  for (const { id, runId, campaignId } of unread) {
+    const run = await selectRun(db, [campaignId], runId)
+    if (run === null) throw new Error(`file ${id} is of a run that is not there`)
+    const upload = await readBack(run, id)
+    if (await hasFile(upload.sha256)) await detect(run, id)
+    else
+      await change(run, id, upload.version, {
+        state: 'failed',
+        failure: 'The server stopped while the file was taken in, and its bytes are not in the store. Add it again.',
+      })
+  }
+  return unread.length
 }
 
 /** The kept map with what belongs to this one file: its sheet and the start it states. */

@@ -4,7 +4,9 @@ import path from 'node:path'
 import { afterAll, beforeAll, expect, test, vi } from 'vitest'
 import { getDatabase, type OpenDatabase } from '@/db/client'
 import { insertUpload } from '@/db/mutations/uploads'
+import { selectUploads } from '@/db/queries/uploads'
 import { sweepStoredFiles } from '@/lib/access/sweep-files'
+import { resumeReadings } from '@/lib/access/uploads'
 import { pathOf } from '@/lib/storage/file-store'
 import { freshDatabase } from '@/tests/support/fresh-database'
 import { makeRun } from '@/tests/support/make-run'
@@ -69,4 +71,35 @@ test('what no record names goes, what one names stays, and a record without its 
   expect(swept.lost).not.toContain(named)
   expect([named, orphan, young].map((sha256) => existsSync(pathOf(sha256)))).toEqual([true, false, true])
   expect(existsSync(interrupted)).toBe(false)
+})
+
+test('what was stored and not looked at when the process ended is looked at by the next one, or failed with its reason', async () => {
+  const run = await makeRun(await getDatabase(), 'resume')
+  const log = 'time;T bed [°C]\n2026-03-02 07:30:00;25,1\n2026-03-02 07:30:10;25,3\n2026-03-02 07:30:20;25,4\n'
+  const [readable, unreadable] = [store(log, 60), store('%PDF-1.7 not a table', 60)]
+  const db = await getDatabase()
+  for (const [id, sha256] of [
+    ['waits', readable],
+    ['is-a-pdf', unreadable],
+    ['has-no-bytes', hashOf('never stored')],
+  ] as const)
+    await db.transaction((tx) =>
+      insertUpload(tx, {
+        id,
+        campaignId: run.campaignId,
+        runId: run.runId,
+        sha256,
+        byteCount: 5,
+        fileName: `${id}.csv`,
+        createdBy: run.userId,
+      }),
+    )
+  const later = new Date(Date.now() + 60_000)
+  expect(await resumeReadings(new Date(Date.now() - 60_000))).toBe(0)
+  expect(await resumeReadings(later)).toBeGreaterThanOrEqual(3)
+  const states = new Map((await selectUploads(db, [run.campaignId], run.runId)).map((upload) => [upload.id, upload]))
+  expect(states.get('waits')).toMatchObject({ state: 'ready', kind: 'rig-log' })
+  expect(states.get('is-a-pdf')).toMatchObject({ state: 'failed' })
+  expect(states.get('has-no-bytes')?.failure).toMatch(/bytes are not in the store/)
+  expect(await resumeReadings(later)).toBe(0)
 })
