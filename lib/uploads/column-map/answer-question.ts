@@ -4,6 +4,9 @@ import { isTimeZone } from '../dates/local-clock'
 import { type FileFacts } from '../../domain/intake'
 import { type QuestionKey } from './questions'
 
+/** Characters of the longest start that a map holds. */
+const LONGEST_START = 40
+
 export type Answers = Readonly<Partial<Record<QuestionKey, string>>>
 
 /** Puts answers into the specification, where they are kept for the instrument's next file. An answer that is none is passed over: its question stays open. */
@@ -28,8 +31,9 @@ export function answerQuestions(
   if (order === 'day-first' || order === 'month-first' || order === 'year-first') next = { ...next, dateOrder: order }
   const zone = answers['time-zone']
   if (zone !== undefined && isTimeZone(zone)) next = { ...next, timeZone: zone }
-  const start = answers['elapsed-start']
-  if (start !== undefined && start.trim() !== '') next = { ...next, elapsedStart: start.trim().slice(0, 40) }
+  const start = (answers['elapsed-start'] ?? '').trim()
+  // one that is longer is no date, and cut to its first part it could be another: the offset stands at the end
+  if (start !== '' && start.length <= LONGEST_START) next = { ...next, elapsedStart: start }
   const reference = referenceOf(answers['flow-reference'])
   if (reference !== null)
     next = {

@@ -43,6 +43,19 @@ export function notNumber(line: number, column: MappedColumn, found: string, mar
   }
 }
 
+/** A column of injection numbers has none in this row. The place that stands in for it can be a number that another injection has. */
+export function notNumbered(line: number, column: MappedColumn, found: string, place: number): ProblemInput {
+  return {
+    code: 'not-a-number',
+    severity: 'problem',
+    line,
+    column: column.header,
+    found,
+    expected: 'the number of the injection',
+    sentence: `Line ${String(line)}, “${column.header}”: “${found.slice(0, 60)}” is not the number of an injection. It is counted by its place, as ${String(place)}.`,
+  }
+}
+
 export function overRange(line: number, column: MappedColumn, found: string): ProblemInput {
   return {
     code: 'out-of-range',

@@ -11,7 +11,7 @@ import { type ProblemInput, ProblemList } from '../problem-list'
 import { readRows } from '../read-rows'
 import { type OpenedFile, type RawTable } from '../table'
 import { readLongInjections } from './read-long-injections'
-import { type AppliedReading, emptyReading, notNumber, nothingRead, overRange } from './applied-reading'
+import { type AppliedReading, emptyReading, notNumber, notNumbered, nothingRead, overRange } from './applied-reading'
 import { RowClock } from './row-clock'
 import { orderByTime } from './order-by-time'
 
@@ -85,11 +85,16 @@ async function readWide(
       const text = String(cells[valve.index] ?? '')
         .trim()
         .toLowerCase()
-      bypass.push(text === '' ? Number.NaN : bypassWords.has(text) ? 1 : 0)
+      // a word for a missing value says nothing of the valve, unless the map has it as one of its words
+      const isBypass = bypassWords.has(text)
+      bypass.push(isBypass ? 1 : absenceOf(text) === null ? 0 : Number.NaN)
     }
     if (!isLog) {
       const cell = numberColumn === undefined ? '' : (cells[numberColumn.index] ?? '')
-      const value = typeof cell === 'number' ? cell : readNumberText(cell, mark)
+      const read = typeof cell === 'number' ? cell : readNumberText(cell, mark)
+      const value = read === MISSING_NUMBER ? null : read
+      if (value === null && numberColumn !== undefined)
+        problems.add(notNumbered(line, numberColumn, String(cell), sourceRow.length))
       number.push(value ?? sourceRow.length)
     }
     return 'good'

@@ -7,7 +7,7 @@ import { readNumberText } from '../number-text'
 import { ProblemList } from '../problem-list'
 import { readRows } from '../read-rows'
 import { type OpenedFile, type RawTable } from '../table'
-import { type AppliedReading, emptyReading, notNumber, nothingRead, overRange } from './applied-reading'
+import { type AppliedReading, emptyReading, notNumber, notNumbered, nothingRead, overRange } from './applied-reading'
 import { orderByTime } from './order-by-time'
 import { RowClock } from './row-clock'
 import { SpeciesWords } from './species-words'
@@ -83,7 +83,8 @@ export async function readLongInjections(
     }
     if (!species.includes(formula)) species.push(formula)
     const numberCell = numberColumn === undefined ? '' : (cells[numberColumn.index] ?? '')
-    const stated = typeof numberCell === 'number' ? numberCell : readNumberText(numberCell, mark)
+    const readNumber = typeof numberCell === 'number' ? numberCell : readNumberText(numberCell, mark)
+    const stated = readNumber === MISSING_NUMBER ? null : readNumber
     const instant = clock.instants.last()
     const key = `${stated === null ? '' : String(stated)} ${String(instant)}`
     let injection = injections.at(-1)
@@ -91,6 +92,8 @@ export async function readLongInjections(
       const earlier = seen.get(key)
       if (earlier !== undefined) injection = earlier
       else {
+        if (stated === null && numberColumn !== undefined)
+          problems.add(notNumbered(line, numberColumn, String(numberCell), injections.length + 1))
         injection = {
           number: stated ?? injections.length + 1,
           firstRow: line,

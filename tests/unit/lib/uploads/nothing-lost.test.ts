@@ -1,6 +1,7 @@
 import { strToU8 } from 'fflate'
 import { describe, expect, test } from 'vitest'
 import { type ColumnMapSpecification } from '@/lib/domain/column-map'
+import { answerQuestions } from '@/lib/uploads/column-map/answer-question'
 import { detectFile, readFile } from '@/lib/uploads/read-file'
 import { packWorkbook, type PackedCell } from '@/tests/support/pack-workbook'
 
@@ -73,6 +74,77 @@ describe('rows of a log', () => {
   test('a row that somebody marked as a comment is passed over and said; a comment of words is not', async () => {
     const { problems, rowCount } = await read(bytesOf(HEAD, ...good, `# ${row(49)}`, '# gas changed here', row(50)))
     expect([problems, rowCount]).toEqual([[['footer', 14]], 13])
+  })
+})
+
+describe('what is counted or told apart', () => {
+  const at = (minute: number) => `2026-03-02 07:${minute}:00`
+
+  test('an injection without a readable number is counted by its place, and that is said', async () => {
+    const wide = await read(
+      bytesOf(
+        'Injection No.;time;Area CO2;Area H2',
+        `1;${at(10)};100;200`,
+        `no. 2;${at(20)};101;201`,
+        `-9999;${at(30)};102;202`,
+        `4;${at(40)};103;203`,
+      ),
+    )
+    expect(wide.values('number')).toEqual([1, 2, 3, 4])
+    expect(wide.problems).toEqual([
+      ['not-a-number', 3],
+      ['not-a-number', 4],
+    ])
+    expect(wide.sentences[0]).toBe(
+      'Line 3, “Injection No.”: “no. 2” is not the number of an injection. It is counted by its place, as 2.',
+    )
+    const peak = (number: string, minute: number, species: string, area: number) =>
+      `${number};${at(minute)};${species};${area}`
+    const long = await read(
+      bytesOf(
+        'Injection No.;time;Component;Area',
+        ...[
+          peak('1', 10, 'CO2', 100),
+          peak('1', 10, 'H2', 200),
+          peak('x', 20, 'CO2', 101),
+          peak('x', 20, 'H2', 201),
+          peak('3', 30, 'CO2', 102),
+          peak('3', 30, 'H2', 202),
+        ],
+      ),
+    )
+    expect(long.values('number')).toEqual([1, 2, 3])
+    // once for the injection, in the line of its first peak
+    expect(long.problems).toEqual([['not-a-number', 4]])
+  })
+
+  test('a table without a column of injection numbers is counted by place without a word', async () => {
+    const { values, problems } = await read(bytesOf('time;Area CO2;Area H2', `${at(10)};100;200`, `${at(20)};101;201`))
+    expect([values('number'), problems]).toEqual([[1, 2], []])
+  })
+
+  test('a valve that says nothing is not in the reactor’s position', async () => {
+    const { values } = await read(
+      bytesOf(
+        'time;T bed [°C];valve',
+        `${at(10)};450;bypass`,
+        `${at(20)};450;reactor`,
+        `${at(30)};450;n/a`,
+        `${at(40)};450;`,
+        `${at(50)};450;reactor`,
+      ),
+    )
+    expect(values('isBypass')).toEqual([1, 0, Number.NaN, Number.NaN, 0])
+  })
+
+  test('a start too long for a date is no answer; cut, it would lose its offset', async () => {
+    const { detections } = await detectFile(bytesOf('elapsed [s];T bed [°C]', '0;450', '10;451', '20;452'), CONTEXT)
+    const detection = detections[0]
+    if (detection === undefined) throw new Error('no table')
+    const started = (start: string) =>
+      answerQuestions(detection.proposal, detection.facts, { 'elapsed-start': start }).specification.elapsedStart
+    expect(started(' 2026-03-02T07:30:00+01:00 ')).toBe('2026-03-02T07:30:00+01:00')
+    expect(started('2026-03-02 07:30:00.000000000000000000000 +01:00')).toBeNull()
   })
 })
 
