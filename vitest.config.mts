@@ -13,7 +13,8 @@ export default defineConfig({
   resolve,
   test: {
     projects: [
-      project('unit'),
+      // hashing a password is slow on purpose, and slower on a busy machine
+      project('unit', { testTimeout: 60_000 }),
       project('property', { testTimeout: 120_000, setupFiles: ['tests/support/fixed-seed.ts'] }),
       project('integration', {
         testTimeout: 120_000,
