@@ -25,13 +25,15 @@ export function symbolValue(symbol: WorkingSymbol): string {
   return symbol.unit === '' ? rounded : `${rounded} ${symbol.unit}`
 }
 
-/** `± 1.0 % shared`, `± 0.6 %`, or nothing. */
+const KIND_WORDS = { own: '', shared: ' shared', both: ' in all', none: '' } as const
+
+/** `± 1.0 % shared`, `± 1.8 % in all` (own and shared together), `± 0.6 %`, or nothing. */
 export function symbolUncertainty(symbol: WorkingSymbol): string {
   const u = symbol.standardUncertainty
   if (symbol.value === null || u === null || !(u > 0)) return ''
   const size = Math.abs(symbol.value)
   const relative = size > 0 ? u / size : Infinity
-  const shared = symbol.uncertaintyKind === 'shared' ? ' shared' : ''
+  const shared = KIND_WORDS[symbol.uncertaintyKind]
   if (relative > 0.3 || relative < 1e-6) return `± ${estimateAsText(u, null)}${shared}`
   const percent = relative * 100
   return `± ${percent >= 0.095 ? percent.toFixed(1) : percent.toPrecision(1)} %${shared}`

@@ -1,9 +1,9 @@
 import 'server-only'
-import { and, asc, eq, isNotNull, isNull, lt } from 'drizzle-orm'
+import { and, asc, eq, isNotNull, isNull, lt, ne } from 'drizzle-orm'
 import { alias } from 'drizzle-orm/pg-core'
 import { detectionSchema, problemSchema, type Upload, type UploadState } from '@/lib/domain/intake'
 import { type Executor } from '../executor'
-import { calibrations, columnMaps, uploads, users } from '../schema'
+import { calibrations, columnMaps, readingSets, runs, uploads, users } from '../schema'
 import { inScope, type Scope } from '../scope'
 
 const author = alias(users, 'author')
@@ -78,6 +78,63 @@ export async function selectUploadIdByHash(db: Executor, runId: string, sha256: 
     .from(uploads)
     .where(and(eq(uploads.runId, runId), eq(uploads.sha256, sha256)))
   return rows[0]?.id ?? null
+}
+
+export interface ReadingSpan {
+  readonly uploadId: string
+  readonly fileName: string
+  readonly firstAt: Date | null
+  readonly lastAt: Date | null
+}
+
+/** From when to when the readings of one kind go that a run has from other files. */
+export async function selectReadingSpans(
+  db: Executor,
+  runId: string,
+  kind: 'rig-log' | 'injections',
+  butUploadId: string,
+): Promise<ReadingSpan[]> {
+  return db
+    .select({
+      uploadId: readingSets.uploadId,
+      fileName: uploads.fileName,
+      firstAt: readingSets.firstAt,
+      lastAt: readingSets.lastAt,
+    })
+    .from(readingSets)
+    .innerJoin(uploads, eq(uploads.id, readingSets.uploadId))
+    .where(
+      and(
+        eq(readingSets.runId, runId),
+        eq(readingSets.kind, kind),
+        isNull(readingSets.supersededAt),
+        ne(readingSets.uploadId, butUploadId),
+      ),
+    )
+    .orderBy(asc(readingSets.firstAt), asc(readingSets.id))
+}
+
+/** Other runs in scope that have a file with these very bytes. */
+export async function selectRunsWithBytes(
+  db: Executor,
+  scope: Scope,
+  sha256: string,
+  butRunId: string,
+): Promise<{ runCode: string; fileName: string }[]> {
+  return db
+    .select({ runCode: runs.code, fileName: uploads.fileName })
+    .from(uploads)
+    .innerJoin(runs, eq(runs.id, uploads.runId))
+    .where(
+      and(
+        eq(uploads.sha256, sha256),
+        ne(uploads.runId, butRunId),
+        ne(uploads.state, 'set-aside'),
+        inScope(uploads.campaignId, scope),
+      ),
+    )
+    .orderBy(asc(runs.code))
+    .limit(5)
 }
 
 /** Files that were stored and never looked at: their process ended in between. */

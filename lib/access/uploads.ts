@@ -1,6 +1,7 @@
 import 'server-only'
 import { randomUUID } from 'node:crypto'
 import { getDatabase } from '../../db/client'
+import { type Executor } from '../../db/executor'
 import { insertAuditEntry } from '../../db/mutations/audit'
 import { prepareReadings } from '../../db/mutations/prepare-readings'
 import { publishReadingSet, stageReadingSet, supersedeReadingSets } from '../../db/mutations/readings'
@@ -15,11 +16,25 @@ import {
   selectValidCalibrations,
 } from '../../db/queries/rigs'
 import { selectRun } from '../../db/queries/runs'
-import { selectUnreadUploads, selectUpload, selectUploadIdByHash, selectUploads } from '../../db/queries/uploads'
+import {
+  selectReadingSpans,
+  selectRunsWithBytes,
+  selectUnreadUploads,
+  selectUpload,
+  selectUploadIdByHash,
+  selectUploads,
+} from '../../db/queries/uploads'
 import { canonicalJson } from '../domain/canonical-json'
 import { columnMapSpecificationSchema, type ColumnMapSpecification } from '../domain/column-map'
 import { AppError } from '../domain/errors'
-import { PARSER_VERSION, type Detection, type Problem, type Question, type Upload } from '../domain/intake'
+import {
+  PARSER_VERSION,
+  type Detection,
+  type FileReading,
+  type Problem,
+  type Question,
+  type Upload,
+} from '../domain/intake'
 import { type Actor } from '../domain/role'
 import { type Run } from '../domain/run'
 import { type UploadPreview } from '../domain/upload-preview'
@@ -29,6 +44,7 @@ import { readableCampaigns } from '../policy/campaign-scope'
 import { hasFile, openFile, pathOf, putFile, requireSpace, withIncomingFolder } from '../storage/file-store'
 import { answerQuestions, type Answers } from '../uploads/column-map/answer-question'
 import { findQuestions } from '../uploads/column-map/questions'
+import { problem } from '../uploads/problem-list'
 import { detectInThread, readInThread } from '../uploads/read-job'
 import { type ReadingContext } from '../uploads/reading-context'
 import { LIMITS } from '../uploads/limits'
@@ -224,7 +240,7 @@ async function detect(run: Run, id: string): Promise<Upload> {
     kind: detection.proposal.kind,
     format: detection.format,
     detection: { ...detection, questions },
-    problems: found.problems,
+    problems: [...(await sameBytes(run, upload)), ...found.problems],
     columnMapId: map?.id ?? null,
   })
 }
@@ -250,6 +266,20 @@ export async function resumeReadings(addedBefore: Date): Promise<number> {
       })
   }
   return unread.length
+}
+
+/** The same bytes with another run of the campaign: one measurement must not count as two. */
+async function sameBytes(run: Run, upload: Upload): Promise<Problem[]> {
+  const twins = await selectRunsWithBytes(await getDatabase(), [run.campaignId], upload.sha256, run.id)
+  return twins.map(({ runCode, fileName }) =>
+    problem({
+      code: 'same-bytes',
+      severity: 'problem',
+      found: `“${fileName}” of ${runCode}`,
+      expected: 'bytes that no other run has',
+      sentence: `${runCode} has these very bytes too, as “${fileName}”. One measurement must not count for two runs: is this file of this run?`,
+    }),
+  )
 }
 
 /** The kept map with what belongs to this one file: its sheet and the start it states. */
@@ -318,6 +348,30 @@ export async function previewUpload(actor: Actor, id: string): Promise<UploadPre
   }
 }
 
+/** A restarted log goes on where the first one ended. Two files over the same hours are two measurements, and their mean is neither. */
+const OVERLAP_ALLOWED_S = 60
+
+async function refuseOverlap(db: Executor, run: Run, uploadId: string, reading: FileReading): Promise<void> {
+  const time = reading.channels.find(({ name }) => name === 'time')?.values ?? new Float64Array()
+  const [firstS, lastS] = [time[0] ?? Number.NaN, time.at(-1) ?? Number.NaN]
+  for (const other of await selectReadingSpans(db, run.id, reading.kind, uploadId)) {
+    if (other.firstAt === null || other.lastAt === null) continue
+    const [fromS, toS] = [other.firstAt.getTime() / 1_000, other.lastAt.getTime() / 1_000]
+    const commonS = Math.min(lastS, toS) - Math.max(firstS, fromS)
+    // one injection a file: the same instant twice is the same injection twice
+    const isSameInstant = commonS === 0 && firstS === lastS && fromS === toS
+    if (!isSameInstant && !(commonS > OVERLAP_ALLOWED_S)) continue
+    const what = reading.kind === 'rig-log' ? 'log' : 'injections'
+    throw new AppError(
+      'conflict',
+      `${run.code} has ${what} over the same time from “${other.fileName}” (${instantText(fromS)} to ${instantText(toS)}; this file goes from ${instantText(firstS)} to ${instantText(lastS)}). Set one of the two aside, or add this file to the run it belongs to. If the times are wrong, correct how they are read.`,
+    )
+  }
+}
+
+const instantText = (seconds: number): string =>
+  `${new Date(seconds * 1_000).toISOString().slice(0, 16).replace('T', ' ')} UTC`
+
 const mapText = (specification: ColumnMapSpecification) =>
   canonicalJson(columnMapSpecificationSchema.parse({ ...specification, elapsedStart: null, sheet: '' }))
 
@@ -352,6 +406,7 @@ export async function confirmUpload(actor: Actor, id: string, version: number, n
       },
     )
   const db = await getDatabase()
+  if (reading !== null) await refuseOverlap(db, run, id, reading)
   const staged =
     reading === null
       ? null

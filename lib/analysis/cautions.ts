@@ -126,6 +126,14 @@ export const CAUTIONS = {
     sentence: ({ value, limit, more }) =>
       `Back at ${celsius(more?.temperatureK)}, the rate was ${percent(Math.abs(1 - (value ?? 1)), 3)} ${(value ?? 1) < 1 ? 'lower' : 'higher'} than before, beyond ${percent(limit)}: the line says little about the fresh catalyst.${word(more?.corrected)}`,
   },
+  'injections-outside-log': {
+    severity: 'caution',
+    unit: '-',
+    source: 'common practice',
+    tag: ({ more }) => `${word(more?.count)} injections outside the log`,
+    sentence: ({ more }) =>
+      `${word(more?.count)} of ${word(more?.all)} injections were taken before the rig log begins or after it ends: nothing says what the reactor was doing then. Is the file of another day or run, or is a clock wrong?`,
+  },
   'clocks-disagree': {
     severity: 'caution',
     unit: 's',

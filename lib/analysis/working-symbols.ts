@@ -28,9 +28,19 @@ export function estimateSymbol(
     value: estimate === null ? null : estimate.value * factor + offset,
     unit,
     standardUncertainty: total === null ? null : total.standardUncertainty * Math.abs(factor),
-    uncertaintyKind:
-      total === null ? 'none' : estimate !== null && Object.keys(estimate.sharedEffects).length > 0 ? 'shared' : 'own',
+    uncertaintyKind: kindOf(estimate),
   }
+}
+
+/** A part below this share of the whole is none that a reader could see. */
+const VISIBLE_SHARE = 0.01
+
+function kindOf(estimate: Estimate | null): WorkingSymbol['uncertaintyKind'] {
+  const total = estimate === null ? null : totalUncertainty(estimate)
+  if (estimate === null || total === null || !(total.standardUncertainty > 0)) return total === null ? 'none' : 'own'
+  const isShared = total.sharedStandardUncertainty > VISIBLE_SHARE * total.standardUncertainty
+  const isOwn = (estimate.randomStandardUncertainty ?? 0) > VISIBLE_SHARE * total.standardUncertainty
+  return isShared ? (isOwn ? 'both' : 'shared') : 'own'
 }
 
 /**

@@ -7,8 +7,8 @@ export interface WorkingSymbol {
   readonly unit: string
   /** one standard uncertainty in the same unit; null where none is known */
   readonly standardUncertainty: number | null
-  /** whether the uncertainty is shared with other numbers or belongs to this one alone */
-  readonly uncertaintyKind: 'own' | 'shared' | 'none'
+  /** whether the uncertainty belongs to this number alone, is shared with other numbers, or has a part of either */
+  readonly uncertaintyKind: 'own' | 'shared' | 'both' | 'none'
 }
 
 /** The full derivation of one number, shown on request and copied as text. */

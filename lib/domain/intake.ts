@@ -24,6 +24,7 @@ export const problemSchema = z.strictObject({
     'duplicate-injection',
     'missing-cached-value',
     'limit-reached',
+    'same-bytes',
   ]),
   severity: z.enum(['note', 'problem', 'fatal']),
   /** one-based line in the file or row in the sheet; null for the file as a whole */

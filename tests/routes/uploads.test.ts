@@ -224,6 +224,52 @@ test('the chromatograms of one request are one series: kept once, whatever order
   expect(alone.items).toMatchObject([{ fileName: 'R-0001_003.cdf', kind: 'analyser', state: 'ready' }])
 })
 
+test('a second log over the same hours is refused before it is mixed in, and taken once the first is set aside', async () => {
+  const rows = (from: string, count: number) =>
+    `time;T bed [°C]\n${Array.from({ length: count }, (_, i) => `${new Date(Date.parse(from) + i * 60_000).toISOString()};${String(200 + i)},5`).join('\n')}\n`
+  const one = await first({ 'morning.csv': rows('2031-01-01T08:00:00Z', 30) })
+  expect((await postConfirm(sendTo(one.id, tagOf(one)), ofUpload(one.id))).status).toBe(200)
+  const other = await first({ 'again.csv': rows('2031-01-01T08:10:00Z', 30) })
+  const refused = await postConfirm(sendTo(other.id, tagOf(other)), ofUpload(other.id))
+  expect(refused.status).toBe(409)
+  expect(await refused.json()).toMatchObject({
+    detail: expect.stringMatching(
+      /^\S+ has log over the same time from “morning.csv” \(2031-01-01 08:00 UTC to 2031-01-01 08:29 UTC; this file goes from 2031-01-01 08:10 UTC/,
+    ),
+  })
+  expect(await setsOf(other.id)).toEqual([])
+  // a logger that was started again goes on where the first file ended
+  const later = await first({ 'afternoon.csv': rows('2031-01-01T08:30:00Z', 5) })
+  expect((await postConfirm(sendTo(later.id, tagOf(later)), ofUpload(later.id))).status).toBe(200)
+  const now: SaidUpload = await (await getUpload(fetchOf(one.id), ofUpload(one.id))).json()
+  await postSetAside(sendTo(one.id, tagOf(now), { reason: 'the clock was wrong' }), ofUpload(one.id))
+  const laterNow: SaidUpload = await (await getUpload(fetchOf(later.id), ofUpload(later.id))).json()
+  await postSetAside(sendTo(later.id, tagOf(laterNow), { reason: 'the clock was wrong' }), ofUpload(later.id))
+  expect((await postConfirm(sendTo(other.id, tagOf(other)), ofUpload(other.id))).status).toBe(200)
+})
+
+test('bytes that another run of the campaign has are said to be there', async () => {
+  const text = 'time;T bed [°C]\n2026-03-02 07:30:00;25,1\n2026-03-02 07:30:10;25,7\n2026-03-02 07:30:20;25,9\n'
+  await first({ 'first.csv': text })
+  const db = await getDatabase()
+  const [here] = await db.select().from(runs).where(eq(runs.id, run.runId))
+  if (here === undefined) throw new Error('the run is there')
+  await db.insert(runs).values({ ...here, id: 'twin-run', code: 'R-TWIN' })
+  const form = new FormData()
+  form.append('file', new File([text], 'second.csv', { type: 'application/octet-stream' }))
+  const answer = await postUploads(
+    new Request(`${ORIGIN}/api/v1/runs/twin-run/uploads`, { method: 'POST', headers: bearer(technician), body: form }),
+    { params: Promise.resolve({ runId: 'twin-run' }) },
+  )
+  const { items } = (await answer.json()) as { items: { problems: { code: string; sentence: string }[] }[] }
+  expect(items[0]?.problems).toMatchObject([
+    {
+      code: 'same-bytes',
+      sentence: `${here.code} has these very bytes too, as “first.csv”. One measurement must not count for two runs: is this file of this run?`,
+    },
+  ])
+})
+
 test('the same bytes again are answered with the file that has them, whatever they are called', async () => {
   const once = await add(technician, {
     'once.csv': 'time;T bed [C]\n2026-03-02 07:30:00;25,1\n2026-03-02 07:30:10;25,3\n',

@@ -63,7 +63,7 @@ const workingSymbol = z.strictObject({
   value: numberOrNull,
   unit: text,
   standardUncertainty: numberOrNull,
-  uncertaintyKind: z.enum(['own', 'shared', 'none']),
+  uncertaintyKind: z.enum(['own', 'shared', 'both', 'none']),
 })
 const working = z.strictObject({
   title: text,

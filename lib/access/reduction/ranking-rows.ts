@@ -27,6 +27,15 @@ export interface RankingRequest {
   readonly includeProvisional: boolean
 }
 
+/** What the line of a sample that lost activity on stream hides, run by run. */
+function lossSentences(reductions: readonly RunReduction[]): string[] {
+  return reductions.flatMap(({ runCode, cautions }) =>
+    cautions
+      .filter(({ code }) => code === 'deactivation' || code === 'strong-deactivation')
+      .map(({ sentence }) => `${runCode}: ${sentence} The line rests on the rates as they were measured.`),
+  )
+}
+
 /** Why a run is not in its sample's line; empty when it is. */
 function whyLeftOut(entry: ReducedRun, includeProvisional: boolean): string {
   const { run, reduction, notReadyReason } = entry
@@ -329,7 +338,7 @@ function prepareSample(sample: CampaignSample, request: RankingRequest): Prepare
     fit,
     runFits: reductions.length > 1 ? reductions.flatMap((reduction) => reduction.fit ?? []) : [],
     workings: {
-      ...rowWorkings(sample.sampleCode, numbers, sites, settings),
+      ...rowWorkings(sample.sampleCode, numbers, sites, settings, lossSentences(reductions)),
       temperatureForConversionK: figures.temperatureForConversionK.working,
       ...Object.fromEntries(
         Object.entries(figures.selectivity).map(([name, entry]) => [`selectivity.${name}`, entry.working]),

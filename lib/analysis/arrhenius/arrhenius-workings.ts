@@ -18,6 +18,8 @@ function partsInWords(estimate: Estimate, factor: number, unit: string): string[
   ]
   const shared = Object.keys(estimate.sharedEffects)
     .map((id) => ({ id, effect: (estimate.sharedEffects[id] ?? 0) * factor }))
+    // what is nothing but rounding (a flow moves the level, not the slope) is not told
+    .filter(({ effect }) => Math.abs(effect) > 1e-9 * Math.abs(estimate.value * factor))
     .sort((a, b) => Math.abs(b.effect) - Math.abs(a.effect) || (a.id < b.id ? -1 : 1))
   for (const { id, effect } of shared)
     words.push(`Shared part ${id}: ${numberText(effect, 2)} ${unit} for one standard uncertainty.`)
@@ -36,6 +38,24 @@ function errorModelInWords(fit: ArrheniusFit, meanInjectionError: number | null)
         : '; the residuals agree, so both were pooled.'
     }`,
   ]
+}
+
+/**
+ * An interval as the working of a number says it.
+ *
+ * @param interval - low and high end [SI]
+ * @param confidenceLevel - between 0 and 1 [-]
+ * @param factor - practical unit per SI unit
+ * @param unit - practical unit
+ * @returns one sentence
+ */
+export function intervalSentence(
+  interval: readonly [number, number],
+  confidenceLevel: number,
+  factor: number,
+  unit: string,
+): string {
+  return `${numberText(confidenceLevel * 100, 3)} % interval ${numberText(interval[0] * factor, 5)} to ${numberText(interval[1] * factor, 5)} ${unit}.`
 }
 
 /**
@@ -66,16 +86,13 @@ export function arrheniusWorkings(
   const leftOut = fit.points
     .filter((point) => !point.isUsed)
     .map((point) => `${point.runCode} hold ${point.holdNumber}: ${point.reason}`)
-  const level = `${numberText(fit.confidenceLevel * 100, 3)} %`
   const assumptions = [
     'One straight line: one kinetic regime over the whole range.',
     'Errors of the bed temperature that are common to all holds are kept apart from the scatter and included in the interval.',
   ]
   const common = { assumptions, source: LINE_SOURCE, from, leftOut }
   const intervalWords = (interval: readonly [number, number] | null, factor: number, name: string): string[] =>
-    interval === null
-      ? []
-      : [`${level} interval ${numberText(interval[0] * factor, 5)} to ${numberText(interval[1] * factor, 5)} ${name}.`]
+    interval === null ? [] : [intervalSentence(interval, fit.confidenceLevel, factor, name)]
   const Ea = estimateSymbol('E_a', 'apparent activation energy', fit.activationEnergyJPerMol, 'kJ mol⁻¹', 1e-3)
   const lnA = estimateSymbol('ln A', 'logarithm of the pre-exponential factor', fit.lnPreExponential, unit, 1)
   const centre = estimateSymbol(

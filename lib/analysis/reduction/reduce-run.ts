@@ -367,12 +367,30 @@ export function reduceRun(input: RunInput): RunReduction {
     0,
   )
   return {
-    ...lineOf(input, points, [...inletCautions, ...clockCautions(clockOffset)]),
+    ...lineOf(input, points, [...inletCautions, ...outsideCautions(input), ...clockCautions(clockOffset)]),
     clockOffset,
     holds,
     injections: injectionUses(input, assigned, conversionAt),
     sharedSources,
   }
+}
+
+/** A few standby injections before the start are usual; a fifth of them are not. */
+const SHARE_OUTSIDE = 0.2
+
+function outsideCautions(input: RunInput): Caution[] {
+  const { timeS } = input.log
+  const [first, last] = [timeS[0] ?? Number.NaN, timeS[timeS.length - 1] ?? Number.NaN]
+  const times = Array.from(input.injections.timeS).filter((time) => Number.isFinite(time))
+  const count = times.filter((time) => time < first || time > last).length
+  if (!(count > SHARE_OUTSIDE * times.length)) return []
+  return [
+    raiseCaution('injections-outside-log', {
+      value: count / times.length,
+      limit: SHARE_OUTSIDE,
+      more: { count, all: times.length },
+    }),
+  ]
 }
 
 /** One injection more may be the old gas in the line after a turn of the valve; two are not. */

@@ -53,6 +53,18 @@ test('a run whose clocks disagree says so, with the offset; one whose clocks agr
   expect(caution?.sentence).toMatch(/ahead of the rig’s .* 50 of 50 injections would then agree/)
 })
 
+test('injections of another day are told, a few before the start are not', async () => {
+  const input = await readDemoRun('R-0001')
+  const outside = (byS: number) =>
+    reduceRun({ ...input, injections: shifted(input.injections, byS) }).cautions.filter(
+      ({ code }) => code === 'injections-outside-log',
+    )
+  expect(outside(0)).toEqual([])
+  // five injections of twelve minutes each before the log begins: a tenth of fifty
+  expect(outside(-3_600 - 600)).toEqual([])
+  expect(outside(-86_400)).toMatchObject([{ value: 1, tag: '50 injections outside the log' }])
+})
+
 describe('a signal every ten seconds times the valve to ten seconds', () => {
   // valve turns at 3,000 s and 9,000 s; the analyser's clock is 1,234 s fast
   const timeS = Float64Array.from({ length: 1_200 }, (_, i) => i * 10)
