@@ -104,10 +104,10 @@ describe('results from files, kept under their content', () => {
     const notes = decaying?.workings['activationEnergyJPerMol']?.notes ?? []
     expect(Number(/^R-0008: .* would be (\d+\.\d) kJ\/mol/.exec(notes[0] ?? '')?.[1])).toBeCloseTo(86.5, -0.5)
     // the interval that the working states is the one in the table, not that of the line alone
-    const [low, high] = decaying?.activationEnergyInterval ?? [Number.NaN, Number.NaN]
+    const [least, most] = decaying?.activationEnergyInterval ?? [Number.NaN, Number.NaN]
     const stated = /interval ([\d.]+) to ([\d.]+) kJ\/mol\.$/.exec(notes[1] ?? '')
-    expect(Number(stated?.[1])).toBeCloseTo(low / 1_000, 2)
-    expect(Number(stated?.[2])).toBeCloseTo(high / 1_000, 2)
+    expect(Number(stated?.[1])).toBeCloseTo(least / 1_000, 2)
+    expect(Number(stated?.[2])).toBeCloseTo(most / 1_000, 2)
     expect(notes.some((note) => note.startsWith('Of the line alone: 95 % interval'))).toBe(true)
     const inside = (value: number, interval: readonly [number, number] | null | undefined, widest: number) => {
       expect(interval?.[0]).toBeLessThan(value)
