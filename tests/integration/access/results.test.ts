@@ -108,7 +108,7 @@ describe('results from files, kept under their content', () => {
     const stated = /interval ([\d.]+) to ([\d.]+) kJ\/mol\.$/.exec(notes[1] ?? '')
     expect(Number(stated?.[1])).toBeCloseTo(least / 1_000, 2)
     expect(Number(stated?.[2])).toBeCloseTo(most / 1_000, 2)
-    expect(notes.some((note) => note.startsWith('Of the line alone: 95 % interval'))).toBe(true)
+    expect(notes).toContainEqual(expect.stringMatching(/^Of the line alone: 95.0 % interval/))
     const inside = (value: number, interval: readonly [number, number] | null | undefined, widest: number) => {
       expect(interval?.[0]).toBeLessThan(value)
       expect(interval?.[1]).toBeGreaterThan(value)
