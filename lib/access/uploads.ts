@@ -56,6 +56,8 @@ import { previewSeries } from './preview-series'
 
 const MOST_FILES = 20
 const ADDERS = 'Files are added by the people who work in the campaign while the run is open.'
+const CHANGERS =
+  'A file that was confirmed or set aside is changed by the people who work in the campaign while the run is open; a token needs the scope write for it.'
 
 async function touchedRun(actor: Actor, runId: string): Promise<Run> {
   const run = await selectRun(await getDatabase(), touchableCampaigns(actor), runId)
@@ -70,6 +72,14 @@ async function openUpload(actor: Actor, id: string): Promise<{ upload: Upload; r
   const run = await touchedRun(actor, upload.runId)
   authorise(can.addFiles(actor, run), ADDERS)
   return { upload, run }
+}
+
+/** The same for somebody who may take the file where it goes: what counts in the run already, or was put aside, takes more. */
+async function openUploadToChange(actor: Actor, id: string): Promise<{ upload: Upload; run: Run }> {
+  const opened = await openUpload(actor, id)
+  if (opened.upload.state === 'confirmed' || opened.upload.state === 'set-aside')
+    authorise(can.changeFiles(actor, opened.run), CHANGERS)
+  return opened
 }
 
 /** What is known outside the file: the rig's clock, barometer and flow reference, and the species that may stand in it. */
@@ -206,9 +216,11 @@ async function readBack(run: Run, id: string): Promise<Upload> {
   return upload
 }
 
-async function change(run: Run, id: string, version: number, to: UploadChange): Promise<Upload> {
+async function change(run: Run, id: string, version: number, to: UploadChange, isByPerson = false): Promise<Upload> {
   const db = await getDatabase()
   await db.transaction(async (tx) => {
+    // what a file turns out to be is noted of a closed campaign too
+    if (isByPerson) await holdOpenCampaign(tx, run.campaignId)
     if (!(await updateUpload(tx, { id, version }, to)))
       throw new AppError('stale', 'Somebody else worked on this file meanwhile. Look at it again.')
   })
@@ -304,10 +316,11 @@ export async function correctUpload(
   input: { readonly specification?: ColumnMapSpecification; readonly answers?: Answers },
   version: number,
 ): Promise<Upload> {
-  const { upload, run } = await openUpload(actor, id)
+  const { upload, run } = await openUploadToChange(actor, id)
   if (upload.detection === null) {
     // nothing to correct in it, but it can be kept beside the run as what it is
-    if (input.answers?.kind === 'attachment') return change(run, id, version, { state: 'ready', kind: 'attachment' })
+    if (input.answers?.kind === 'attachment')
+      return change(run, id, version, { state: 'ready', kind: 'attachment' }, true)
     throw new AppError('unprocessable', 'The file could not be read as a table, so there are no columns to correct.')
   }
   const context = await contextOf(run)
@@ -317,11 +330,12 @@ export async function correctUpload(
     input.answers ?? {},
   )
   const questions = findQuestions(answered.specification, answered.facts, context)
-  return change(run, id, version, {
+  const to: UploadChange = {
     state: upload.state === 'confirmed' ? 'confirmed' : questions.length > 0 ? 'needs-answers' : 'ready',
     kind: answered.specification.kind,
     detection: { ...upload.detection, proposal: answered.specification, facts: answered.facts, questions },
-  })
+  }
+  return change(run, id, version, to, true)
 }
 
 async function readingOf(run: Run, upload: Upload) {
@@ -378,9 +392,11 @@ const mapText = (specification: ColumnMapSpecification) =>
 /**
  * Takes the file's readings into the run as its map says. All rows or none: values are staged first, then published together with the map, the
  * file's state and the audit entry in one transaction. A second confirmation reads the file anew; the earlier reading stays in history.
+ * A map not met before is kept for the rig's next files where the actor may make column maps; an instrument's token, or one bound to a campaign, has its
+ * file read as answered and leaves the rig's maps, which other campaigns share, alone.
  */
 export async function confirmUpload(actor: Actor, id: string, version: number, now = new Date()): Promise<Upload> {
-  const { upload, run } = await openUpload(actor, id)
+  const { upload, run } = await openUploadToChange(actor, id)
   if (upload.version !== version)
     throw new AppError('stale', 'Somebody else worked on this file meanwhile. Look at it again.')
   const detection = upload.detection
@@ -424,16 +440,17 @@ export async function confirmUpload(actor: Actor, id: string, version: number, n
       detection !== null &&
       (known === null || mapText(known.specification) !== mapText(detection.proposal))
     ) {
-      columnMapId = randomUUID()
-      await insertColumnMap(tx, {
-        id: columnMapId,
-        rigId: run.rigId,
-        instrument: detection.proposal.kind === 'rig-log' ? 'Rig log' : 'Analyser',
-        fingerprint: detection.fingerprint,
-        specification: { ...detection.proposal, elapsedStart: null },
-        sampleFileSha256: upload.sha256,
-        createdBy: actor.userId,
-      })
+      columnMapId = can.makeColumnMap(actor) ? randomUUID() : null
+      if (columnMapId !== null)
+        await insertColumnMap(tx, {
+          id: columnMapId,
+          rigId: run.rigId,
+          instrument: detection.proposal.kind === 'rig-log' ? 'Rig log' : 'Analyser',
+          fingerprint: detection.fingerprint,
+          specification: { ...detection.proposal, elapsedStart: null },
+          sampleFileSha256: upload.sha256,
+          createdBy: actor.userId,
+        })
     }
     if (staged === null) await supersedeReadingSets(tx, id, now)
     else await publishReadingSet(tx, staged.id, now)
@@ -476,6 +493,7 @@ export async function setUploadAside(
   now = new Date(),
 ): Promise<Upload> {
   const { upload, run } = await openUpload(actor, id)
+  authorise(can.changeFiles(actor, run), CHANGERS)
   const db = await getDatabase()
   await db.transaction(async (tx) => {
     await holdOpenCampaign(tx, run.campaignId)

@@ -56,6 +56,11 @@ function leads(actor: Actor, campaignId: string): boolean {
   return partIn(actor, campaignId) === 'lead'
 }
 
+/** Whoever works in the campaign while the run is open (shifts change), afterwards who may still edit it. */
+function addsFiles(actor: Actor, run: RunFacts): boolean {
+  return run.isFrozen !== true && ((run.state === 'open' && worksIn(actor, run.campaignId)) || editsRun(actor, run))
+}
+
 function editsRun(actor: Actor, run: RunFacts): boolean {
   if (run.isFrozen === true) return false
   const part = partIn(actor, run.campaignId)
@@ -97,11 +102,10 @@ export const can = {
   addRun: (actor: Actor, campaignId: string): boolean => mayThroughToken(actor, 'intake') && worksIn(actor, campaignId),
   addLoading: (actor: Actor, campaignId: string): boolean =>
     mayThroughToken(actor, 'intake') && worksIn(actor, campaignId),
-  /** add files: whoever works in the campaign while the run is open (shifts change), afterwards who may still edit it */
-  addFiles: (actor: Actor, run: RunFacts): boolean =>
-    mayThroughToken(actor, 'intake') &&
-    run.isFrozen !== true &&
-    ((run.state === 'open' && worksIn(actor, run.campaignId)) || editsRun(actor, run)),
+  /** add files, answer what is asked of them and take their readings in */
+  addFiles: (actor: Actor, run: RunFacts): boolean => mayThroughToken(actor, 'intake') && addsFiles(actor, run),
+  /** set a file aside, or read anew what was confirmed or set aside: the run loses readings by it, so an instrument's token may not */
+  changeFiles: (actor: Actor, run: RunFacts): boolean => mayThroughToken(actor, 'write') && addsFiles(actor, run),
   makeColumnMap: (actor: Actor): boolean =>
     mayThroughToken(actor, 'write') && reachesHouse(actor) && actor.role !== 'guest',
   makeCalibration: (actor: Actor): boolean =>

@@ -11,9 +11,9 @@ import { POST as postSetAside } from '@/app/api/v1/uploads/[uploadId]/set-aside/
 import { GET as getUploads, POST as postUploads } from '@/app/api/v1/runs/[runId]/uploads/route'
 import { getDatabase, type OpenDatabase } from '@/db/client'
 import { selectReadingChannels } from '@/db/queries/readings'
-import { auditEntries, members, readingSets, runs, uploads } from '@/db/schema'
+import { auditEntries, campaigns, columnMaps, members, readingSets, runs, uploads } from '@/db/schema'
 import { createToken } from '@/lib/access/tokens'
-import { type Role } from '@/lib/domain/role'
+import { type Role, type TokenScope } from '@/lib/domain/role'
 import { actorOf } from '@/tests/support/actors'
 import { freshDatabase } from '@/tests/support/fresh-database'
 import { makePerson } from '@/tests/support/make-person'
@@ -36,15 +36,16 @@ let technician: string
 let guest: string
 let stranger: string
 
-async function tokenOf(role: Role, campaignId: string): Promise<string> {
+async function tokenOf(
+  role: Exclude<Role, 'admin'>,
+  campaignId: string,
+  scopes: TokenScope[] = ['read', 'intake', 'write'],
+  boundTo: string | null = null,
+): Promise<string> {
   const person = await makePerson(role, { passwordHash: 'none' })
   await (await getDatabase()).insert(members).values({ campaignId, userId: person.id, role })
-  const { secret } = await createToken(actorOf(role, { userId: person.id }), {
-    name: 'rig computer',
-    scopes: ['read', 'intake', 'write'],
-    campaignId: null,
-    validDays: 1,
-  })
+  const owner = actorOf(role, { userId: person.id, memberships: { [campaignId]: role } })
+  const { secret } = await createToken(owner, { name: 'rig computer', scopes, campaignId: boundTo, validDays: 1 })
   return secret
 }
 
@@ -334,6 +335,71 @@ test('once the run is handed in, a technician whose run it is not changes no fil
   } finally {
     await db.update(runs).set({ state: 'open' }).where(eq(runs.id, run.runId))
   }
+})
+
+test('an instrument’s token takes readings in and out of nothing: what counts, or was put aside, it leaves as it is', async () => {
+  const instrument = await tokenOf('technician', run.campaignId, ['read', 'intake'])
+  const bound = await tokenOf('technician', run.campaignId, ['read', 'intake', 'write'], run.campaignId)
+  const maps = async () => (await (await getDatabase()).select().from(columnMaps)).length
+  const before = await maps()
+  const send = (upload: SaidUpload, body?: unknown, secret = instrument) =>
+    sendTo(upload.id, tagOf(upload), body, secret)
+
+  const { items } = await add(instrument, {
+    'rig.csv': 'time;T reactor bed [C]\n2026-03-02 14:30:00;25,1\n2026-03-02 14:30:10;25,3\n',
+  })
+  const [added] = items
+  if (added === undefined) throw new Error('one file went in')
+  const reason = { reason: 'of another run' }
+  expect((await postSetAside(send(added, reason), ofUpload(added.id))).status).toBe(403)
+  const taken = await postConfirm(send(added), ofUpload(added.id))
+  expect(taken.status).toBe(200)
+  const confirmed: SaidUpload = await taken.json()
+  expect(confirmed).toMatchObject({ state: 'confirmed', kind: 'rig-log', columnMapId: null })
+  // the rig's maps serve every campaign: neither a token of scope intake nor one bound to a campaign adds to them
+  expect(await maps()).toBe(before)
+  const [set] = await setsOf(added.id)
+  expect([set?.rowCount, set?.supersededAt]).toEqual([2, null])
+
+  const refused = [
+    await postSetAside(send(confirmed, reason), ofUpload(added.id)),
+    await postConfirm(send(confirmed), ofUpload(added.id)),
+    await patchUpload(send(confirmed, { answers: { kind: 'attachment' } }), ofUpload(added.id)),
+  ]
+  expect(refused.map(({ status }) => status)).toEqual([403, 403, 403])
+  expect(await refused[0]?.json()).toMatchObject({ detail: expect.stringContaining('needs the scope write') })
+  expect((await setsOf(added.id)).map((one) => one.supersededAt)).toEqual([null])
+
+  const again = await postConfirm(send(confirmed, undefined, bound), ofUpload(added.id))
+  expect(again.status).toBe(200)
+  expect(await maps()).toBe(before)
+  const twice: SaidUpload = await again.json()
+  const aside = await postSetAside(send(twice, reason, bound), ofUpload(added.id))
+  const gone: SaidUpload = await aside.json()
+  expect([aside.status, gone.state]).toEqual([200, 'set-aside'])
+  expect((await patchUpload(send(gone, { answers: {} }), ofUpload(added.id))).status).toBe(403)
+  expect((await postConfirm(send(gone), ofUpload(added.id))).status).toBe(403)
+  // a person's own token of scope write brings it back, and its columns are known from then on
+  const back = await postConfirm(send(gone, undefined, technician), ofUpload(added.id))
+  expect([back.status, await maps()]).toEqual([200, before + 1])
+})
+
+test('in a closed campaign no file is answered for', async () => {
+  const upload = await first({ 'closed.csv': 'time;T bed [C]\n2026-03-02 15:30:00;25,1\n2026-03-02 15:30:10;25,3\n' })
+  const db = await getDatabase()
+  const close = (closedAt: Date | null) =>
+    db.update(campaigns).set({ closedAt }).where(eq(campaigns.id, run.campaignId))
+  await close(new Date('2026-04-01T00:00:00Z'))
+  try {
+    const change = sendTo(upload.id, tagOf(upload), { answers: { kind: 'attachment' } })
+    const answer = await patchUpload(change, ofUpload(upload.id))
+    expect(answer.status).toBe(409)
+    expect(await answer.json()).toMatchObject({ detail: expect.stringContaining('The campaign is closed.') })
+  } finally {
+    await close(null)
+  }
+  const read = await getUpload(fetchOf(upload.id), ofUpload(upload.id))
+  expect(await read.json()).toMatchObject({ state: upload.state, version: upload.version })
 })
 
 test('what cannot be read stays, and can be kept beside the run', async () => {

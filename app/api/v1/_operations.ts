@@ -412,7 +412,6 @@ export const operations: readonly Operation[] = [
     answer: uploadRecord,
     status: 200,
     isVersioned: true,
-    scope: 'intake',
   }),
   get('/uploads/{uploadId}/content', 'The bytes as they were handed in', { answerType: 'application/octet-stream' }),
 ]

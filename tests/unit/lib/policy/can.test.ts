@@ -89,6 +89,8 @@ const runTable = `
   editRun   other   - - - -   y y - -   y y y -   - - - -   y y y -
   addFiles  own     y - - -   y y - -   y y y -   - - - -   y y y -
   addFiles  other   y - - -   y y - -   y y y -   - - - -   y y y -
+  changeFiles own   y - - -   y y - -   y y y -   - - - -   y y y -
+  changeFiles other y - - -   y y - -   y y y -   - - - -   y y y -
   handIn    own     y y y -   y y y -   y y y -   - - - -   y y y -
   handIn    other   - - - -   y y y -   y y y -   - - - -   y y y -
   leaveOut  own     - - - -   y y y -   y y y -   - - - -   y y y -
@@ -157,6 +159,7 @@ const houseRules: Record<string, (actor: Actor) => boolean> = {
 const runRules: Record<string, (actor: Actor, run: RunFacts) => boolean> = {
   editRun: can.editRun,
   addFiles: can.addFiles,
+  changeFiles: can.changeFiles,
   handIn: can.handIn,
   leaveOut: can.leaveOut,
 }
@@ -272,6 +275,7 @@ describe('a token', () => {
     expect(can.addFiles(instrument, runOf('other', 'open'))).toBe(true)
     expect(can.handIn(instrument, runOf('own', 'open'))).toBe(true)
     expect(can.editRun(instrument, runOf('own', 'open'))).toBe(false)
+    expect(can.changeFiles(instrument, runOf('own', 'open'))).toBe(false)
     expect(can.editSample(instrument)).toBe(false)
     expect(can.addSiteCount(instrument)).toBe(false)
     expect(can.makeCalibration(instrument)).toBe(false)
