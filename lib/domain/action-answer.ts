@@ -2,6 +2,15 @@ import { z } from 'zod'
 import { AnalysisError } from '../analysis/analysis-error'
 import { appErrorOf, type ActionResult, type FieldIssue } from './errors'
 
+const NO_SUCH_FIELD = 'There is no such field here.'
+
+/** What a parse says of fields that do not exist: which ones do. Give it to the parse as `error`. */
+export function nameAllowedFields(issue: z.core.$ZodRawIssue): string | undefined {
+  if (issue.code !== 'unrecognized_keys') return undefined
+  const allowed = issue.inst instanceof z.ZodObject ? Object.keys(issue.inst.shape) : []
+  return `${NO_SUCH_FIELD} ${allowed.length === 0 ? 'None is taken.' : `Allowed: ${allowed.join(', ')}.`}`
+}
+
 /** The fields at fault out of a failed parse, one entry each, by their path: `feed.0.species`. */
 export function issuesOf(error: z.ZodError): FieldIssue[] {
   return error.issues.flatMap((issue) => {
@@ -9,7 +18,7 @@ export function issuesOf(error: z.ZodError): FieldIssue[] {
     if (issue.code !== 'unrecognized_keys') return [{ field: path.join('.'), message: issue.message }]
     return issue.keys.map((key) => ({
       field: [...path, key].join('.'),
-      message: 'There is no such field here. Take it out, or look for its name in the description of the interface.',
+      message: issue.message.startsWith(NO_SUCH_FIELD) ? issue.message : NO_SUCH_FIELD,
     }))
   })
 }

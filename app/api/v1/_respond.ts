@@ -4,7 +4,7 @@ import { actorFromRequest } from '@/lib/access/actor'
 import { onceForKey } from '@/lib/access/idempotency'
 import { logSecurityEvent } from '@/lib/auth/security-log'
 import { AnalysisError } from '@/lib/analysis/analysis-error'
-import { issuesOf } from '@/lib/domain/action-answer'
+import { issuesOf, nameAllowedFields } from '@/lib/domain/action-answer'
 import { AppError, appErrorOf, type AppErrorCode, type FieldIssue } from '@/lib/domain/errors'
 import { type Actor } from '@/lib/domain/role'
 
@@ -198,8 +198,19 @@ export function versionFromIfMatch(request: Request, id: string): number {
   return Number(match[2])
 }
 
-/** The body as text, read no further than the limit, whatever length was announced. */
-async function readText(request: Request): Promise<string> {
+const texts = new WeakMap<Request, Promise<string>>()
+
+/** The body as text. It streams by once; who asks again, as for the key of a request and then for its fields, gets what was read. */
+function readText(request: Request): Promise<string> {
+  const known = texts.get(request)
+  if (known !== undefined) return known
+  const text = readToLimit(request)
+  texts.set(request, text)
+  return text
+}
+
+/** Reads no further than the limit, whatever length was announced. */
+async function readToLimit(request: Request): Promise<string> {
   const chunks: Uint8Array[] = []
   let byteCount = 0
   const reader = request.body?.getReader()
@@ -229,7 +240,7 @@ export async function readJson<T extends z.ZodType>(request: Request, schema: T)
   } catch (cause) {
     throw new AppError('invalid', 'The body is not JSON. Check quotes, commas and the encoding (UTF-8).', {}, { cause })
   }
-  return schema.parse(body)
+  return schema.parse(body, { error: nameAllowedFields })
 }
 
 /** The query of a request, checked against its schema; a parameter given twice is refused rather than guessed. */
@@ -241,12 +252,12 @@ export function readQuery<T extends z.ZodType>(request: Request, schema: T): z.o
     if (more.length > 0) throw new AppError('invalid', `The parameter ${name} is given more than once.`)
     Object.defineProperty(values, name, { value: first ?? '', enumerable: true })
   }
-  return schema.parse(values)
+  return schema.parse(values, { error: nameAllowedFields })
 }
 
 /** A POST with an Idempotency-Key and a JSON body is run once; its answer is kept for a day. */
 async function runOnce(request: Request, actor: Actor, key: string, work: () => Promise<Response>): Promise<Response> {
-  const body = await readText(request.clone())
+  const body = await readText(request)
   const { pathname, search } = new URL(request.url)
   let made: Response | null = null
   const stored = await onceForKey(

@@ -1,6 +1,6 @@
 import { afterAll, beforeAll, describe, expect, test, vi } from 'vitest'
 import { z } from 'zod'
-import { answer, handle, handlePublic, readJson, versionFromIfMatch } from '@/app/api/v1/_respond'
+import { answer, handle, handlePublic, readJson, readQuery, versionFromIfMatch } from '@/app/api/v1/_respond'
 import { type OpenDatabase } from '@/db/client'
 import { createToken } from '@/lib/access/tokens'
 import { AnalysisError } from '@/lib/analysis/analysis-error'
@@ -48,10 +48,11 @@ describe('a body', () => {
       async (request) => readJson(request, schema),
     )
 
-  test('that never ends is read to the limit and no further', async () => {
+  /** A body without Content-Length that goes on for as long as somebody reads. */
+  const endless = () => {
     let sent = 0
     let isCancelled = false
-    const endless = new ReadableStream<Uint8Array>({
+    const stream = new ReadableStream<Uint8Array>({
       pull(controller) {
         sent += 65_536
         controller.enqueue(new Uint8Array(65_536).fill(0x20))
@@ -60,19 +61,54 @@ describe('a body', () => {
         isCancelled = true
       },
     })
-    const answer = await read(endless)
+    return { stream, seen: () => ({ isCancelled, isShort: sent < 1_300_000 }) }
+  }
+
+  test('that never ends is read to the limit and no further', async () => {
+    const { stream, seen } = endless()
+    const answer = await read(stream)
     expect(answer.status).toBe(413)
     expect(await answer.json()).toMatchObject({ code: 'too-large' })
-    expect(isCancelled).toBe(true)
-    expect(sent).toBeLessThan(1_300_000)
+    expect(seen()).toEqual({ isCancelled: true, isShort: true })
+  })
+
+  test('nor is it under a key', async () => {
+    const { stream, seen } = endless()
+    const request = new Request('http://localhost:3000/api/v1/things', {
+      method: 'POST',
+      headers: {
+        'Content-Type': 'application/json',
+        Authorization: `Bearer ${secret}`,
+        'Idempotency-Key': 'a-key-without-end',
+      },
+      body: stream,
+      ...{ duplex: 'half' },
+    })
+    const answer = await handle(request, async () => readJson(request, schema))
+    expect(answer.status).toBe(413)
+    expect(seen()).toEqual({ isCancelled: true, isShort: true })
   })
 
   test('with fields that do not exist is refused with each of them by name', async () => {
     const answer = await read(JSON.stringify({ code: 'a', colour: 1, feed: [{ species: 'CO2', purity: 2 }] }))
     expect(answer.status).toBe(400)
     const { issues } = (await answer.json()) as { issues: { field: string; message: string }[] }
-    expect(issues.map(({ field }) => field).sort()).toEqual(['colour', 'feed.0.purity'])
-    expect(issues[0]?.message).toMatch(/^There is no such field here\./)
+    expect(issues.sort((a, b) => (a.field < b.field ? -1 : 1))).toEqual([
+      { field: 'colour', message: 'There is no such field here. Allowed: code, feed.' },
+      { field: 'feed.0.purity', message: 'There is no such field here. Allowed: species.' },
+    ])
+  })
+
+  test('so are parameters of an address', async () => {
+    const query = z.strictObject({ limit: z.string().optional(), cursor: z.string().optional() })
+    const answer = await handlePublic(
+      new Request('http://localhost:3000/api/v1/things?sort=code&limit=2'),
+      async (request) => readQuery(request, query),
+    )
+    expect(answer.status).toBe(400)
+    expect(await answer.json()).toMatchObject({
+      issues: [{ field: 'sort', message: 'There is no such field here. Allowed: limit, cursor.' }],
+    })
   })
 })
 

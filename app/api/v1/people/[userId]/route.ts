@@ -1,4 +1,5 @@
 import { changePerson, getPerson } from '@/lib/access/users'
+import { pathIds } from '../../_path-id'
 import { personChangeRequest } from '../../_requests'
 import { answer, handle, readJson, versionFromIfMatch } from '../../_respond'
 
@@ -8,7 +9,7 @@ interface Context {
 
 export async function GET(request: Request, context: Context): Promise<Response> {
   return handle(request, async (actor) => {
-    const person = await getPerson(actor, (await context.params).userId)
+    const person = await getPerson(actor, (await pathIds(context)).userId)
     return answer(person, { record: person })
   })
 }
@@ -16,7 +17,7 @@ export async function GET(request: Request, context: Context): Promise<Response>
 /** Changes the house role, or closes and opens the account. */
 export async function PATCH(request: Request, context: Context): Promise<Response> {
   return handle(request, async (actor) => {
-    const { userId } = await context.params
+    const { userId } = await pathIds(context)
     const version = versionFromIfMatch(request, userId)
     await changePerson(actor, userId, { ...(await readJson(request, personChangeRequest)), version })
     const person = await getPerson(actor, userId)

@@ -1,15 +1,13 @@
 import { getMethodSettings, getRanking } from '@/lib/access/results'
 import { rankingWorkbook } from '@/lib/exports/ranking-workbook'
+import { pathIds } from '../../../_path-id'
 import { downloadHeaders, rankingOptionsOf } from '../../../_ranking-request'
 import { handle } from '../../../_respond'
 
 /** The ranking as a workbook with typed cells. */
-export async function GET(
-  request: Request,
-  { params }: { params: Promise<{ campaignId: string }> },
-): Promise<Response> {
+export async function GET(request: Request, context: { params: Promise<{ campaignId: string }> }): Promise<Response> {
   return handle(request, async (actor) => {
-    const ranking = await getRanking(actor, (await params).campaignId, rankingOptionsOf(request))
+    const ranking = await getRanking(actor, (await pathIds(context)).campaignId, rankingOptionsOf(request))
     const settings = await getMethodSettings(actor, ranking.campaignId, ranking.methodNumber)
     const workbook = await rankingWorkbook(ranking, settings)
     return new Response(new Uint8Array(workbook), {

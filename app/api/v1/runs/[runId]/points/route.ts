@@ -1,10 +1,11 @@
 import { getRunResult } from '@/lib/access/results'
+import { pathIds } from '../../../_path-id'
 import { handle } from '../../../_respond'
 
 /** The points of a run with its line: what a script reads after adding files. */
-export async function GET(request: Request, { params }: { params: Promise<{ runId: string }> }): Promise<Response> {
+export async function GET(request: Request, context: { params: Promise<{ runId: string }> }): Promise<Response> {
   return handle(request, async (actor) => {
-    const { run, reduction, notReadyReason } = await getRunResult(actor, (await params).runId)
+    const { run, reduction, notReadyReason } = await getRunResult(actor, (await pathIds(context)).runId)
     return {
       runId: run.id,
       runCode: run.code,
