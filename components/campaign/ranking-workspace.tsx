@@ -202,7 +202,7 @@ export function RankingWorkspace(props: RankingWorkspaceProps) {
             <h2 className="m-0 flex items-baseline gap-2.5">
               Slopes{' '}
               <span className="text-[13px] font-normal text-ink-3">
-                {series.length} of {drawableCount} selected
+                {new Set(series.map((entry) => entry.code)).size} of {drawableCount} selected
               </span>
               <Link
                 href={`/campaigns/${campaignId}/slopes` as Route}

@@ -10,7 +10,7 @@ import { rankingGridRows } from '@/components/grids/ranking-grid-row'
 import { FitTable } from '@/components/run/fit-table'
 import { rankingQuery } from '@/components/server-state/ranking'
 import { WorkingPanel } from '@/components/working/working-panel'
-import { arrheniusSeries, type PlottedQuantity } from './arrhenius-series'
+import { arrheniusSeries, namedFits, type PlottedQuantity } from './arrhenius-series'
 import { Comparison } from './comparison'
 import { SlopePairs } from './slope-pairs'
 import { useRankingView } from './use-ranking-view'
@@ -41,10 +41,7 @@ export function SlopesWorkspace({ campaignId }: { campaignId: string }) {
   )
   const series = useMemo(() => arrheniusSeries(rows, shownIds, quantity), [rows, shownIds, quantity])
   const fits = useMemo(
-    () =>
-      rows.flatMap(({ row }) =>
-        row.fit && shownIds.includes(row.sampleId) ? [{ name: row.sampleCode, fit: row.fit }] : [],
-      ),
+    () => rows.flatMap(({ row }) => (shownIds.includes(row.sampleId) ? namedFits(row) : [])),
     [rows, shownIds],
   )
   const ranked = useMemo(() => rows.map((entry) => entry.row), [rows])

@@ -9,13 +9,36 @@ import { chartSymbol, type SampleSymbol } from './sample-symbols'
 import { temperColour, type TemperWindow } from './temper-scale'
 import { type ThemeColours } from './theme-colours'
 
-/** One sample's line as drawn. */
+/** A sample's number at the reference temperature as it is ranked, where its runs are drawn one by one. */
+export interface RankedValue {
+  readonly temperatureK: number
+  /** in the unit of the plot */
+  readonly ln: number
+  /** with the errors that all points share and the spread between packed beds; null where none is known */
+  readonly interval: readonly [number, number] | null
+}
+
+/** One line as drawn: of a sample, or of one run of a sample that has several. */
 export interface ArrheniusSeries {
   readonly code: string
   readonly symbol: SampleSymbol
   readonly fit: ArrheniusFit
   /** added to ln rate: the step from a rate per gram to one per site, or from SI to the practical unit */
   readonly shift: number
+  /** set where the sample is drawn run by run */
+  readonly run?: { readonly code: string; readonly place: number }
+  /** with the first run of a sample */
+  readonly ranked?: RankedValue
+}
+
+/** Name of a line, its own among all that are drawn. */
+export const lineName = (entry: ArrheniusSeries) => (entry.run ? `${entry.code} ${entry.run.code}` : entry.code)
+
+/** Runs of a sample have its shape; their lines differ in the stroke, and each has its label. */
+const STROKES = ['solid', [7, 3], [2, 3], [9, 3, 2, 3]] as const
+const strokeOf = (entry: ArrheniusSeries) => {
+  const stroke = STROKES[(entry.run?.place ?? 0) % STROKES.length] ?? 'solid'
+  return typeof stroke === 'string' ? stroke : [...stroke]
 }
 
 export interface ArrheniusOptionInput {
@@ -91,8 +114,8 @@ function scatter(
 ): ScatterSeriesOption {
   return {
     type: 'scatter',
-    id: `${options.id}-${entry.code}`,
-    name: entry.code,
+    id: `${options.id}-${lineName(entry)}`,
+    name: lineName(entry),
     xAxisIndex: options.axis,
     yAxisIndex: options.axis === 0 ? 0 : 1,
     symbol: chartSymbol(entry.symbol),
@@ -110,8 +133,8 @@ function errorBars(
 ): CustomSeriesOption {
   return {
     type: 'custom',
-    id: `${options.id}-${entry.code}`,
-    name: entry.code,
+    id: `${options.id}-${lineName(entry)}`,
+    name: lineName(entry),
     xAxisIndex: options.axis,
     yAxisIndex: options.axis === 0 ? 0 : 1,
     silent: true,
@@ -151,8 +174,8 @@ function band(entry: ArrheniusSeries, input: ArrheniusOptionInput): CustomSeries
   const outline = [...upper, ...lower]
   return {
     type: 'custom',
-    id: `band-${entry.code}`,
-    name: entry.code,
+    id: `band-${lineName(entry)}`,
+    name: lineName(entry),
     silent: true,
     clip: true,
     data: [outline[0] ?? [0, 0]],
@@ -175,15 +198,20 @@ function line(entry: ArrheniusSeries, input: ArrheniusOptionInput): LineSeriesOp
   const ends = [xs[0] ?? 0, xs[xs.length - 1] ?? 0]
   return {
     type: 'line',
-    id: `line-${entry.code}`,
-    name: entry.code,
+    id: `line-${lineName(entry)}`,
+    name: lineName(entry),
     silent: true,
     symbol: 'none',
-    lineStyle: { color: input.colours.ink2, width: 1.1 },
+    lineStyle: { color: input.colours.ink2, width: 1.1, type: strokeOf(entry) },
     data: ends.map((x) => [x, lineAt(entry.fit, 1_000 / x).lnRate + entry.shift]),
     endLabel: {
       show: true,
-      formatter: entry.code,
+      // the sample over its run: beside the plot there is no room for both on one line
+      formatter: entry.run ? `{sample|${entry.code}}\n{run|${entry.run.code}}` : entry.code,
+      rich: {
+        sample: { fontWeight: 600, fontSize: 12, lineHeight: 13, color: input.colours.ink },
+        run: { fontWeight: 400, fontSize: 11, lineHeight: 12, color: input.colours.ink2 },
+      },
       color: input.colours.ink,
       fontWeight: 600,
       fontFamily: input.colours.fontFamily,
@@ -195,9 +223,66 @@ function line(entry: ArrheniusSeries, input: ArrheniusOptionInput): LineSeriesOp
   }
 }
 
+/** The value a sample of several runs is ranked by: its shape, empty, on the reference temperature, with the whole interval. */
+function rankedMark(entry: ArrheniusSeries, input: ArrheniusOptionInput): (ScatterSeriesOption | CustomSeriesOption)[] {
+  const { ranked, code } = entry
+  if (ranked === undefined) return []
+  const x = abscissa(ranked.temperatureK)
+  const { interval } = ranked
+  const mark = [
+    {
+      value: [x, ranked.ln],
+      lines: [
+        `${code} as ranked, all its runs`,
+        `${formatFixed(practicalUnits.temperature.fromSi(ranked.temperatureK), 1)} °C`,
+        `ln ${formatFixed(ranked.ln, 4)}${interval === null ? '' : `, ${formatFixed(interval[0], 4)} to ${formatFixed(interval[1], 4)}`}`,
+      ],
+      itemStyle: { color: 'transparent', borderColor: input.colours.accent, borderWidth: 1.8, opacity: 1 },
+    },
+  ]
+  return [
+    ...(interval === null
+      ? []
+      : [
+          {
+            type: 'custom' as const,
+            id: `ranked-bar-${code}`,
+            name: code,
+            silent: true,
+            clip: true,
+            data: [[x, interval[0], interval[1]]],
+            renderItem: ((_, api) => {
+              const [px = 0, low = 0] = api.coord([api.value(0), api.value(1)])
+              const [, high = 0] = api.coord([api.value(0), api.value(2)])
+              const stroke = { stroke: input.colours.accent, lineWidth: 1.6 }
+              return {
+                type: 'group',
+                children: [
+                  { type: 'line', shape: { x1: px, y1: low, x2: px, y2: high }, style: stroke },
+                  { type: 'line', shape: { x1: px - 5, y1: low, x2: px + 5, y2: low }, style: stroke },
+                  { type: 'line', shape: { x1: px - 5, y1: high, x2: px + 5, y2: high }, style: stroke },
+                ],
+              }
+            }) satisfies CustomSeriesOption['renderItem'],
+            z: 6,
+          },
+        ]),
+    {
+      type: 'scatter',
+      id: `ranked-${code}`,
+      name: code,
+      symbol: chartSymbol(entry.symbol),
+      symbolSize: input.isCompact ? 13 : 15,
+      data: mark,
+      z: 7,
+    },
+  ]
+}
+
 /**
  * The Arrhenius plot as a chart option: ln of the quantity against 1000 K/T, temperature in °C on top, residuals in a strip below.
  * Points are coloured by temperature and shaped by sample, hollow when not in the line; bars are one standard uncertainty; bands are pointwise.
+ * A sample of several runs has a line a run, and an empty mark where it is ranked.
  */
 export function buildArrheniusOption(input: ArrheniusOptionInput): ChartOption {
   const { colours, series } = input
@@ -215,7 +300,10 @@ export function buildArrheniusOption(input: ArrheniusOptionInput): ChartOption {
     0.012,
   )
   const y = boundsOf(
-    all.flatMap((point) => [point.y - point.u, point.y + point.u]),
+    [
+      ...all.flatMap((point) => [point.y - point.u, point.y + point.u]),
+      ...series.flatMap(({ ranked }) => (ranked ? (ranked.interval ?? [ranked.ln]) : [])),
+    ],
     0.06,
     0.1,
   )
@@ -343,6 +431,7 @@ export function buildArrheniusOption(input: ArrheniusOptionInput): ChartOption {
           scatter(entry, input, { y: height, size: input.isCompact ? 9 : 11, axis: 0, id: 'point' }),
           errorBars(entry, input, { y: residual, axis: 1, id: 'residual-bar' }),
           scatter(entry, input, { y: residual, size: input.isCompact ? 6 : 8, axis: 1, id: 'residual' }),
+          ...rankedMark(entry, input),
         ]
       }),
       {

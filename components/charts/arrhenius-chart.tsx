@@ -39,7 +39,7 @@ export function ArrheniusChart({
   const table = useMemo(() => arrheniusTable(series, titles[quantity]), [series, quantity])
   return (
     <ChartFrame
-      label={`Arrhenius plot of ${series.map((entry) => entry.code).join(', ') || 'no sample'}`}
+      label={`Arrhenius plot of ${[...new Set(series.map((entry) => entry.code))].join(', ') || 'no sample'}`}
       summary={arrheniusSummary(series)}
       table={table}
       option={option}

@@ -1,5 +1,6 @@
 import Link from 'next/link'
 import { showOrNotFound } from '@/app/_show-or-not-found'
+import { SampleLines } from '@/components/campaign/sample-lines'
 import { AddToCampaignForm } from '@/components/forms/add-to-campaign-form'
 import { LotForm } from '@/components/forms/lot-form'
 import { SampleForm } from '@/components/forms/sample-form'
@@ -37,6 +38,7 @@ export default async function SamplePage({ params }: { params: Promise<{ sampleI
     listCampaignsOfSample(actor, sampleId),
   ])
   const mine = campaigns.filter(({ id }) => campaignIds.includes(id))
+  const read = mine.filter(({ id }) => can.readCampaign(actor, id)).map(({ id, name }) => ({ id, name }))
   const others = campaigns.filter(
     ({ id, closedAt }) => closedAt === null && !campaignIds.includes(id) && can.addSampleToCampaign(actor, id),
   )
@@ -146,6 +148,11 @@ export default async function SamplePage({ params }: { params: Promise<{ sampleI
             empty="No run on this sample yet."
           />
         </Section>
+        {read.length === 0 || runs.length === 0 ? null : (
+          <Section title="Arrhenius lines" note="one a run; the empty mark is the value the sample is ranked by">
+            <SampleLines sampleId={sample.id} campaigns={read} />
+          </Section>
+        )}
         {others.length > 0 ? (
           <Section title="Campaigns">
             <AddToCampaignForm campaigns={others} action={addToCampaignAction.bind(null, sample.id)} />

@@ -1,10 +1,11 @@
 import { describe, expect, it } from 'vitest'
-import { buildArrheniusOption, roundTicks } from '@/components/charts/arrhenius-chart-option'
+import { buildArrheniusOption, lineName, roundTicks } from '@/components/charts/arrhenius-chart-option'
 import { arrheniusSummary, arrheniusTable } from '@/components/charts/arrhenius-text'
 import { temperWindow } from '@/components/charts/temper-scale'
 import { lightColours } from '@/components/charts/theme-colours'
 import { arrheniusSeries } from '@/components/campaign/arrhenius-series'
 import { rankingGridRows } from '@/components/grids/ranking-grid-row'
+import { estimateOf, exampleFit } from '../../../support/example-fit'
 import { exampleRanking } from '../../../support/example-ranking'
 
 const ranking = exampleRanking()
@@ -58,6 +59,60 @@ describe('Arrhenius plot', () => {
     const atReference = row?.fit?.lnRateAtReference.value ?? NaN
     expect(atReference + (perSite[0]?.shift ?? NaN)).toBeCloseTo(Math.log(row?.turnoverFrequencyPerS?.value ?? NaN), 9)
     expect(arrheniusSeries(rows, ['sample-blank'], 'rate')).toEqual([])
+  })
+  it('draws a sample of several runs run by run, each with its own line and label, and marks where it is ranked', () => {
+    const [first, second] = [
+      exampleFit('R-0001', [500, 510, 520, 530], [-8, -7.6, -7.2, -6.9]),
+      exampleFit('R-0002', [500, 510, 520, 530], [-7.9, -7.45, -7.1, -6.7]),
+    ]
+    const severalRuns = rows.map((entry) =>
+      entry.row.sampleCode === 'CQ-104'
+        ? {
+            ...entry,
+            row: {
+              ...entry.row,
+              runFits: [first, second],
+              rateMolPerKgS: { ...(entry.row.rateMolPerKgS ?? estimateOf(1, 0)), value: 8e-4 },
+              rateInterval: [7e-4, 9e-4] as const,
+            },
+          }
+        : entry,
+    )
+    const lines = arrheniusSeries(severalRuns, ids, 'rate')
+    expect(lines.map(lineName)).toEqual(['CQ-104 R-0001', 'CQ-104 R-0002', 'CQ-103'])
+    const severalOption = buildArrheniusOption({
+      series: lines,
+      window: temperWindow(ranking.holdTemperaturesK),
+      colours: lightColours,
+      isCompact: true,
+      referenceTemperatureK: 523.15,
+    })
+    const parts = Array.isArray(severalOption.series) ? severalOption.series : []
+    const part = (id: string) => parts.find((entry) => entry.id === id)
+    for (const run of ['R-0001', 'R-0002'])
+      for (const kind of ['band', 'line', 'bar', 'point', 'residual'])
+        expect(part(`${kind}-CQ-104 ${run}`), `${kind} of ${run}`).toBeDefined()
+    expect(part('line-CQ-104')).toBeUndefined()
+    // one shape a sample, another stroke a run
+    expect(part('point-CQ-104 R-0001')).toHaveProperty(
+      'symbol',
+      (part('point-CQ-104 R-0002') as { symbol?: unknown }).symbol,
+    )
+    expect(part('line-CQ-104 R-0001')).toHaveProperty('lineStyle.type', 'solid')
+    expect(part('line-CQ-104 R-0002')).toHaveProperty('lineStyle.type', [7, 3])
+    expect(part('line-CQ-104 R-0002')).toHaveProperty('endLabel.formatter', '{sample|CQ-104}\n{run|R-0002}')
+    // 8e-4 mol/(kg s) are 0.8 µmol/(g s)
+    expect(part('ranked-CQ-104')).toHaveProperty('data.0.value', [1_000 / 523.15, expect.closeTo(Math.log(0.8), 12)])
+    expect(part('ranked-bar-CQ-104')).toHaveProperty('data.0', [
+      1_000 / 523.15,
+      expect.closeTo(Math.log(0.7), 12),
+      expect.closeTo(Math.log(0.9), 12),
+    ])
+    expect(arrheniusSummary(lines)).toContain('CQ-104 has a line for each run')
+    const { rows: cells } = arrheniusTable(lines, 'ln r')
+    expect(cells).toHaveLength(4 + 1 + 4 + 7)
+    expect(cells[4]?.slice(0, 2)).toEqual(['CQ-104', 'all, as ranked'])
+    expect(cells[4]?.[6]).toBe('−0.3567 to −0.1054')
   })
   it('draws an empty plot without failing', () => {
     const empty = buildArrheniusOption({
