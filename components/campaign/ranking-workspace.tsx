@@ -17,6 +17,8 @@ import { rankingKeys, rankingQuery, rankingQueryString } from '@/components/serv
 import { savePreference } from '@/components/server-state/save-preference'
 import { useMediaQuery } from '@/components/ui/use-media-query'
 import { WorkingPanel } from '@/components/working/working-panel'
+import { Button } from '@/components/ui/button'
+import { Notice } from '@/components/ui/notice'
 import { arrheniusSeries } from './arrhenius-series'
 import { CellConflict } from './cell-conflict'
 import { RANKING_COLUMNS_PREFERENCE } from './ranking-columns-preference'
@@ -44,7 +46,7 @@ function basisWords(ranking: Ranking): string {
 export function RankingWorkspace(props: RankingWorkspaceProps) {
   const { campaignId } = props
   const [view, setView] = useRankingView()
-  const { data: ranking, error, isFetching } = useQuery(rankingQuery(campaignId, view))
+  const { data: ranking, error, isFetching, refetch } = useQuery(rankingQuery(campaignId, view))
   const [chosen, setChosen] = useState<readonly string[] | null>(null)
   const savedState = useMemo(() => savedGridState(props.savedState), [props.savedState])
   const [hasFilterRow, setHasFilterRow] = useState(false)
@@ -78,10 +80,30 @@ export function RankingWorkspace(props: RankingWorkspaceProps) {
     // back to the cell it was opened from
     if (openedFrom.current instanceof HTMLElement) openedFrom.current.focus()
   }
+  if (!ranking && error) {
+    const isOwnView = view.referenceTemperatureK === null && view.includeProvisional
+    return (
+      <div className="max-w-prose px-4 py-6 sm:px-6">
+        <Notice kind="fault" isLive title="The ranking could not be fetched.">
+          {error.message}
+        </Notice>
+        <p className="mt-3 mb-0 flex flex-wrap gap-2">
+          <Button onClick={() => void refetch()} disabled={isFetching}>
+            {isFetching ? 'Trying…' : 'Try again'}
+          </Button>
+          {isOwnView ? null : (
+            <Button onClick={() => setView({ referenceTemperatureK: null, includeProvisional: true })}>
+              Back to the campaign’s own view
+            </Button>
+          )}
+        </p>
+      </div>
+    )
+  }
   if (!ranking) {
     return (
-      <p className="px-4 py-6 sm:px-6" role={error ? 'alert' : 'status'}>
-        {error ? `The ranking could not be fetched: ${error.message}` : 'Computing the ranking…'}
+      <p className="px-4 py-6 sm:px-6" role="status">
+        Computing the ranking…
       </p>
     )
   }
@@ -102,7 +124,7 @@ export function RankingWorkspace(props: RankingWorkspaceProps) {
   const query = rankingQueryString(view)
   const drawableCount = rows.filter((entry) => entry.row.fit !== null).length
   return (
-    <div className="grid grid-cols-[minmax(0,1fr)] xl:grid-cols-[minmax(0,1fr)_388px]">
+    <div className="grid grid-cols-[minmax(0,1fr)] xl:grid-cols-[minmax(0,1fr)_364px]">
       <section aria-label="Ranking" className="min-w-0 border-line xl:border-r">
         <div className="flex flex-wrap items-center gap-x-4 gap-y-1 px-4 py-2 sm:px-6">
           <span>
@@ -172,6 +194,7 @@ export function RankingWorkspace(props: RankingWorkspaceProps) {
         ) : null}
         <div className={isFetching ? 'opacity-70' : ''}>
           <RankingGrid
+            key={isNarrow ? 'narrow' : 'wide'}
             ranking={ranking}
             permissions={props.permissions}
             window={window}

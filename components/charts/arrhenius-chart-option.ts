@@ -52,6 +52,11 @@ export interface ArrheniusOptionInput {
 }
 
 const BAND_STEPS = 40
+/** height of the whole picture, as its frame has it [px] */
+const HEIGHT_PX = { compact: 410, full: 560 } as const
+/** room above the plot, and under it beside the strip of residuals [px] */
+const TOP_PX = 26
+const FOOT_PX = 66
 /** room beyond the outermost points, in 1000/T */
 const OVERHANG = 0.008
 
@@ -193,9 +198,42 @@ function band(entry: ArrheniusSeries, input: ArrheniusOptionInput): CustomSeries
   }
 }
 
-function line(entry: ArrheniusSeries, input: ArrheniusOptionInput): LineSeriesOption {
-  const xs = lineAbscissas(entry.fit)
-  const ends = [xs[0] ?? 0, xs[xs.length - 1] ?? 0]
+/** Height that a label beside the plot takes [px]. */
+const LABEL_ROOM = 14
+
+/**
+ * How far each label is moved down from the end of its line so that none lies on another [px]: pushed down in the order of the ends, and back up
+ * where the last would leave the plot.
+ */
+export function labelShifts(
+  ends: readonly { readonly name: string; readonly y: number }[],
+  bounds: Bounds,
+  heightPx: number,
+): Map<string, number> {
+  const placed = ends
+    .map(({ name, y }) => ({ name, at: ((bounds.high - y) / (bounds.high - bounds.low)) * heightPx }))
+    .sort((a, b) => a.at - b.at)
+    .map((end) => ({ ...end, to: end.at }))
+  placed.forEach((end, index) => {
+    const above = placed[index - 1]
+    if (above) end.to = Math.max(end.to, above.to + LABEL_ROOM)
+  })
+  let floor = heightPx
+  for (const end of [...placed].reverse()) {
+    end.to = Math.min(end.to, floor)
+    floor = end.to - LABEL_ROOM
+  }
+  return new Map(placed.map(({ name, at, to }) => [name, to - at]))
+}
+
+const lineEnds = (fit: ArrheniusFit): readonly [number, number] => {
+  const xs = lineAbscissas(fit)
+  return [xs[0] ?? 0, xs[xs.length - 1] ?? 0]
+}
+const heightAt = (entry: ArrheniusSeries, x: number) => lineAt(entry.fit, 1_000 / x).lnRate + entry.shift
+
+function line(entry: ArrheniusSeries, input: ArrheniusOptionInput, labelShift: number): LineSeriesOption {
+  const ends = lineEnds(entry.fit)
   return {
     type: 'line',
     id: `line-${lineName(entry)}`,
@@ -203,22 +241,18 @@ function line(entry: ArrheniusSeries, input: ArrheniusOptionInput): LineSeriesOp
     silent: true,
     symbol: 'none',
     lineStyle: { color: input.colours.ink2, width: 1.1, type: strokeOf(entry) },
-    data: ends.map((x) => [x, lineAt(entry.fit, 1_000 / x).lnRate + entry.shift]),
+    data: ends.map((x) => [x, heightAt(entry, x)]),
     endLabel: {
       show: true,
-      // the sample over its run: beside the plot there is no room for both on one line
-      formatter: entry.run ? `{sample|${entry.code}}\n{run|${entry.run.code}}` : entry.code,
-      rich: {
-        sample: { fontWeight: 600, fontSize: 12, lineHeight: 13, color: input.colours.ink },
-        run: { fontWeight: 400, fontSize: 11, lineHeight: 12, color: input.colours.ink2 },
-      },
-      color: input.colours.ink,
-      fontWeight: 600,
+      // of a sample drawn run by run the code stands at its own mark, since both have no room beside the plot
+      formatter: entry.run?.code ?? entry.code,
+      color: entry.run ? input.colours.ink2 : input.colours.ink,
+      fontWeight: entry.run ? 400 : 600,
       fontFamily: input.colours.fontFamily,
       fontSize: 12,
       distance: 6,
+      offset: [0, labelShift],
     },
-    labelLayout: { moveOverlap: 'shiftY' },
     z: 3,
   }
 }
@@ -274,6 +308,19 @@ function rankedMark(entry: ArrheniusSeries, input: ArrheniusOptionInput): (Scatt
       symbol: chartSymbol(entry.symbol),
       symbolSize: input.isCompact ? 13 : 15,
       data: mark,
+      label: {
+        show: true,
+        formatter: code,
+        position: 'left',
+        distance: 5,
+        offset: [0, 9],
+        color: input.colours.ink,
+        fontWeight: 600,
+        fontFamily: input.colours.fontFamily,
+        fontSize: 12,
+        textBorderColor: input.colours.paper,
+        textBorderWidth: 3,
+      },
       z: 7,
     },
   ]
@@ -311,7 +358,6 @@ export function buildArrheniusOption(input: ArrheniusOptionInput): ChartOption {
   const residualLabel = roundTicks(0, residualRoom, 2).at(-1) ?? residualRoom
   const residualDecimals = Math.max(2, -Math.floor(Math.log10(residualLabel)))
   const celsius = roundTicks(1_000 / x.high - 273.15, 1_000 / x.low - 273.15, input.isCompact ? 8 : 14)
-  const hottest = celsius[celsius.length - 1]
   const celsiusTicks = celsius.map((value) => abscissa(value + 273.15))
   const axisText = { color: colours.ink2, fontFamily: colours.fontFamily, fontSize: 12 }
   const rule = { show: true, lineStyle: { color: colours.lineStrong } }
@@ -322,6 +368,11 @@ export function buildArrheniusOption(input: ArrheniusOptionInput): ChartOption {
   const left = 52
   const right = 62
   const strip = input.isCompact ? 46 : 74
+  const shifts = labelShifts(
+    series.map((entry) => ({ name: lineName(entry), y: heightAt(entry, lineEnds(entry.fit)[1]) })),
+    y,
+    (input.isCompact ? HEIGHT_PX.compact : HEIGHT_PX.full) - TOP_PX - strip - FOOT_PX,
+  )
   const xTicks = roundTicks(x.low, x.high, input.isCompact ? 6 : 12)
   const xDecimals = (xTicks[1] ?? 1) - (xTicks[0] ?? 0) < 0.0099 ? 3 : 2
   const reference =
@@ -334,7 +385,7 @@ export function buildArrheniusOption(input: ArrheniusOptionInput): ChartOption {
     animation: false,
     textStyle: { fontFamily: colours.fontFamily },
     grid: [
-      { left, right, top: 26, bottom: strip + 66, containLabel: false },
+      { left, right, top: TOP_PX, bottom: strip + FOOT_PX, containLabel: false },
       { left, right, height: strip, bottom: 14, containLabel: false },
     ],
     tooltip: { trigger: 'item' },
@@ -381,11 +432,12 @@ export function buildArrheniusOption(input: ArrheniusOptionInput): ChartOption {
           ...axisText,
           customValues: celsiusTicks,
           hideOverlap: true,
-          formatter: (value: number) => {
-            const degrees = Math.round(1_000 / value - 273.15)
-            return hottest !== undefined && degrees === Math.round(hottest) ? `${degrees} °C` : String(degrees)
-          },
+          formatter: (value: number) => String(Math.round(1_000 / value - 273.15)),
         },
+        name: '°C',
+        nameLocation: 'end',
+        nameGap: 8,
+        nameTextStyle: { ...axisText, align: 'left', verticalAlign: 'bottom', padding: [0, 0, 8, 0] },
       },
     ],
     yAxis: [
@@ -426,7 +478,7 @@ export function buildArrheniusOption(input: ArrheniusOptionInput): ChartOption {
         const residual = (point: FitPoint) => point.residual
         return [
           ...(wash ? [wash] : []),
-          line(entry, input),
+          line(entry, input, shifts.get(lineName(entry)) ?? 0),
           errorBars(entry, input, { y: height, axis: 0, id: 'bar' }),
           scatter(entry, input, { y: height, size: input.isCompact ? 9 : 11, axis: 0, id: 'point' }),
           errorBars(entry, input, { y: residual, axis: 1, id: 'residual-bar' }),

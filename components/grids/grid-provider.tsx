@@ -69,7 +69,7 @@ export const gridTheme = themeQuartz.withParams({
   wrapperBorder: false,
   wrapperBorderRadius: 0,
   borderRadius: 3,
-  cellHorizontalPadding: 7,
+  cellHorizontalPadding: 6,
   oddRowBackgroundColor: 'var(--paper)',
   rowHoverColor: 'color-mix(in srgb, var(--accent-wash) 45%, transparent)',
   selectedRowBackgroundColor: 'var(--accent-wash)',

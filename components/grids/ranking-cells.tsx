@@ -91,11 +91,11 @@ export function SampleCell({ data }: CellProps) {
   const { row } = data
   return (
     <span className="block min-w-0 py-1 text-left leading-[19px]">
-      <span className="flex items-center gap-1.5">
+      <span className="flex flex-wrap items-center gap-x-1.5">
         {row.kind === 'catalyst' ? <SampleSymbolMark symbol={data.symbol} /> : null}
         <span className="font-semibold">{row.sampleCode}</span>
         {row.isProvisional ? (
-          <span className="rounded-[3px] bg-well px-1.5 text-[12.5px] text-ink-2">provisional</span>
+          <span className="rounded-[3px] bg-well px-1 text-[12.5px] text-ink-2">provisional</span>
         ) : null}
       </span>
       <span className="block text-[12.5px] leading-[16px] whitespace-normal text-ink-3">{row.sampleName}</span>
@@ -213,25 +213,34 @@ interface HeaderParameters extends CustomInnerHeaderProps<RankingGridRow> {
   readonly scale?: IntervalScale | null
 }
 
+/** Room that a tick's number takes [px]. */
+const TICK_ROOM = 24
+
 /** Name over unit, or over the ticks of the column's scale. */
 export function ColumnHeader({ displayName, unit = '', scale = null }: HeaderParameters) {
+  const [first, second] = scale?.ticks ?? []
+  const gap = scale && first !== undefined && second !== undefined ? scale.toX(second) - scale.toX(first) : Infinity
+  // every line of the scale is drawn in the cells; of the numbers only as many as have room
+  const every = Math.max(1, Math.ceil(TICK_ROOM / gap))
   return (
     <span className="block min-w-0 leading-[1.25]">
       <span className="block">{displayName}</span>
       {scale ? (
         <svg width={scale.width} height="13" aria-hidden="true" className="block">
-          {scale.ticks.map((tick, index) => (
-            <text
-              key={tick}
-              x={Math.max(8, Math.min(scale.width - 8, scale.toX(tick)))}
-              y="10"
-              textAnchor={index === 0 ? 'start' : index === scale.ticks.length - 1 ? 'end' : 'middle'}
-              fontSize="11"
-              fill="var(--ink-3)"
-            >
-              {Number(tick.toPrecision(4))}
-            </text>
-          ))}
+          {scale.ticks
+            .filter((_, index) => index % every === 0)
+            .map((tick) => (
+              <text
+                key={tick}
+                x={Math.max(8, Math.min(scale.width - 10, scale.toX(tick)))}
+                y="10"
+                textAnchor="middle"
+                fontSize="11"
+                fill="var(--ink-3)"
+              >
+                {Number(tick.toPrecision(4))}
+              </text>
+            ))}
         </svg>
       ) : null}
       {unit === '' ? null : <span className="block font-normal text-ink-3">{unit}</span>}

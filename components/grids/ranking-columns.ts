@@ -93,7 +93,7 @@ function quantity(
     ...header(unit.label),
     colId,
     headerName,
-    width: 88,
+    width: 84,
     valueGetter: (parameters) => {
       const row = rowOf(parameters)
       const estimate = row ? read(row).estimate : null
@@ -165,8 +165,9 @@ function rankColumns(isNarrow: boolean): Column[] {
     {
       ...numeric,
       colId: 'rank',
+      ...header(''),
       headerName: 'Rank',
-      width: 56,
+      width: 62,
       pinned: isNarrow ? null : 'left',
       sort: 'asc',
       valueGetter: (parameters) => rowOf(parameters)?.rank ?? null,
@@ -179,8 +180,10 @@ function rankColumns(isNarrow: boolean): Column[] {
       ...numeric,
       type: [],
       colId: 'rankInterval',
-      headerName: '90 % of draws',
-      width: 84,
+      ...header('of draws'),
+      headerName: '90 %',
+      headerTooltip: 'Ranks in the middle nine of ten draws',
+      width: 88,
       pinned: isNarrow ? null : 'left',
       valueGetter: (parameters) => rowOf(parameters)?.rankInterval?.[0] ?? null,
       cellRenderer: RankIntervalCell,
@@ -188,7 +191,7 @@ function rankColumns(isNarrow: boolean): Column[] {
     {
       colId: 'sample',
       headerName: 'Sample',
-      width: isNarrow ? 140 : 146,
+      width: isNarrow ? 140 : 156,
       autoHeight: true,
       pinned: 'left',
       filter: 'agTextColumnFilter',
@@ -206,7 +209,7 @@ function rankColumns(isNarrow: boolean): Column[] {
 function rateGroups(ranking: Ranking): { first: Group; second: Group } {
   const celsius = formatFixed(ranking.referenceTemperatureK - 273.15, 1).replace('.0', '')
   const best = plain('probabilityBest', 'P(best)', '', 2, (row) => row.probabilityBest, {
-    width: 60,
+    width: 58,
     cellRenderer: (parameters: ICellRendererParams<RankingGridRow>) => {
       const probability = rowOf(parameters)?.probabilityBest ?? null
       return createElement(
@@ -218,7 +221,7 @@ function rateGroups(ranking: Ranking): { first: Group; second: Group } {
   })
   const turnover: Group = {
     groupId: 'turnover-frequency',
-    headerName: `turnover frequency at ${celsius} °C`,
+    headerName: `at ${celsius} °C`,
     headerClass: GROUP_CLASS,
     children: [
       quantity('turnoverFrequencyPerS', 'TOF', practicalUnits.turnoverFrequency, (row) => ({
@@ -230,7 +233,7 @@ function rateGroups(ranking: Ranking): { first: Group; second: Group } {
   }
   const rate: Group = {
     groupId: 'rate',
-    headerName: `rate at ${celsius} °C`,
+    headerName: `at ${celsius} °C`,
     headerClass: GROUP_CLASS,
     children: [
       quantity('rateMolPerKgS', 'Rate', practicalUnits.rate, (row) => ({
@@ -262,7 +265,7 @@ function slopeGroup(ranking: Ranking, scale: IntervalScale | null): Group {
         type: [],
         colId: 'activationEnergyInterval',
         headerName: `${percent} % interval`,
-        width: 96,
+        width: 92,
         filter: false,
         valueGetter: (parameters) => rowOf(parameters)?.activationEnergyInterval?.[0] ?? null,
         cellRenderer: IntervalCell,
@@ -275,7 +278,8 @@ function slopeGroup(ranking: Ranking, scale: IntervalScale | null): Group {
           estimate: row.lnPreExponential,
           interval: row.lnPreExponentialInterval,
         }),
-        { width: 94 },
+        // the unit of A itself: it stands under ln A
+        { width: 92, ...header('mol kg⁻¹ s⁻¹') },
       ),
     ],
   }
@@ -331,7 +335,7 @@ const carbonColumn = quantity(
   'Carbon',
   practicalUnits.carbonBalance,
   (row) => ({ estimate: row.carbonBalance, interval: row.carbonBalanceInterval }),
-  { width: 98 },
+  { width: 96 },
 )
 
 /** Doubts and decisions; and the cells that people write. */
@@ -341,7 +345,7 @@ function judgementColumns(permissions: RankingPermissions): { doubts: Column[]; 
     {
       colId: 'cautions',
       headerName: 'Cautions',
-      width: 136,
+      width: 126,
       filter: 'agTextColumnFilter',
       autoHeight: true,
       valueGetter: (parameters) =>
@@ -353,7 +357,7 @@ function judgementColumns(permissions: RankingPermissions): { doubts: Column[]; 
     {
       colId: 'decision',
       headerName: 'Decision',
-      width: 92,
+      width: 104,
       filter: 'agTextColumnFilter',
       autoHeight: true,
       valueGetter: (parameters) =>
@@ -404,6 +408,16 @@ function judgementColumns(permissions: RankingPermissions): { doubts: Column[]; 
   return { doubts, written }
 }
 
+/** Width and sort as a column starts with them: a newer ranking brings new columns and must not undo what the person set. */
+function startingWith(column: Column): Column {
+  const { width, sort, ...rest } = column
+  return {
+    ...rest,
+    ...(width === undefined ? {} : { initialWidth: width }),
+    ...(sort === undefined ? {} : { initialSort: sort }),
+  }
+}
+
 /** All columns of the ranking, units in the headers. */
 export function buildRankingColumns(
   ranking: Ranking,
@@ -413,7 +427,7 @@ export function buildRankingColumns(
 ): (Column | Group)[] {
   const rates = rateGroups(ranking)
   const judgement = judgementColumns(permissions)
-  return [
+  const columns: (Column | Group)[] = [
     ...rankColumns(isNarrow),
     rates.first,
     slopeGroup(ranking, scale),
@@ -422,6 +436,11 @@ export function buildRankingColumns(
     stateGroup(ranking),
     ...judgement.written,
   ]
+  return columns.map((column) =>
+    'children' in column
+      ? { ...column, children: column.children.map((child) => ('children' in child ? child : startingWith(child))) }
+      : startingWith(column),
+  )
 }
 
 /** Which working a column's number belongs to. */

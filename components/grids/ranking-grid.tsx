@@ -6,6 +6,7 @@ import {
   type CellKeyDownEvent,
   type ColDef,
   type FullWidthCellKeyDownEvent,
+  type GridApi,
   type GridState,
   type RowSelectionOptions,
   type SelectionChangedEvent,
@@ -16,6 +17,7 @@ import { useMemo, useRef, useState } from 'react'
 import { type TemperWindow } from '@/components/charts/temper-scale'
 import { type Ranking, type RankingRow } from '@/lib/domain/ranking'
 import { type Working } from '@/lib/analysis/working'
+import { BeyondView, farColumnsOf, noFarColumns } from './beyond-view'
 import { GridProvider, gridTheme } from './grid-provider'
 import { derivedWorking } from './derived-working'
 import { documentNonce } from './document-nonce'
@@ -71,11 +73,18 @@ function workingOf(ranking: Ranking | undefined, row: RankingRow | undefined, co
   return row.workings[key] ?? row.fit?.workings[key] ?? derivedWorking(ranking, row, colId)
 }
 
-function savable(state: GridState): GridState {
+/** Of what was left on a wide screen a narrow one takes sort and filter: its own columns are pinned and ordered for its width. */
+function startingState(saved: GridState | null, isNarrow: boolean): GridState {
+  if (!saved || !isNarrow) return saved ?? {}
+  return { ...(saved.sort ? { sort: saved.sort } : {}), ...(saved.filter ? { filter: saved.filter } : {}) }
+}
+
+/** Widths are kept once the person set one: kept unasked, they would hold a table to the widths of the day it was first sorted. */
+function savable(state: GridState, hasSetWidth: boolean): GridState {
   const { columnOrder, columnSizing, columnVisibility, columnPinning, sort, filter } = state
   return {
     ...(columnOrder ? { columnOrder } : {}),
-    ...(columnSizing ? { columnSizing } : {}),
+    ...(columnSizing && hasSetWidth ? { columnSizing } : {}),
     ...(columnVisibility ? { columnVisibility } : {}),
     ...(columnPinning ? { columnPinning } : {}),
     ...(sort ? { sort } : {}),
@@ -98,7 +107,7 @@ export function RankingGrid(props: RankingGridProps) {
           const value = row.activationEnergyJPerMol?.value
           return value === undefined ? null : [value / 1_000, value / 1_000]
         }),
-        82,
+        80,
       ),
     [ranking.rows],
   )
@@ -120,7 +129,7 @@ export function RankingGrid(props: RankingGridProps) {
   )
   // read once: afterwards the grid itself is the place where the state lives
   const [initialState] = useState<GridState>(() => ({
-    ...(props.savedState ?? {}),
+    ...startingState(props.savedState, props.isNarrow),
     rowSelection: [...props.selectedSampleIds],
     partialColumnState: true,
   }))
@@ -141,14 +150,25 @@ export function RankingGrid(props: RankingGridProps) {
     if (event.data && change) onChangeCell(event.data.row, change)
   }
   const onStateUpdated = (event: StateUpdatedEvent<RankingGridRow>) => {
+    if (props.isNarrow) return
     if (event.sources.every((source) => ['gridInitializing', 'rowSelection', 'focusedCell', 'scroll'].includes(source)))
       return
     if (saving.current) clearTimeout(saving.current)
-    saving.current = setTimeout(() => onStateChange(savable(event.state)), 800)
+    saving.current = setTimeout(() => onStateChange(savable(event.state, hasSetWidth.current)), 800)
+  }
+  const hasSetWidth = useRef(props.savedState?.columnSizing !== undefined)
+  const grid = useRef<GridApi<RankingGridRow> | null>(null)
+  const [far, setFar] = useState(noFarColumns)
+  const lookAround = (event: { readonly api: GridApi<RankingGridRow> }) => {
+    grid.current = event.api
+    const found = farColumnsOf(event.api)
+    // scrolling asks at every step; the words change only where a column comes in or goes out
+    setFar((before) => (JSON.stringify(before) === JSON.stringify(found) ? before : found))
   }
   const isWhole = rows.length <= ROWS_SHOWN_WHOLE
   return (
     <GridProvider>
+      <BeyondView far={far} onShow={(colId, side) => grid.current?.ensureColumnVisible(colId, side)} />
       <div className={isWhole ? 'ranking-grid w-full' : 'ranking-grid h-[70vh] w-full'}>
         <AgGridReact<RankingGridRow>
           theme={gridTheme}
@@ -175,6 +195,15 @@ export function RankingGrid(props: RankingGridProps) {
           onCellKeyDown={onCellKeyDown}
           onCellEditRequest={onCellEditRequest}
           onStateUpdated={onStateUpdated}
+          onGridReady={lookAround}
+          onFirstDataRendered={lookAround}
+          onGridSizeChanged={lookAround}
+          onBodyScroll={lookAround}
+          onColumnResized={(event) => {
+            if (event.source === 'uiColumnResized') hasSetWidth.current = true
+            lookAround(event)
+          }}
+          onDisplayedColumnsChanged={lookAround}
           onSelectionChanged={(event: SelectionChangedEvent<RankingGridRow>) =>
             onSelectionChange(event.api.getSelectedRows().map((entry) => entry.row.sampleId))
           }

@@ -7,6 +7,9 @@ const tones = {
 } as const
 const weights = { note: 'Note', caution: 'Caution', grave: 'Grave caution' } as const
 
+/** A number and its unit stay on one line. */
+const keepUnits = (words: string) => words.replace(/(\d) (?=[%°])/g, '$1\u00a0')
+
 /** A caution in its own short words; the full sentence is there for a pointer and for a screen reader. */
 export function CautionTag({ caution }: { caution: Caution }) {
   return (
@@ -15,7 +18,7 @@ export function CautionTag({ caution }: { caution: Caution }) {
       title={caution.sentence}
     >
       <span className="sr-only">{weights[caution.severity]}: </span>
-      {caution.tag}
+      {keepUnits(caution.tag)}
     </span>
   )
 }

@@ -34,7 +34,9 @@ export function symbolUncertainty(symbol: WorkingSymbol): string {
   const size = Math.abs(symbol.value)
   const relative = size > 0 ? u / size : Infinity
   const shared = KIND_WORDS[symbol.uncertaintyKind]
-  if (relative > 0.3 || relative < 1e-6) return `± ${estimateAsText(u, null)}${shared}`
+  // a scale with a zero of its own has no percent
+  if (symbol.unit === '°C' || relative > 0.3 || relative < 1e-6)
+    return `± ${estimateAsText(u, null, symbol.unit === '°C' ? 'K' : '')}${shared}`
   const percent = relative * 100
   return `± ${percent >= 0.095 ? percent.toFixed(1) : percent.toPrecision(1)} %${shared}`
 }

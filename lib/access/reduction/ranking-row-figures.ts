@@ -120,7 +120,7 @@ function temperatureFigure({ sampleCode, runs, loadingCount, settings }: FigureR
       ...(estimate === null
         ? []
         : [
-            `Spread between packed beds, ${percentText(settings.betweenLoadingRate)} of the rate a bed over ${loadingCount}, is in the uncertainty: at this contact time conversion goes with the rate, and the factor e in it is worth ${(Math.round(slope * 10) / 10).toFixed(1)} K.`,
+            `Spread between packed beds, ${percentText(settings.betweenLoadingRate)} of the rate a bed over ${loadingCount} bed${loadingCount === 1 ? '' : 's'}, is in the uncertainty: at this contact time conversion goes with the rate, and the factor e in it is worth ${(Math.round(slope * 10) / 10).toFixed(1)} K.`,
           ]),
       ...meanNote(inside.length),
     ],

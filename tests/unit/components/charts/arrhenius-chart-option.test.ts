@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { buildArrheniusOption, lineName, roundTicks } from '@/components/charts/arrhenius-chart-option'
+import { buildArrheniusOption, labelShifts, lineName, roundTicks } from '@/components/charts/arrhenius-chart-option'
 import { arrheniusSummary, arrheniusTable } from '@/components/charts/arrhenius-text'
 import { temperWindow } from '@/components/charts/temper-scale'
 import { lightColours } from '@/components/charts/theme-colours'
@@ -100,9 +100,10 @@ describe('Arrhenius plot', () => {
     )
     expect(part('line-CQ-104 R-0001')).toHaveProperty('lineStyle.type', 'solid')
     expect(part('line-CQ-104 R-0002')).toHaveProperty('lineStyle.type', [7, 3])
-    expect(part('line-CQ-104 R-0002')).toHaveProperty('endLabel.formatter', '{sample|CQ-104}\n{run|R-0002}')
+    expect(part('line-CQ-104 R-0002')).toHaveProperty('endLabel.formatter', 'R-0002')
     // 8e-4 mol/(kg s) are 0.8 µmol/(g s)
     expect(part('ranked-CQ-104')).toHaveProperty('data.0.value', [1_000 / 523.15, expect.closeTo(Math.log(0.8), 12)])
+    expect(part('ranked-CQ-104')).toHaveProperty('label.formatter', 'CQ-104')
     expect(part('ranked-bar-CQ-104')).toHaveProperty('data.0', [
       1_000 / 523.15,
       expect.closeTo(Math.log(0.7), 12),
@@ -123,6 +124,36 @@ describe('Arrhenius plot', () => {
       referenceTemperatureK: null,
     })
     expect(empty.series).toBeDefined()
+  })
+})
+
+describe('labels beside the plot', () => {
+  const bounds = { low: 0, high: 10 }
+  it('stay where the lines end when there is room, and are pushed apart where there is none', () => {
+    // 100 px for 10 units: ends at 20, 50 and 52 px; the last goes to 64
+    const ends = [
+      { name: 'b', y: 5 },
+      { name: 'a', y: 8 },
+      { name: 'c', y: 4.8 },
+    ]
+    expect([...labelShifts(ends, bounds, 100)]).toEqual([
+      ['a', 0],
+      ['b', 0],
+      ['c', 12],
+    ])
+  })
+  it('do not leave the plot at its foot', () => {
+    // ends at 98 and 99 px: the lower label stops at 100, the upper at 86
+    const shifts = labelShifts(
+      [
+        { name: 'a', y: 0.2 },
+        { name: 'b', y: 0.1 },
+      ],
+      bounds,
+      100,
+    )
+    expect(shifts.get('a')).toBeCloseTo(-12, 9)
+    expect(shifts.get('b')).toBeCloseTo(1, 9)
   })
 })
 
