@@ -234,13 +234,21 @@ export function RankingWorkspace(props: RankingWorkspaceProps) {
                 Open
               </Link>
             </h2>
-            <ArrheniusChart
-              series={series}
-              window={window}
-              quantity="rate"
-              isCompact
-              referenceTemperatureK={ranking.referenceTemperatureK}
-            />
+            {series.length === 0 ? (
+              <p className="text-ink-2">
+                {drawableCount === 0
+                  ? 'No sample has a line yet.'
+                  : 'No sample is selected. Tick one in the table and its line is drawn here.'}
+              </p>
+            ) : (
+              <ArrheniusChart
+                series={series}
+                window={window}
+                quantity="rate"
+                isCompact
+                referenceTemperatureK={ranking.referenceTemperatureK}
+              />
+            )}
           </>
         )}
         {ranking.summary === '' ? null : <p className="mt-3 mb-0 rounded bg-well px-3 py-2.5">{ranking.summary}</p>}

@@ -96,12 +96,20 @@ export function SlopesWorkspace({ campaignId }: { campaignId: string }) {
           ))}
         </fieldset>
         <div className="mt-2">
-          <ArrheniusChart
-            series={series}
-            window={window}
-            quantity={quantity}
-            referenceTemperatureK={ranking.referenceTemperatureK}
-          />
+          {series.length === 0 ? (
+            <p className="text-ink-2">
+              {quantity === 'turnover-frequency' && shownIds.length > 0
+                ? 'None of the selected samples has a site count, so there is no turnover frequency to draw.'
+                : 'No sample is selected. Tick one above and its line is drawn here.'}
+            </p>
+          ) : (
+            <ArrheniusChart
+              series={series}
+              window={window}
+              quantity={quantity}
+              referenceTemperatureK={ranking.referenceTemperatureK}
+            />
+          )}
         </div>
         <h2 className="mt-5 mb-0">Lines</h2>
         <FitTable caption="Arrhenius lines" fits={fits} onOpen={(fit, key) => setWorking(fit.workings[key] ?? null)} />

@@ -191,7 +191,7 @@ function rankColumns(isNarrow: boolean): Column[] {
     {
       colId: 'sample',
       headerName: 'Sample',
-      width: isNarrow ? 140 : 156,
+      width: isNarrow ? 140 : 152,
       autoHeight: true,
       pinned: 'left',
       filter: 'agTextColumnFilter',
@@ -345,7 +345,7 @@ function judgementColumns(permissions: RankingPermissions): { doubts: Column[]; 
     {
       colId: 'cautions',
       headerName: 'Cautions',
-      width: 126,
+      width: 132,
       filter: 'agTextColumnFilter',
       autoHeight: true,
       valueGetter: (parameters) =>
@@ -357,7 +357,7 @@ function judgementColumns(permissions: RankingPermissions): { doubts: Column[]; 
     {
       colId: 'decision',
       headerName: 'Decision',
-      width: 104,
+      width: 102,
       filter: 'agTextColumnFilter',
       autoHeight: true,
       valueGetter: (parameters) =>

@@ -12,8 +12,8 @@ export interface MeanOptions {
 /**
  * Plain mean of several estimates, whose scatter about each other counts where it is larger than their own uncertainties explain.
  *
- * m = sum v_i / n; u^2 = W + B with W = sum u_i^2 / n^2 (inside) and B = max(0, s^2 / n - W - e^2 / n) (between), s the standard deviation of the v_i
- * and e the spread that is accounted for elsewhere; nu = (W + B)^2 / (W^2 / nu_W + B^2 / (n - 1)). The effect of a shared source is the mean of its
+ * m = sum v_i / n; u^2 = W + B with W = sum u_i^2 / n^2 (inside) and B = max(0, (s^2 - e^2 - sum d_k^2) / n - W) (between), s the standard
+ * deviation of the v_i, d_k that of the effects of shared source k on them (none where all have it alike), e the spread that is accounted for elsewhere; nu = (W + B)^2 / (W^2 / nu_W + B^2 / (n - 1)). The effect of a shared source is the mean of its
  * effects: one that all have does not shrink, one of each alone does. Every number has the same weight; the between part is never below zero, so that
  * numbers which agree by luck are not made surer than they are one by one.
  * Source: R. DerSimonian, N. Laird, Control. Clin. Trials 7 (1986) 177, doi:10.1016/0197-2456(86)90046-2, in the unweighted form (moment estimate of
@@ -39,6 +39,13 @@ export function meanOfEstimates(estimates: readonly Estimate[], options: MeanOpt
   for (const u of own) inside += u * u
   let squares = 0
   for (const estimate of estimates) squares += (estimate.value - value) * (estimate.value - value)
+  // what sources that not all of them have explain of the scatter: it is in the shared part already
+  for (const id of Object.keys(sharedEffects).sort()) {
+    for (const estimate of estimates) {
+      const apart = (estimate.sharedEffects[id] ?? 0) - (sharedEffects[id] ?? 0)
+      squares -= apart * apart
+    }
+  }
   const spread = options.expectedSpread ?? 0
   const between = n < 2 ? 0 : Math.max(0, squares / (n - 1) / n - inside - (spread * spread) / n)
   const insideDegreesOfFreedom = options.hasPooledScatter

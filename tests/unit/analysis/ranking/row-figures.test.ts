@@ -128,6 +128,19 @@ describe('mean of several numbers', () => {
     )
     expect(found?.sharedEffects).toEqual({ flow: 0.02, 'mass:a': 0.002, 'mass:b': 0.002 })
   })
+  it('does not count twice what sources of one number alone explain of the scatter', () => {
+    const two = (effect: number) => [
+      estimateOf(0.994, 0.001, { 'inlet:a': effect }, 20),
+      estimateOf(1, 0.001, { 'inlet:b': effect }, 20),
+    ]
+    // s² = 18e-6; own 1e-6 each. Sources of 4e-3 explain 2 · (2e-3)² · 2 = 16e-6 of it: between (18 - 16)/2 - 0.5 = 0.5, own² = 1e-6
+    const some = meanOfEstimates(two(4e-3), { hasPooledScatter: false })
+    expectRelative(some?.randomStandardUncertainty ?? NaN, 1e-3, 1e-10)
+    // sources of 5e-3 explain all of it: own² = 0.5e-6
+    const all = meanOfEstimates(two(5e-3), { hasPooledScatter: false })
+    expectRelative(all?.randomStandardUncertainty ?? NaN, Math.sqrt(0.5e-6), 1e-10)
+    expectRelative(all?.degreesOfFreedom ?? NaN, 40, 1e-10)
+  })
   it('is nothing without a number, and has no uncertainty where one has none', () => {
     expect(meanOfEstimates([], { hasPooledScatter: false })).toBeNull()
     const found = meanOfEstimates([estimateOf(1, 0.01), estimateOf(3, null)], { hasPooledScatter: false })
