@@ -117,6 +117,9 @@ describe('results from files, kept under their content', () => {
     // 2 % lies between 245 and 255 °C, where the reactor was at 1.6157 % and 2.3405 %
     const [low, high] = [3, 4].map((hold) => truth.runs[0]?.holds[hold]?.conversion_at_end ?? Number.NaN)
     const share = Math.log(0.02 / (low ?? NaN)) / Math.log((high ?? NaN) / (low ?? NaN))
+    const ofBalance = fresh?.workings['carbonBalance']?.notes[0] ?? ''
+    expect(ofBalance).toMatch(/^95.0 % interval [\d.]+ to [\d.]+ mol\/mol\.$/)
+    expect(Number(/interval ([\d.]+)/.exec(ofBalance)?.[1])).toBeCloseTo(fresh?.carbonBalanceInterval?.[0] ?? NaN, 4)
     inside(1 / ((1 - share) / 518.15 + share / 528.15), fresh?.temperatureForConversionInterval, 14)
     // nothing was lost in these three; three standard uncertainties, since one run in twenty lies beyond two
     for (const row of [fresh, decaying, await rowOf('CQ-103')]) {
