@@ -8,7 +8,7 @@ import { type Actor } from '../domain/role'
 import { authorise } from './authorise'
 
 const MAXIMUM_BYTES = 64_000
-const formSchema = z.string().regex(/^[a-z][a-z0-9-]{0,79}$/)
+export const draftNameSchema = z.string().regex(/^[a-z][a-z0-9-]{0,79}$/)
 
 export interface Draft {
   readonly content: unknown
@@ -16,7 +16,7 @@ export interface Draft {
 }
 
 function formNamed(form: string): string {
-  const parsed = formSchema.safeParse(form)
+  const parsed = draftNameSchema.safeParse(form)
   if (!parsed.success)
     throw new AppError('invalid', 'A draft is named in small letters, digits and hyphens, as in log-run.')
   return parsed.data
@@ -35,7 +35,8 @@ export async function saveDraft(actor: Actor, form: string, content: unknown, no
   const name = formNamed(form)
   if (Buffer.byteLength(JSON.stringify(content ?? null), 'utf8') > MAXIMUM_BYTES)
     throw new AppError('too-large', `A draft may have ${MAXIMUM_BYTES} bytes. Send the form, or shorten the notes.`)
-  await upsertDraft(await getDatabase(), actor.userId, name, content ?? null, now)
+  const db = await getDatabase()
+  await db.transaction((tx) => upsertDraft(tx, actor.userId, name, content ?? null, now))
   return { content, savedAt: now.toISOString() }
 }
 

@@ -8,13 +8,13 @@ import { type Actor } from '../domain/role'
 import { authorise } from './authorise'
 
 const MAXIMUM_BYTES = 32_000
-const keySchema = z
+export const preferenceNameSchema = z
   .string()
   .regex(/^[a-z][a-z0-9-]*(?:[.:][A-Za-z0-9-]{1,64}){0,2}$/)
   .max(120)
 
 function keyNamed(key: string): string {
-  const parsed = keySchema.safeParse(key)
+  const parsed = preferenceNameSchema.safeParse(key)
   if (!parsed.success)
     throw new AppError(
       'invalid',
@@ -35,5 +35,6 @@ export async function savePreference(actor: Actor, key: string, content: unknown
   const name = keyNamed(key)
   if (Buffer.byteLength(JSON.stringify(content ?? null), 'utf8') > MAXIMUM_BYTES)
     throw new AppError('too-large', `A preference may have ${MAXIMUM_BYTES} bytes.`)
-  await upsertPreference(await getDatabase(), actor.userId, name, content ?? null, now)
+  const db = await getDatabase()
+  await db.transaction((tx) => upsertPreference(tx, actor.userId, name, content ?? null, now))
 }

@@ -1,4 +1,6 @@
 import { z } from 'zod'
+import { draftNameSchema } from '@/lib/access/drafts'
+import { preferenceNameSchema } from '@/lib/access/preferences'
 import { newCalibrationSchema, calibrationChangeSchema } from '@/lib/domain/calibration'
 import { campaignChangeSchema, newCampaignSchema, newMemberSchema } from '@/lib/domain/campaign'
 import { newColumnMapSchema } from '@/lib/domain/column-map'
@@ -79,15 +81,16 @@ import {
 
 export interface Operation {
   readonly method: 'get' | 'post' | 'patch' | 'put' | 'delete'
-  /** with `{name}` for the parts that are ids */
+  /** with `{name}` for the parts that are ids, or what `parts` says of them */
   readonly path: string
+  readonly parts?: Readonly<Record<string, z.ZodType>>
   readonly summary: string
-  /** what a token must be allowed; null for what needs no sign-in */
-  readonly scope: TokenScope | null
+  /** what a token must be allowed, or `any` where all may; null for what needs no sign-in */
+  readonly scope: TokenScope | 'any' | null
   readonly query?: z.ZodType
   readonly body?: z.ZodType
-  /** other than JSON: what the body is */
-  readonly bodyType?: 'multipart/form-data'
+  /** other than JSON: files, in a form or one as the body itself */
+  readonly bodyType?: 'files'
   readonly answer?: z.ZodType
   readonly answerType?: string
   readonly status?: number
@@ -97,6 +100,31 @@ export interface Operation {
   readonly isForPersons?: boolean
   /** the edit names the version it was made from in If-Match */
   readonly isVersioned?: boolean
+  /** statuses of refusals beyond those that follow from the rest (see `refusalsOf`) */
+  readonly refusals?: readonly number[]
+}
+
+/** Statuses an operation may be refused with, each once and in order; what fails in the house itself (500, 503) may come from any. */
+export function refusalsOf(operation: Operation): number[] {
+  const { method, scope, path, parts, query, body, bodyType, isVersioned } = operation
+  const isChange = method !== 'get'
+  const hasInput = query !== undefined || body !== undefined || bodyType !== undefined || parts !== undefined
+  const sends = body !== undefined || bodyType !== undefined
+  const isRecorded = sends && operation.isForPersons !== true && scope !== null
+  return [
+    ...new Set([
+      ...(hasInput ? [400] : []),
+      ...(scope === null ? [] : [401]),
+      // a session's change is refused when another site sent it, whatever its scope
+      ...(scope === null || (scope === 'any' && !isChange) ? [] : [403]),
+      ...(path.includes('{') && parts === undefined ? [404] : []),
+      ...(isRecorded ? [409, 422] : []),
+      ...(sends ? [413, 415] : []),
+      ...(isVersioned === true ? [412, 428] : []),
+      ...(bodyType === undefined ? [] : [503, 507]),
+      ...(operation.refusals ?? []),
+    ]),
+  ].sort((a, b) => a - b)
 }
 
 const items = <T extends z.ZodType>(row: T) => z.strictObject({ items: z.array(row) })
@@ -108,7 +136,7 @@ const get = (path: string, summary: string, more: More = {}): Operation => ({
   scope: 'read',
   ...more,
 })
-const post = (path: string, summary: string, more: More & { readonly scope?: TokenScope | null } = {}): Operation => ({
+const post = (path: string, summary: string, more: More & Partial<Pick<Operation, 'scope'>> = {}): Operation => ({
   method: 'post',
   path,
   summary,
@@ -147,11 +175,12 @@ function records(
     readonly create: z.ZodType
     readonly edit: z.ZodType
   },
-  scope: TokenScope = 'write',
+  /** what it takes to make one, where it is not the usual */
+  making: Partial<Pick<Operation, 'scope' | 'refusals'>> = {},
 ): Operation[] {
   return [
     get(`/${path}`, `List ${name}s`, { query: schemas.query, answer: listed(schemas.row) }),
-    post(`/${path}`, `Make a ${name}`, { body: schemas.create, answer: schemas.one, scope }),
+    post(`/${path}`, `Make a ${name}`, { body: schemas.create, answer: schemas.one, ...making }),
     get(`/${path}/{${id}}`, `Read a ${name}`, { answer: schemas.one }),
     patch(`/${path}/{${id}}`, `Change a ${name}`, { body: schemas.edit, answer: schemas.one }),
   ]
@@ -160,7 +189,7 @@ function records(
 /** Every operation of the API. A test holds this list against the handlers on disk, both ways. */
 export const operations: readonly Operation[] = [
   { ...get('/openapi.json', 'This description', { answer: z.looseObject({ openapi: z.string() }) }), scope: null },
-  get('/me', 'Who the caller is, with their parts in campaigns', { answer: meRecord }),
+  { ...get('/me', 'Who the caller is, with their parts in campaigns', { answer: meRecord }), scope: 'any' },
   {
     ...get('/tokens', 'List tokens, without their secrets', {
       query: tokenListQuery,
@@ -172,8 +201,15 @@ export const operations: readonly Operation[] = [
     body: tokenRequestSchema,
     answer: newTokenRecord,
     scope: null,
+    refusals: [401, 404, 409, 413, 415, 429, 503],
   }),
-  { method: 'delete', path: '/tokens/{tokenId}', summary: 'Revoke a token', scope: 'write', status: 204 },
+  {
+    method: 'delete',
+    path: '/tokens/{tokenId}',
+    summary: 'Revoke a token; one may always revoke itself, others need the scope write',
+    scope: 'any',
+    status: 204,
+  },
   {
     ...get('/people', 'List people, for admins', { answer: z.strictObject({ people: z.array(personRecord) }) }),
     scope: 'write',
@@ -198,17 +234,24 @@ export const operations: readonly Operation[] = [
     answer: z.strictObject({ ended: z.int().gte(0) }),
   },
   ofPerson('get', '/drafts/{form}', 'What was typed into a form and not sent yet', {
+    parts: { form: draftNameSchema },
     answer: z.strictObject({ draft: draftRecord.nullable() }),
   }),
   ofPerson('put', '/drafts/{form}', 'Keep what is typed', {
+    parts: { form: draftNameSchema },
     body: draftRequest,
     answer: z.strictObject({ draft: draftRecord }),
   }),
-  ofPerson('delete', '/drafts/{form}', 'Forget what was typed', { status: 204 }),
+  ofPerson('delete', '/drafts/{form}', 'Forget what was typed', { parts: { form: draftNameSchema }, status: 204 }),
   ofPerson('get', '/preferences/{key}', 'A preference of the caller, such as the columns of a grid', {
+    parts: { key: preferenceNameSchema },
     answer: z.strictObject({ content: z.unknown() }),
   }),
-  ofPerson('put', '/preferences/{key}', 'Keep a preference', { body: preferenceRequest, status: 204 }),
+  ofPerson('put', '/preferences/{key}', 'Keep a preference', {
+    parts: { key: preferenceNameSchema },
+    body: preferenceRequest,
+    status: 204,
+  }),
 
   ...records('reactions', 'reactionId', 'reaction', {
     query: plainListQuery,
@@ -237,7 +280,7 @@ export const operations: readonly Operation[] = [
   }),
   post('/calibrations/files', 'Calibrations from dropped tables of response factors', {
     query: calibrationFilesQuery,
-    bodyType: 'multipart/form-data',
+    bodyType: 'files',
     answer: items(calibrationRecord),
   }),
   get('/column-maps', 'List column maps', { query: columnMapListQuery, answer: listed(columnMapRecord) }),
@@ -249,7 +292,7 @@ export const operations: readonly Operation[] = [
     'sampleId',
     'sample',
     { query: plainListQuery, row: sampleRecord, one: sampleRecord, create: newSampleSchema, edit: sampleChangeSchema },
-    'intake',
+    { scope: 'intake', refusals: [404] },
   ),
   get('/samples/{sampleId}/lots', 'Lots of a sample', { answer: items(lotRecord) }),
   post('/samples/{sampleId}/lots', 'Add a lot', { body: newLotSchema, answer: lotRecord, scope: 'intake' }),
@@ -302,6 +345,7 @@ export const operations: readonly Operation[] = [
     summary: 'End somebody’s part',
     scope: 'write',
     status: 204,
+    refusals: [409],
   },
   get('/campaigns/{campaignId}/methods', 'Versions of the method, newest first', { answer: items(methodRecord) }),
   post('/campaigns/{campaignId}/methods', 'Save the next version of the method', {
@@ -343,13 +387,14 @@ export const operations: readonly Operation[] = [
     'runId',
     'run',
     { query: runListQuery, row: runSummaryRecord, one: runRecord, create: newRunSchema, edit: runChangeSchema },
-    'intake',
+    { scope: 'intake', refusals: [404] },
   ),
   post('/runs/{runId}/hand-in', 'Hand the run in', {
     answer: runRecord,
     status: 200,
     isVersioned: true,
     scope: 'intake',
+    refusals: [409],
   }),
   get('/runs/{runId}/decision', 'Decisions on the run', { answer: items(decisionRecord) }),
   post('/runs/{runId}/decision', 'Decide on the run', {
@@ -384,28 +429,36 @@ export const operations: readonly Operation[] = [
   get('/runs/{runId}/points', 'The points of the run and its line', { answer: runPointsRecord }),
   get('/runs/{runId}/uploads', 'Files of the run', { answer: items(uploadRecord) }),
   post('/runs/{runId}/uploads', 'Add files; bytes that are there already are answered with 200', {
-    bodyType: 'multipart/form-data',
+    bodyType: 'files',
     answer: items(addedUploadRecord),
     otherStatus: 200,
     scope: 'intake',
   }),
   get('/uploads/{uploadId}', 'A file with what was detected and what is still open', { answer: uploadRecord }),
   {
-    ...patch('/uploads/{uploadId}', 'Answer what is asked, correct what the columns mean', {
-      body: uploadCorrectionRequest,
-      answer: uploadRecord,
-    }),
+    ...patch(
+      '/uploads/{uploadId}',
+      'Answer what is asked, correct what the columns mean; of a confirmed file or one set aside it needs the scope write',
+      {
+        body: uploadCorrectionRequest,
+        answer: uploadRecord,
+      },
+    ),
     scope: 'intake',
   },
   {
-    ...get('/uploads/{uploadId}/preview', 'What a confirmation would take in', { answer: previewRecord }),
+    ...get('/uploads/{uploadId}/preview', 'What a confirmation would take in', {
+      answer: previewRecord,
+      refusals: [422, 503],
+    }),
     scope: 'intake',
   },
-  post('/uploads/{uploadId}/confirm', 'Take the readings in', {
+  post('/uploads/{uploadId}/confirm', 'Take the readings in; again, or of a file set aside, it needs the scope write', {
     answer: uploadRecord,
     status: 200,
     isVersioned: true,
     scope: 'intake',
+    refusals: [409, 422, 503],
   }),
   post('/uploads/{uploadId}/set-aside', 'Put a file aside', {
     body: setAsideRequest,

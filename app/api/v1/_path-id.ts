@@ -1,6 +1,8 @@
+import { z } from 'zod'
 import { AppError } from '@/lib/domain/errors'
 
-const ID = /^[\w.:-]{1,64}$/
+/** An id as it may stand in an address. */
+export const idInAddress = z.string().regex(/^[\w.:-]{1,64}$/)
 
 /** The parts of an address that are ids. What cannot be one names nothing. */
 export async function pathIds<Name extends string>(context: {
@@ -8,6 +10,7 @@ export async function pathIds<Name extends string>(context: {
 }): Promise<Readonly<Record<Name, string>>> {
   const params = await context.params
   for (const value of Object.values<string>(params))
-    if (!ID.test(value)) throw new AppError('not-found', 'There is nothing here under this address, or not for you.')
+    if (!idInAddress.safeParse(value).success)
+      throw new AppError('not-found', 'There is nothing here under this address, or not for you.')
   return params
 }

@@ -3,9 +3,8 @@ import { calibrationKinds } from '@/lib/domain/calibration'
 import { runDecisions, runStates } from '@/lib/domain/run'
 import { instantSchema } from '@/lib/domain/text'
 import { pageQuery } from './_page'
+import { idInAddress as id } from './_path-id'
 
-/** An id as it may stand in an address. */
-const id = z.string().regex(/^[\w.:-]{1,64}$/)
 const word = z
   .string()
   .min(1)

@@ -249,3 +249,15 @@ export const invitationRecord = z.strictObject({
 }) satisfies z.ZodType<Invitation>
 
 export const draftRecord = z.strictObject({ content: z.unknown(), savedAt: instant }) satisfies z.ZodType<Draft>
+
+/** What every refusal answers, as RFC 9457 writes it. */
+export const problemRecord = z.strictObject({
+  type: text,
+  title: text,
+  status: z.int().gte(400).lte(599),
+  detail: text,
+  code: text,
+  issues: z.array(z.strictObject({ field: text, message: text })),
+  details: z.record(text, z.unknown()).exactOptional(),
+  requestId: text,
+})

@@ -4,6 +4,7 @@ import { personChangeSchema } from '@/lib/domain/person'
 import { campaignSampleChangeSchema } from '@/lib/domain/campaign'
 import { campaignRoleSchema } from '@/lib/domain/role'
 import { idSchema, instantSchema, reasonSchema } from '@/lib/domain/text'
+import { idInAddress } from './_path-id'
 
 // Bodies and queries that belong to the API alone: the handler parses with the schema that openapi.json shows.
 
@@ -17,13 +18,13 @@ export const campaignSampleChangeRequest = campaignSampleChangeSchema.omit({ ver
 export const memberChangeRequest = z.strictObject({ role: campaignRoleSchema })
 export const campaignSampleRequest = z.strictObject({ sampleId: idSchema })
 
-export const tokenListQuery = z.strictObject({ userId: idSchema.optional() })
+export const tokenListQuery = z.strictObject({ userId: idInAddress.optional() })
 
 export const calibrationFilesQuery = z.strictObject({
   convention: z.enum(['factor', 'sensitivity']).optional(),
   validFrom: instantSchema,
   validTo: instantSchema.optional(),
-  rigId: idSchema.optional(),
+  rigId: idInAddress.optional(),
   instrument: z.string().trim().max(100).default(''),
   relativeStandardUncertainty: z.coerce.number().gte(0).lte(1).optional(),
 })

@@ -5,7 +5,7 @@ import { onceForKey } from '@/lib/access/idempotency'
 import { logSecurityEvent } from '@/lib/auth/security-log'
 import { AnalysisError } from '@/lib/analysis/analysis-error'
 import { issuesOf, nameAllowedFields } from '@/lib/domain/action-answer'
-import { AppError, appErrorOf, type AppErrorCode, type FieldIssue } from '@/lib/domain/errors'
+import { AppError, appErrorCodes, appErrorOf, type AppErrorCode, type FieldIssue } from '@/lib/domain/errors'
 import { type Actor } from '@/lib/domain/role'
 
 /** The only table from error to status; a code without a line here does not compile. */
@@ -41,6 +41,14 @@ const titleOf: Record<AppErrorCode, string> = {
   'bad-origin': 'Sent from another origin',
   busy: 'Busy',
   'storage-full': 'No space left',
+}
+
+/** What a status of refusal means, in the words of the codes that answer with it. */
+export function meaningOf(status: number): string {
+  return appErrorCodes
+    .filter((code) => statusOf[code] === status)
+    .map((code) => titleOf[code])
+    .join('; ')
 }
 
 const PRIVATE = { 'Cache-Control': 'private, no-store', Vary: 'Cookie, Authorization' } as const
