@@ -66,6 +66,14 @@ export async function selectCampaign(db: Executor, scope: Scope, id: string): Pr
   return row === undefined ? null : { ...row, closedAt: instantOrNull(row.closedAt) }
 }
 
+export async function hasCampaign(db: Executor, scope: Scope, id: string): Promise<boolean> {
+  const rows = await db
+    .select({ id: campaigns.id })
+    .from(campaigns)
+    .where(and(inScope(campaigns.id, scope), eq(campaigns.id, id)))
+  return rows.length > 0
+}
+
 /** Holds the campaign until the transaction ends, so that numbers are given out one at a time. Null where there is none. */
 export async function lockCampaign(
   tx: Transaction,

@@ -1,5 +1,6 @@
 import 'server-only'
-import { lockCampaign } from '../../db/queries/campaigns'
+import { getDatabase } from '../../db/client'
+import { hasCampaign, lockCampaign } from '../../db/queries/campaigns'
 import { type SampleScope } from '../../db/queries/samples'
 import { type Scope } from '../../db/scope'
 import { type Transaction } from '../../db/executor'
@@ -14,6 +15,12 @@ export function authoriseIn(actor: Actor, campaignId: string, allowed: boolean, 
   if (allowed) return
   hideUnless(can.readCampaign(actor, campaignId) || can.addRun(actor, campaignId))
   authorise(allowed, message)
+}
+
+/** For lists: who reads every campaign reads none that is not there, and an empty list would say that it is. */
+export async function hideUnlessReadable(actor: Actor, campaignId: string): Promise<void> {
+  hideUnless(can.readCampaign(actor, campaignId))
+  hideUnless(await hasCampaign(await getDatabase(), [campaignId], campaignId))
 }
 
 /** Campaigns in whose rows a change may look; wider than reading, as a token may add without being let to read. */

@@ -47,7 +47,7 @@ import { type Actor, type CampaignRole } from '../domain/role'
 import { can } from '../policy/can'
 import { readableCampaigns } from '../policy/campaign-scope'
 import { authorise, hideUnless } from './authorise'
-import { authoriseIn, holdOpenCampaign, touchableSamples } from './campaign-rights'
+import { authoriseIn, hideUnlessReadable, holdOpenCampaign, touchableSamples } from './campaign-rights'
 import { refuseEmpty, refuseField, refuseStale } from './stale'
 
 const LEADS_ONLY = 'This is for a lead of the campaign.'
@@ -197,7 +197,7 @@ export async function reopenCampaign(
 
 /** Everybody who has a part in the campaign, by name. */
 export async function listMembers(actor: Actor, campaignId: string): Promise<Member[]> {
-  hideUnless(can.readCampaign(actor, campaignId))
+  await hideUnlessReadable(actor, campaignId)
   return selectMembers(await getDatabase(), readableCampaigns(actor), campaignId)
 }
 
@@ -293,7 +293,7 @@ export async function removeMember(actor: Actor, campaignId: string, userId: str
 
 /** Every version, newest first. */
 export async function listMethods(actor: Actor, campaignId: string, page: Page<number> = wholeList): Promise<Method[]> {
-  hideUnless(can.readCampaign(actor, campaignId))
+  await hideUnlessReadable(actor, campaignId)
   return selectMethods(await getDatabase(), readableCampaigns(actor), campaignId, page)
 }
 
@@ -363,7 +363,7 @@ export async function listCampaignSamples(
   campaignId: string,
   page: Page<string> = wholeList,
 ): Promise<CampaignSample[]> {
-  hideUnless(can.readCampaign(actor, campaignId))
+  await hideUnlessReadable(actor, campaignId)
   return selectCampaignSamples(await getDatabase(), readableCampaigns(actor), campaignId, page)
 }
 

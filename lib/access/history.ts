@@ -5,7 +5,7 @@ import { type HistoryEntry } from '../domain/history'
 import { wholeList, type Page } from '../domain/page'
 import { type Actor } from '../domain/role'
 import { can } from '../policy/can'
-import { authoriseIn } from './campaign-rights'
+import { authoriseIn, hideUnlessReadable } from './campaign-rights'
 
 /** Who changed what in a campaign and in the samples it holds, latest first. */
 export async function listHistory(
@@ -19,5 +19,6 @@ export async function listHistory(
     can.readHistory(actor, campaignId),
     'The history of a campaign is read by its leads and by admins.',
   )
+  await hideUnlessReadable(actor, campaignId)
   return selectHistory(await getDatabase(), [campaignId], campaignId, page)
 }

@@ -54,7 +54,7 @@ import {
 import { can } from '../policy/can'
 import { readableCampaigns } from '../policy/campaign-scope'
 import { authorise, hideUnless } from './authorise'
-import { authoriseIn, holdOpenCampaign, touchableCampaigns } from './campaign-rights'
+import { authoriseIn, hideUnlessReadable, holdOpenCampaign, touchableCampaigns } from './campaign-rights'
 import { codeAfter } from './code-after'
 import { changeLoadingIn, checkBed, packLoading } from './loadings'
 import { refuseEmpty, refuseField, refuseStale } from './stale'
@@ -85,7 +85,7 @@ export async function listRuns(
   page: Page<RunKey> = wholeList,
 ): Promise<RunSummary[]> {
   authorise(can.readHouse(actor), 'Runs are read by the people who work in their campaign.')
-  if (filter.campaignId !== undefined) hideUnless(can.readCampaign(actor, filter.campaignId))
+  if (filter.campaignId !== undefined) await hideUnlessReadable(actor, filter.campaignId)
   return selectRunSummaries(await getDatabase(), readableCampaigns(actor), filter, page)
 }
 

@@ -175,12 +175,12 @@ function records(
     readonly create: z.ZodType
     readonly edit: z.ZodType
   },
-  /** what it takes to make one, where it is not the usual */
-  making: Partial<Pick<Operation, 'scope' | 'refusals'>> = {},
+  /** of listing them and of making one, where it is not the usual */
+  more: { readonly listing?: More; readonly making?: Partial<Pick<Operation, 'scope' | 'refusals'>> } = {},
 ): Operation[] {
   return [
-    get(`/${path}`, `List ${name}s`, { query: schemas.query, answer: listed(schemas.row) }),
-    post(`/${path}`, `Make a ${name}`, { body: schemas.create, answer: schemas.one, ...making }),
+    get(`/${path}`, `List ${name}s`, { query: schemas.query, answer: listed(schemas.row), ...more.listing }),
+    post(`/${path}`, `Make a ${name}`, { body: schemas.create, answer: schemas.one, ...more.making }),
     get(`/${path}/{${id}}`, `Read a ${name}`, { answer: schemas.one }),
     patch(`/${path}/{${id}}`, `Change a ${name}`, { body: schemas.edit, answer: schemas.one }),
   ]
@@ -292,7 +292,7 @@ export const operations: readonly Operation[] = [
     'sampleId',
     'sample',
     { query: plainListQuery, row: sampleRecord, one: sampleRecord, create: newSampleSchema, edit: sampleChangeSchema },
-    { scope: 'intake', refusals: [404] },
+    { making: { scope: 'intake', refusals: [404] } },
   ),
   get('/samples/{sampleId}/lots', 'Lots of a sample', { answer: items(lotRecord) }),
   post('/samples/{sampleId}/lots', 'Add a lot', { body: newLotSchema, answer: lotRecord, scope: 'intake' }),
@@ -387,7 +387,7 @@ export const operations: readonly Operation[] = [
     'runId',
     'run',
     { query: runListQuery, row: runSummaryRecord, one: runRecord, create: newRunSchema, edit: runChangeSchema },
-    { scope: 'intake', refusals: [404] },
+    { listing: { refusals: [404] }, making: { scope: 'intake', refusals: [404] } },
   ),
   post('/runs/{runId}/hand-in', 'Hand the run in', {
     answer: runRecord,

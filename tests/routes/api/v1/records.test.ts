@@ -1,3 +1,4 @@
+import { rmSync } from 'node:fs'
 import { afterAll, beforeAll, describe, expect, test, vi } from 'vitest'
 import { z } from 'zod'
 import { operations } from '@/app/api/v1/_operations'
@@ -17,6 +18,12 @@ import { freshDatabase } from '@/tests/support/fresh-database'
 import { makeLaboratory } from '@/tests/support/make-laboratory'
 import { trail } from '@/tests/support/trail'
 
+const dataDir = await vi.hoisted(async () => {
+  const { mkdtempSync } = await import('node:fs')
+  const { tmpdir } = await import('node:os')
+  process.env.DATA_DIR = mkdtempSync(`${tmpdir()}/ik-records-`)
+  return process.env.DATA_DIR
+})
 /* The one thing a route test cannot have is the framework's cookie jar; the requests carry tokens. */
 vi.mock('@/lib/auth/session', async (original) => ({
   ...(await original<typeof session>()),
@@ -76,7 +83,10 @@ beforeAll(async () => {
   calibrationId = (await createCalibration(lab.admin, newCalibrationSchema.parse(calibrationBody()))).id
   columnMapId = (await createColumnMap(lab.admin, newColumnMapSchema.parse(columnMapBody()))).id
 })
-afterAll(() => opened.close())
+afterAll(async () => {
+  await opened.close()
+  rmSync(dataDir, { recursive: true, force: true })
+})
 
 const ask = (caller: string | null, method: string, address: string, asked?: Asked) =>
   askApi(caller === null ? null : (secrets.get(caller) ?? ''), method, address, asked)
@@ -165,6 +175,13 @@ const table: readonly Line[] = [
   { route: 'GET /runs/:r/result', is: [200, 200, 200, 404, 200, 404] },
   { route: 'GET /runs/:r/points', is: [200, 200, 200, 404, 200, 404] },
   { route: 'GET /runs/:r/uploads', is: [200, 200, 200, 404, 200, 404] },
+  // a form without a file, so that 400 says: allowed, had there been one
+  { route: 'POST /runs/:r/uploads', body: () => new FormData(), is: [400, 400, 400, 404, 400, 404] },
+  {
+    route: 'POST /calibrations/files?validFrom=2026-01-01T00:00:00Z',
+    body: () => new FormData(),
+    is: [400, 400, 400, 403, 400, 400],
+  },
   { route: 'GET /uploads/:u', is: [200, 200, 200, 404, 200, 404] },
   { route: 'GET /uploads/:u/preview', is: [422, 422, 422, 404, 422, 404] },
   { route: 'GET /uploads/:u/content', is: [404, 404, 404, 404, 404, 404] },
@@ -362,8 +379,6 @@ describe('who may do what, by HTTP', () => {
 const ELSEWHERE: Readonly<Record<string, string>> = {
   'get /openapi.json': 'openapi.test.ts: open to all',
   'post /tokens': 'people.test.ts: needs a password, not a token',
-  'post /runs/{runId}/uploads': 'uploads.test.ts: multipart',
-  'post /calibrations/files': 'tests/integration/access/calibration-files.test.ts: multipart',
 }
 
 const operationOf = (route: string) => {
@@ -417,6 +432,21 @@ describe('the scope that the description asks for is the one that is needed', ()
       if (![403, 404].includes(is[4])) expect([403, 404]).not.toContain(await statusFor(`only ${scope}`))
     },
   )
+})
+
+test.each([
+  '/campaigns/nowhere',
+  '/campaigns/nowhere/members',
+  '/campaigns/nowhere/methods',
+  '/campaigns/nowhere/samples',
+  '/campaigns/nowhere/history',
+  '/campaigns/nowhere/ranking',
+  '/runs?campaignId=nowhere',
+  '/samples/nowhere/lots',
+  '/runs/nowhere/remarks',
+  '/runs/nowhere/uploads',
+])('who reads everything finds nothing where nothing is: %s', async (address) => {
+  expect((await ask('admin', 'GET', address)).status).toBe(404)
 })
 
 describe('edits', () => {
