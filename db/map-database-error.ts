@@ -66,6 +66,12 @@ const sentences: Readonly<Record<string, Sentence>> = {
   uploads_kind_check: invalid('A file is a rig log, an analyser file or an attachment.', 'kind'),
   reading_sets_kind_check: invalid('Readings are a rig log or injections.', 'kind'),
   readings_pkey: conflict('These readings are stored already.'),
+  runs_frozen_check: conflict(
+    'A published edition holds this run, so nothing of it changes. A lead can withdraw the edition, with a reason; a correction is a new edition.',
+  ),
+  editions_frozen_check: conflict('A published edition is never changed; a lead can withdraw it, with a reason.'),
+  editions_withdrawal_check: invalid('A withdrawal has its time, its person and its reason.', 'reason'),
+  edition_runs_pkey: conflict('The edition holds this run already.'),
   editions_campaign_id_number_unique: conflict('Somebody published an edition at the same moment; look at it first.'),
   drafts_pkey: conflict('This draft was saved from another window at the same moment.'),
   preferences_pkey: conflict('This was saved from another window at the same moment.'),

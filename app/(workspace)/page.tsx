@@ -1,6 +1,7 @@
 import { routeOf } from '@/app/_route-of'
 import { RunsTable } from '@/components/run/runs-table'
 import { CampaignsTable } from '@/components/campaign/campaigns-table'
+import { EditionsTable } from '@/components/edition/editions-table'
 import { EmptyState } from '@/components/ui/empty-state'
 import { LinkButton } from '@/components/ui/link-button'
 import { PageBody } from '@/components/ui/page-body'
@@ -10,6 +11,7 @@ import { SetUpSteps, type SetUpStep } from '@/components/shell/set-up-steps'
 import { requireActor } from '@/lib/access/actor'
 import { listCalibrations } from '@/lib/access/calibrations'
 import { listCampaigns } from '@/lib/access/campaigns'
+import { listEditions } from '@/lib/access/editions'
 import { listReactions } from '@/lib/access/reactions'
 import { listRigs } from '@/lib/access/rigs'
 import { listRuns } from '@/lib/access/runs'
@@ -32,17 +34,25 @@ function waitingFor(actor: Actor, runs: readonly RunSummary[]) {
 export default async function StartPage() {
   const actor = await requireActor()
   const campaigns = await listCampaigns(actor)
-  if (!can.readHouse(actor))
+  if (!can.readHouse(actor)) {
+    const editions = await listEditions(actor)
     return (
       <>
         <PageHead title="Start" />
         <PageBody>
-          <EmptyState title="Guest">
-            Published editions of the campaigns you were invited to are shown here. None has been published yet.
-          </EmptyState>
+          {editions.length === 0 ? (
+            <EmptyState title="Nothing to read yet">
+              Published editions of the campaigns you were invited to are shown here. None has been published yet.
+            </EmptyState>
+          ) : (
+            <Section title="Editions" note="Of the campaigns you were invited to, newest first.">
+              <EditionsTable editions={editions} caption="Editions you may read" empty="" hasCampaign />
+            </Section>
+          )}
         </PageBody>
       </>
     )
+  }
   const [reactions, rigs, calibrations, samples, runs] = await Promise.all([
     listReactions(actor),
     listRigs(actor),

@@ -58,6 +58,7 @@ const summaryColumns = (db: Executor) => ({
   createdBy: runs.createdBy,
   createdByName: users.displayName,
   version: runs.version,
+  isFrozen: sql<boolean>`run_is_frozen(${runs.id})`,
   fileCount: db.$count(uploads, and(eq(uploads.runId, runs.id), ne(uploads.state, 'set-aside'))),
 })
 

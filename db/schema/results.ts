@@ -1,5 +1,7 @@
+import { sql } from 'drizzle-orm'
 import {
   bigint,
+  check,
   doublePrecision,
   foreignKey,
   index,
@@ -113,6 +115,7 @@ export const editions = pgTable(
     publishedBy: text('published_by').notNull(),
     publishedAt: at('published_at').notNull(),
     withdrawnAt: at('withdrawn_at'),
+    withdrawnBy: text('withdrawn_by'),
     withdrawnReason: text('withdrawn_reason'),
   },
   (t) => [
@@ -120,6 +123,27 @@ export const editions = pgTable(
     foreignKey({ name: 'editions_campaign_id_fkey', columns: [t.campaignId], foreignColumns: [campaigns.id] }),
     foreignKey({ name: 'editions_method_id_fkey', columns: [t.methodId], foreignColumns: [methods.id] }),
     foreignKey({ name: 'editions_published_by_fkey', columns: [t.publishedBy], foreignColumns: [users.id] }),
+    foreignKey({ name: 'editions_withdrawn_by_fkey', columns: [t.withdrawnBy], foreignColumns: [users.id] }),
+    check(
+      'editions_withdrawal_check',
+      sql`(${t.withdrawnAt} is null) = (${t.withdrawnBy} is null) and (${t.withdrawnAt} is null) = (${t.withdrawnReason} is null)`,
+    ),
+  ],
+)
+
+/** The runs an edition holds. While it stands they are frozen: triggers refuse any change of what was written of them. */
+export const editionRuns = pgTable(
+  'edition_runs',
+  {
+    editionId: text('edition_id').notNull(),
+    runId: text('run_id').notNull(),
+    reductionKey: text('reduction_key').notNull(),
+  },
+  (t) => [
+    primaryKey({ name: 'edition_runs_pkey', columns: [t.editionId, t.runId] }),
+    foreignKey({ name: 'edition_runs_edition_id_fkey', columns: [t.editionId], foreignColumns: [editions.id] }),
+    foreignKey({ name: 'edition_runs_run_id_fkey', columns: [t.runId], foreignColumns: [runs.id] }),
+    index('edition_runs_run_id_index').on(t.runId),
   ],
 )
 

@@ -16,7 +16,7 @@ import { getCampaign, listCampaignSamples } from './campaigns'
 import { engineId } from './engine-id'
 import { KeptResults } from './reduction/kept-results'
 import { rankingRows } from './reduction/ranking-rows'
-import { methodInForce, reduceRuns } from './reduction/reduce-runs'
+import { methodInForce, reduceRuns, type MethodInForce, type ReducedRun } from './reduction/reduce-runs'
 import { getRun } from './runs'
 import { listUploads } from './uploads'
 
@@ -70,6 +70,15 @@ export async function getMethodSettings(actor: Actor, campaignId: string, number
  * input without being asked, since nothing is looked up but by content.
  */
 export async function getRanking(actor: Actor, campaignId: string, options: RankingOptions = {}): Promise<Ranking> {
+  return (await rankCampaign(actor, campaignId, options)).ranking
+}
+
+/** The same with the method and the reduced runs that it was made of. */
+export async function rankCampaign(
+  actor: Actor,
+  campaignId: string,
+  options: RankingOptions = {},
+): Promise<{ readonly ranking: Ranking; readonly method: MethodInForce; readonly runs: readonly ReducedRun[] }> {
   hideUnless(can.readCampaign(actor, campaignId))
   const summary = await getCampaign(actor, campaignId)
   const samples = await listCampaignSamples(actor, campaignId)
@@ -100,7 +109,7 @@ export async function getRanking(actor: Actor, campaignId: string, options: Rank
     // of the computing, not of the answer: a kept table is as old as it is
     computedAt: new Date().toISOString(),
   }))
-  return {
+  const ranking: Ranking = {
     campaignId,
     campaignCode: summary.code,
     campaignName: summary.name,
@@ -122,4 +131,5 @@ export async function getRanking(actor: Actor, campaignId: string, options: Rank
     ),
     summary: table.summary,
   }
+  return { ranking, method, runs }
 }

@@ -113,6 +113,8 @@ export interface RunSummary {
   readonly createdByName: string
   readonly version: number
   readonly fileCount: number
+  /** a published edition holds it: nothing of it changes while that edition stands */
+  readonly isFrozen: boolean
 }
 
 export interface Run extends RunSummary {

@@ -44,6 +44,7 @@ const run: Run = {
   createdByName: 'T. Quay',
   version: 3,
   fileCount: 2,
+  isFrozen: false,
   loading: {
     id: 'loading-8',
     code: 'L-0008',

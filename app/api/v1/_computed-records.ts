@@ -4,6 +4,8 @@ import { type Estimate, type SharedSource } from '@/lib/analysis/estimate'
 import { type ArrheniusFit, type Point, type RunReduction } from '@/lib/analysis/reduction/run-reduction'
 import { type Working } from '@/lib/analysis/working'
 import { detectionSchema, problemSchema, questionSchema, uploadStates, type Upload } from '@/lib/domain/intake'
+import { type Edition, type EditionProposal, type EditionSummary } from '@/lib/domain/edition'
+import { methodSettingsSchema } from '@/lib/domain/method'
 import { type Ranking, type RankingRow } from '@/lib/domain/ranking'
 import { runDecisions, runStates } from '@/lib/domain/run'
 import { type RunResult } from '@/lib/domain/run-result'
@@ -321,7 +323,7 @@ const rankingRow = z.strictObject({
   workings,
 }) satisfies z.ZodType<RankingRow>
 
-export const rankingRecord = z.strictObject({
+const frozenRanking = z.strictObject({
   campaignId: text,
   campaignCode: text,
   campaignName: text,
@@ -335,9 +337,56 @@ export const rankingRecord = z.strictObject({
   draws: count,
   seed: number,
   engineId: text,
-  computedAt: instantSchema,
   includesProvisional: z.boolean(),
   rows: z.array(rankingRow),
   holdTemperaturesK: z.array(number),
   summary: text,
-}) satisfies z.ZodType<Ranking>
+})
+export const rankingRecord = frozenRanking.extend({ computedAt: instantSchema }) satisfies z.ZodType<Ranking>
+
+const editionRun = z.strictObject({
+  runId: text,
+  runCode: text,
+  sampleCode: text,
+  reductionKey: text,
+  decision: z.enum(runDecisions),
+  decisionReason: text,
+  files: z.array(z.strictObject({ fileName: text, sha256: text, byteCount: count })),
+})
+
+export const editionSummaryRecord = z.strictObject({
+  id: text,
+  campaignId: text,
+  number: z.int().gte(1),
+  methodNumber: z.int().gte(1),
+  engineId: text,
+  contentSha256: text,
+  statement: text,
+  publishedByName: text,
+  publishedAt: instantSchema,
+  withdrawnAt: instantSchema.nullable(),
+  withdrawnByName: text.nullable(),
+  withdrawnReason: text.nullable(),
+  runCount: count,
+}) satisfies z.ZodType<EditionSummary>
+export const listedEditionRecord = editionSummaryRecord.extend({ campaignCode: text, campaignName: text })
+
+export const editionRecord = editionSummaryRecord.extend({
+  content: z.strictObject({
+    format: z.literal(1),
+    laboratory: text,
+    methodSettings: methodSettingsSchema,
+    ranking: frozenRanking,
+    runs: z.array(editionRun),
+  }),
+  isIntact: z.boolean(),
+}) satisfies z.ZodType<Edition>
+
+export const editionProposalRecord = z.strictObject({
+  number: z.int().gte(1),
+  contentSha256: text,
+  ranking: frozenRanking,
+  runs: z.array(editionRun),
+  leftOut: z.array(z.strictObject({ runCode: text, sampleCode: text, reason: text })),
+  refusal: text,
+}) satisfies z.ZodType<EditionProposal>

@@ -4,6 +4,7 @@ import { preferenceNameSchema } from '@/lib/access/preferences'
 import { newCalibrationSchema, calibrationChangeSchema } from '@/lib/domain/calibration'
 import { campaignChangeSchema, newCampaignSchema, newMemberSchema } from '@/lib/domain/campaign'
 import { newColumnMapSchema } from '@/lib/domain/column-map'
+import { editionWithdrawalSchema, publicationSchema } from '@/lib/domain/edition'
 import { newMethodSchema } from '@/lib/domain/method'
 import { newPersonSchema, tokenRequestSchema } from '@/lib/domain/person'
 import { newReactionSchema, reactionChangeSchema } from '@/lib/domain/reaction'
@@ -22,6 +23,9 @@ import {
 import { newLotSchema, newSampleSchema, newSiteCountSchema, sampleChangeSchema } from '@/lib/domain/sample'
 import {
   addedUploadRecord,
+  editionProposalRecord,
+  editionRecord,
+  listedEditionRecord,
   previewRecord,
   rankingRecord,
   runPointsRecord,
@@ -380,6 +384,27 @@ export const operations: readonly Operation[] = [
   get('/campaigns/{campaignId}/ranking.xlsx', 'The ranking as a workbook', {
     query: rankingRequestSchema,
     answerType: 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet',
+  }),
+
+  get('/campaigns/{campaignId}/editions', 'Published editions, newest first', { answer: items(listedEditionRecord) }),
+  ofPerson('post', '/campaigns/{campaignId}/editions', 'Publish what the proposal showed, signed by a lead', {
+    body: publicationSchema,
+    answer: editionRecord,
+    status: 201,
+  }),
+  ofPerson('get', '/campaigns/{campaignId}/editions/proposal', 'What a publication would freeze now', {
+    answer: editionProposalRecord,
+  }),
+  get('/campaigns/{campaignId}/editions/{number}', 'An edition as it was published', { answer: editionRecord }),
+  get('/campaigns/{campaignId}/editions/{number}/ranking.csv', 'The table of an edition as text', {
+    answerType: 'text/csv',
+  }),
+  get('/campaigns/{campaignId}/editions/{number}/ranking.xlsx', 'The table of an edition as a workbook', {
+    answerType: 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet',
+  }),
+  ofPerson('post', '/campaigns/{campaignId}/editions/{number}/withdrawal', 'Withdraw an edition, with a reason', {
+    body: editionWithdrawalSchema,
+    answer: editionRecord,
   }),
 
   ...records(

@@ -178,6 +178,7 @@ export const runSummaryRecord = z.strictObject({
   createdByName: text,
   version,
   fileCount: count,
+  isFrozen: z.boolean(),
 }) satisfies z.ZodType<RunSummary>
 
 export const runRecord = runSummaryRecord.extend({

@@ -37,6 +37,7 @@ function tabsOf(actor: Actor, campaignId: string) {
     { href: routeOf(base), label: 'Ranking' },
     { href: routeOf(`${base}/slopes`), label: 'Slopes' },
     { href: routeOf(`${base}/runs`), label: 'Runs' },
+    { href: routeOf(`${base}/editions`), label: 'Editions' },
     { href: routeOf(`${base}/method`), label: 'Method' },
     { href: routeOf(`${base}/people`), label: 'People' },
     ...(can.readHistory(actor, campaignId) ? [{ href: routeOf(`${base}/history`), label: 'History' }] : []),

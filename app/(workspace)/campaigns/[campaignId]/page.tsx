@@ -1,5 +1,7 @@
 import { HydrationBoundary } from '@tanstack/react-query'
 import { type Metadata } from 'next'
+import { redirect } from 'next/navigation'
+import { routeOf } from '@/app/_route-of'
 import { showOrNotFound } from '@/app/_show-or-not-found'
 import { RANKING_COLUMNS_PREFERENCE } from '@/components/campaign/ranking-columns-preference'
 import { RankingWorkspace } from '@/components/campaign/ranking-workspace'
@@ -17,13 +19,18 @@ interface RankingPageProps {
 
 export async function generateMetadata({ params }: RankingPageProps): Promise<Metadata> {
   const actor = await requireActor()
-  const campaign = await showOrNotFound(getCampaign(actor, (await params).campaignId))
+  const { campaignId } = await params
+  if (!can.readCampaign(actor, campaignId)) return { title: 'Campaign' }
+  const campaign = await showOrNotFound(getCampaign(actor, campaignId))
   return { title: campaign.name }
 }
 
 export default async function RankingPage({ params, searchParams }: RankingPageProps) {
   const actor = await requireActor()
   const { campaignId } = await params
+  // a guest reads editions, and this is where their link to the campaign leads
+  if (!can.readCampaign(actor, campaignId) && can.readEditions(actor, campaignId))
+    redirect(routeOf(`/campaigns/${campaignId}/editions`))
   const [state, saved] = await showOrNotFound(
     Promise.all([
       rankingForPage(actor, campaignId, await searchParams),

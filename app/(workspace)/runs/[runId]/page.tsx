@@ -64,6 +64,7 @@ function HeadTags({ result }: { result: RunResult }) {
   return (
     <span className="flex flex-wrap items-center gap-1.5 self-center">
       <RunStateTag run={run} />
+      {run.isFrozen ? <Tag>held by an edition</Tag> : null}
       {reduction?.cautions.map((caution, index) => (
         <CautionTag key={`${caution.code}-${index}`} caution={caution} />
       ))}

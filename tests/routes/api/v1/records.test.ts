@@ -172,6 +172,23 @@ const table: readonly Line[] = [
   { route: 'GET /campaigns/:c/ranking', is: [200, 200, 200, 404, 200, 404] },
   { route: 'GET /campaigns/:c/ranking.csv', is: [200, 200, 200, 404, 200, 404] },
   { route: 'GET /campaigns/:c/ranking.xlsx', is: [200, 200, 200, 404, 200, 404] },
+  { route: 'GET /campaigns/:c/editions', is: [200, 200, 200, 200, 200, 404] },
+  // none has been published here; a guest may ask
+  { route: 'GET /campaigns/:c/editions/1', is: [404, 404, 404, 404, 404, 404] },
+  { route: 'GET /campaigns/:c/editions/1/ranking.csv', is: [404, 404, 404, 404, 404, 404] },
+  { route: 'GET /campaigns/:c/editions/1/ranking.xlsx', is: [404, 404, 404, 404, 404, 404] },
+  // signed by a person at a screen: no token may, a lead's neither
+  { route: 'GET /campaigns/:c/editions/proposal', is: [403, 403, 403, 404, 403, 404] },
+  {
+    route: 'POST /campaigns/:c/editions',
+    body: () => ({ contentSha256: 'a'.repeat(64), statement: 'Reviewed and released.', password: 'x' }),
+    is: [403, 403, 403, 404, 403, 404],
+  },
+  {
+    route: 'POST /campaigns/:c/editions/1/withdrawal',
+    body: () => ({ reason: 'wrong site count' }),
+    is: [403, 403, 403, 404, 403, 404],
+  },
   { route: 'GET /runs/:r/result', is: [200, 200, 200, 404, 200, 404] },
   { route: 'GET /runs/:r/points', is: [200, 200, 200, 404, 200, 404] },
   { route: 'GET /runs/:r/uploads', is: [200, 200, 200, 404, 200, 404] },
