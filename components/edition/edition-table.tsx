@@ -59,7 +59,7 @@ export function EditionTable({ ranking, caption }: { readonly ranking: Frozen; r
           cell: (row) => (
             <>
               <b className="font-semibold">{row.sampleCode}</b>
-              <span className="block text-[12.5px] text-ink-2">{row.sampleName}</span>
+              <span className="block min-w-32 text-[12.5px] text-ink-2">{row.sampleName}</span>
             </>
           ),
         },
@@ -102,7 +102,9 @@ export function EditionTable({ ranking, caption }: { readonly ranking: Frozen; r
           key: 'cautions',
           head: 'Cautions',
           cell: (row) =>
-            row.cautions.length === 0 ? (
+            !row.runs.some((run) => run.isIncluded) ? (
+              <span className="text-ink-2">no decided run counts</span>
+            ) : row.cautions.length === 0 ? (
               <span className="text-ink-2">none</span>
             ) : (
               <span className="flex flex-wrap gap-1">

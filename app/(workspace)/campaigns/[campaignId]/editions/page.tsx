@@ -64,7 +64,7 @@ function Proposal({ campaignId, proposal }: { campaignId: string; proposal: Edit
               rows={2}
               required
             />
-            <PasswordField name="password" label="Your password" autoComplete="current-password" />
+            <PasswordField name="password" label="Password" autoComplete="current-password" />
           </ActionForm>
         </>
       )}
