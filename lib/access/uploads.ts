@@ -1,7 +1,7 @@
 import 'server-only'
 import { randomUUID } from 'node:crypto'
 import { getDatabase } from '../../db/client'
-import { type Executor } from '../../db/executor'
+import { type Executor, type Transaction } from '../../db/executor'
 import { insertAuditEntry } from '../../db/mutations/audit'
 import { prepareReadings } from '../../db/mutations/prepare-readings'
 import { publishReadingSet, stageReadingSet, supersedeReadingSets } from '../../db/mutations/readings'
@@ -74,13 +74,31 @@ async function openUpload(actor: Actor, id: string): Promise<{ upload: Upload; r
   return { upload, run }
 }
 
-/** The same for somebody who may take the file where it goes: what counts in the run already, or was put aside, takes more. */
+/** The same for somebody who may take the file where it goes from here. */
 async function openUploadToChange(actor: Actor, id: string): Promise<{ upload: Upload; run: Run }> {
   const opened = await openUpload(actor, id)
-  if (opened.upload.state === 'confirmed' || opened.upload.state === 'set-aside')
-    authorise(can.changeFiles(actor, opened.run), CHANGERS)
+  if (rightFor(opened.upload) === 'changeFiles') authorise(can.changeFiles(actor, opened.run), CHANGERS)
   return opened
 }
+
+/**
+ * Holds the campaign and asks for the right once more, of the run as it is now: a transfer or a reading takes its time, and the run may have been handed in
+ * or decided on meanwhile.
+ */
+async function holdRunToChange(
+  tx: Transaction,
+  actor: Actor,
+  { id, campaignId }: Run,
+  right: 'addFiles' | 'changeFiles',
+): Promise<void> {
+  await holdOpenCampaign(tx, campaignId)
+  const run = await selectRun(tx, [campaignId], id)
+  hideUnless(run !== null)
+  authorise(can[right](actor, run), right === 'addFiles' ? ADDERS : CHANGERS)
+}
+
+/** What counts in the run already, or was put aside, takes more than a file that is new. */
+const rightFor = ({ state }: Upload) => (state === 'confirmed' || state === 'set-aside' ? 'changeFiles' : 'addFiles')
 
 /** What is known outside the file: the rig's clock, barometer and flow reference, and the species that may stand in it. */
 async function contextOf(run: Run): Promise<ReadingContext> {
@@ -173,7 +191,7 @@ async function addFile(actor: Actor, run: Run, file: ReceivedFile | PackedFile):
   // the bytes stand in the store, synced, before the record that names them
   await putFile(file.path, file.sha256)
   const isNew = await db.transaction(async (tx) => {
-    await holdOpenCampaign(tx, run.campaignId)
+    await holdRunToChange(tx, actor, run, 'addFiles')
     const inserted = await insertUpload(tx, {
       id,
       campaignId: run.campaignId,
@@ -216,15 +234,16 @@ async function readBack(run: Run, id: string): Promise<Upload> {
   return upload
 }
 
-async function change(run: Run, id: string, version: number, to: UploadChange, isByPerson = false): Promise<Upload> {
+/** Notes what a file turned out to be; of a closed campaign too. */
+async function change(run: Run, id: string, version: number, to: UploadChange): Promise<Upload> {
   const db = await getDatabase()
-  await db.transaction(async (tx) => {
-    // what a file turns out to be is noted of a closed campaign too
-    if (isByPerson) await holdOpenCampaign(tx, run.campaignId)
-    if (!(await updateUpload(tx, { id, version }, to)))
-      throw new AppError('stale', 'Somebody else worked on this file meanwhile. Look at it again.')
-  })
+  await db.transaction((tx) => changeIn(tx, id, version, to))
   return readBack(run, id)
+}
+
+async function changeIn(tx: Transaction, id: string, version: number, to: UploadChange): Promise<void> {
+  if (!(await updateUpload(tx, { id, version }, to)))
+    throw new AppError('stale', 'Somebody else worked on this file meanwhile. Look at it again.')
 }
 
 const isFatal = (problems: readonly Problem[]) => problems.some((entry) => entry.severity === 'fatal')
@@ -317,10 +336,17 @@ export async function correctUpload(
   version: number,
 ): Promise<Upload> {
   const { upload, run } = await openUploadToChange(actor, id)
+  const correct = async (to: UploadChange): Promise<Upload> => {
+    const db = await getDatabase()
+    await db.transaction(async (tx) => {
+      await holdRunToChange(tx, actor, run, rightFor(upload))
+      await changeIn(tx, id, version, to)
+    })
+    return readBack(run, id)
+  }
   if (upload.detection === null) {
     // nothing to correct in it, but it can be kept beside the run as what it is
-    if (input.answers?.kind === 'attachment')
-      return change(run, id, version, { state: 'ready', kind: 'attachment' }, true)
+    if (input.answers?.kind === 'attachment') return correct({ state: 'ready', kind: 'attachment' })
     throw new AppError('unprocessable', 'The file could not be read as a table, so there are no columns to correct.')
   }
   const context = await contextOf(run)
@@ -330,12 +356,11 @@ export async function correctUpload(
     input.answers ?? {},
   )
   const questions = findQuestions(answered.specification, answered.facts, context)
-  const to: UploadChange = {
+  return correct({
     state: upload.state === 'confirmed' ? 'confirmed' : questions.length > 0 ? 'needs-answers' : 'ready',
     kind: answered.specification.kind,
     detection: { ...upload.detection, proposal: answered.specification, facts: answered.facts, questions },
-  }
-  return change(run, id, version, to, true)
+  })
 }
 
 async function readingOf(run: Run, upload: Upload) {
@@ -432,7 +457,7 @@ export async function confirmUpload(actor: Actor, id: string, version: number, n
           await prepareReadings(reading.channels),
         )
   await db.transaction(async (tx) => {
-    await holdOpenCampaign(tx, run.campaignId)
+    await holdRunToChange(tx, actor, run, rightFor(upload))
     let columnMapId = upload.columnMapId
     const known = columnMapId === null ? null : await selectColumnMap(tx, columnMapId)
     if (
@@ -496,7 +521,7 @@ export async function setUploadAside(
   authorise(can.changeFiles(actor, run), CHANGERS)
   const db = await getDatabase()
   await db.transaction(async (tx) => {
-    await holdOpenCampaign(tx, run.campaignId)
+    await holdRunToChange(tx, actor, run, 'changeFiles')
     if (!(await updateUpload(tx, { id, version }, { state: 'set-aside' })))
       throw new AppError('stale', 'Somebody else worked on this file meanwhile. Look at it again.')
     await supersedeReadingSets(tx, id, now)

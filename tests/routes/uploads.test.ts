@@ -337,6 +337,38 @@ test('once the run is handed in, a technician whose run it is not changes no fil
   }
 })
 
+test('a run handed in while the file is on its way takes it no more', async () => {
+  const db = await getDatabase()
+  const text = new TextEncoder()
+  const parts = ['time;T bed [C]\n2026-03-02 16:30:00;25,1\n', '2026-03-02 16:30:10;25,3\n']
+  const body = new ReadableStream<Uint8Array>({
+    async pull(controller) {
+      const part = parts.shift()
+      if (part === undefined) {
+        await db.update(runs).set({ state: 'handed-in' }).where(eq(runs.id, run.runId))
+        controller.close()
+      } else controller.enqueue(text.encode(part))
+    },
+  })
+  const before = (await db.select().from(uploads)).length
+  try {
+    const answer = await postUploads(
+      new Request(`${ORIGIN}/api/v1/runs/${run.runId}/uploads`, {
+        method: 'POST',
+        headers: { ...bearer(technician), 'Content-Type': 'application/octet-stream', 'X-File-Name': 'slow.csv' },
+        body,
+        ...{ duplex: 'half' },
+      }),
+      ofRun(),
+    )
+    expect(answer.status).toBe(403)
+    expect(await answer.json()).toMatchObject({ detail: expect.stringContaining('while the run is open') })
+    expect((await db.select().from(uploads)).length).toBe(before)
+  } finally {
+    await db.update(runs).set({ state: 'open' }).where(eq(runs.id, run.runId))
+  }
+})
+
 test('an instrument’s token takes readings in and out of nothing: what counts, or was put aside, it leaves as it is', async () => {
   const instrument = await tokenOf('technician', run.campaignId, ['read', 'intake'])
   const bound = await tokenOf('technician', run.campaignId, ['read', 'intake', 'write'], run.campaignId)
