@@ -11,6 +11,7 @@ import {
   selectHistoryHead,
   selectLastEditionNumber,
 } from '../../db/queries/editions'
+import { selectCampaign } from '../../db/queries/campaigns'
 import { selectAccount } from '../../db/queries/people'
 import { verifyPassword } from '../auth/password'
 import { takeFromBudget } from '../auth/rate-limit'
@@ -59,8 +60,12 @@ export async function listEditions(
   actor: Actor,
   campaignId: string | null = null,
 ): Promise<(EditionSummary & { readonly campaignCode: string; readonly campaignName: string })[]> {
-  if (campaignId !== null) authoriseReading(actor, campaignId)
-  return selectEditions(await getDatabase(), visibleCampaigns(actor), campaignId)
+  const db = await getDatabase()
+  if (campaignId !== null) {
+    authoriseReading(actor, campaignId)
+    hideUnless((await selectCampaign(db, visibleCampaigns(actor), campaignId)) !== null)
+  }
+  return selectEditions(db, visibleCampaigns(actor), campaignId)
 }
 
 /** One edition as it was published, and whether its content still has the hash that it was published under. */

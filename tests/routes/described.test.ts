@@ -4,10 +4,14 @@ import { z } from 'zod'
 import { GET as getDescription } from '@/app/api/v1/openapi.json/route'
 import { operations, refusalsOf, type Operation } from '@/app/api/v1/_operations'
 import type * as respond from '@/app/api/v1/_respond'
-import { type OpenDatabase } from '@/db/client'
+import { getDatabase, type OpenDatabase } from '@/db/client'
+import { members, methods } from '@/db/schema'
+import type * as results from '@/lib/access/results'
 import { signIn } from '@/lib/access/sign-in'
 import { createToken } from '@/lib/access/tokens'
 import type * as session from '@/lib/auth/session'
+import { methodSettingsSchema } from '@/lib/domain/method'
+import { exampleRanking } from '@/tests/support/example-ranking'
 import { askApi, type Asked } from '@/tests/support/ask-api'
 import { freshDatabase } from '@/tests/support/fresh-database'
 import { makeLaboratory } from '@/tests/support/make-laboratory'
@@ -28,6 +32,16 @@ vi.mock('@/lib/auth/session', async (original) => ({
   ...(await original<typeof session>()),
   readSessionSecret: async () => cookie.secret,
 }))
+/** What a publication freezes is the ranking of the campaign; for one test it is given. */
+const given = vi.hoisted((): { rank: ((campaignId: string) => unknown) | null } => ({ rank: null }))
+vi.mock('@/lib/access/results', async (original) => {
+  const real = await original<typeof results>()
+  return {
+    ...real,
+    rankCampaign: async (...asked: Parameters<typeof real.rankCampaign>) =>
+      given.rank === null ? real.rankCampaign(...asked) : given.rank(asked[1]),
+  }
+})
 /** The schemas that the handler parsed with. */
 const parsed = vi.hoisted((): { body: unknown; query: unknown } => ({ body: undefined, query: undefined }))
 vi.mock('@/app/api/v1/_respond', async (original) => {
@@ -68,6 +82,7 @@ let lab: Awaited<ReturnType<typeof makeLaboratory>>
 const secrets = { admin: '', lead: '' }
 let person: Awaited<ReturnType<typeof makePerson>>
 let ownSession: string
+let leadSession: string
 beforeAll(async () => {
   opened = await freshDatabase()
   lab = await makeLaboratory()
@@ -77,6 +92,14 @@ beforeAll(async () => {
   person = await makePerson('researcher')
   const credentials = { email: person.email, password: TEST_PASSWORD }
   ownSession = (await signIn(credentials, { address: '10.8.0.1', userAgent: '', knownPeople: [] })).secret
+  const signer = await makePerson('lead')
+  await (
+    await getDatabase()
+  )
+    .insert(members)
+    .values({ campaignId: lab.own.campaign.id, userId: signer.id, role: 'lead' })
+  const signs = { email: signer.email, password: TEST_PASSWORD }
+  leadSession = (await signIn(signs, { address: '10.8.0.2', userAgent: '', knownPeople: [] })).secret
 })
 afterAll(async () => {
   await opened.close()
@@ -90,17 +113,18 @@ const nameOf = (operation: Operation) => `${operation.method} ${operation.path}`
 const done = new Set<string>()
 const record = z.looseObject({ id: z.string(), version: z.int() })
 
-type Caller = keyof typeof secrets | 'person' | 'nobody'
+type Caller = keyof typeof secrets | 'person' | 'lead-person' | 'nobody'
 
 /** Asks for what must succeed; answers the body, which is as openapi.json publishes it. */
 async function succeed(caller: Caller, method: string, address: string, asked: Asked = {}) {
   parsed.body = undefined
   parsed.query = undefined
-  cookie.secret = caller === 'person' ? ownSession : null
-  const secret = caller === 'person' || caller === 'nobody' ? null : secrets[caller]
+  const isAtScreen = caller === 'person' || caller === 'lead-person'
+  cookie.secret = caller === 'person' ? ownSession : caller === 'lead-person' ? leadSession : null
+  const secret = isAtScreen || caller === 'nobody' ? null : secrets[caller]
   const answer = await askApi(secret, method, address, {
     ...asked,
-    headers: { ...(caller === 'person' ? { Origin: ORIGIN } : {}), ...asked.headers },
+    headers: { ...(isAtScreen ? { Origin: ORIGIN } : {}), ...asked.headers },
   })
   const { operation, status, body } = answer
   expect(status, JSON.stringify(body)).toBeLessThan(300)
@@ -422,6 +446,40 @@ describe('every operation does what its description says', () => {
     })
   })
 
+  test('editions', async () => {
+    const here = `/campaigns/${lab.own.campaign.id}/editions`
+    const ranking = exampleRanking()
+    const [row] = ranking.rows
+    const { id: runId, code } = lab.own.run
+    const [method] = await (await getDatabase()).select().from(methods)
+    given.rank = (campaignId) => ({
+      ranking: {
+        ...ranking,
+        campaignId,
+        rows: [{ ...row, runs: [{ runId, code, state: 'decided', decision: 'counts', isIncluded: true, reason: '' }] }],
+      },
+      method: { id: method?.id, number: 1, settings: methodSettingsSchema.parse({}) },
+      runs: [{ run: { runId }, key: 'the name of a reduction' }],
+    })
+    const proposal = await succeed('lead-person', 'GET', `${here}/proposal`)
+    const { contentSha256 } = z.looseObject({ contentSha256: z.string() }).parse(proposal.body)
+    const published = await succeed('lead-person', 'POST', here, {
+      body: { contentSha256, statement: 'Reviewed and released.', password: TEST_PASSWORD },
+    })
+    given.rank = null
+    expect(published.body).toMatchObject({ number: 1, contentSha256, isIntact: true, withdrawnAt: null })
+    expect(published.location).toBe(`/api/v1${here}/1`)
+    expect((await succeed('lead', 'GET', here)).body).toMatchObject({ items: [{ number: 1, contentSha256 }] })
+    expect((await succeed('lead', 'GET', `${here}/1`)).body).toEqual(published.body)
+    const text = await succeed('lead', 'GET', `${here}/1/ranking.csv`)
+    expect(String(text.body)).toContain(row?.sampleCode)
+    await succeed('lead', 'GET', `${here}/1/ranking.xlsx`)
+    const withdrawn = await succeed('lead-person', 'POST', `${here}/1/withdrawal`, {
+      body: { reason: 'wrong site count' },
+    })
+    expect(withdrawn.body).toMatchObject({ number: 1, withdrawnReason: 'wrong site count' })
+  })
+
   test('and none was left out', () => {
     expect(operations.map(nameOf).filter((name) => !done.has(name))).toEqual([])
   })
@@ -437,6 +495,7 @@ describe('every operation refuses as its description says', () => {
       .replace('{sampleId}', lab.own.sample.id)
       .replace('{rigId}', lab.rig.id)
       .replace('{reactionId}', lab.reaction.id)
+      .replace('{number}', '1')
       .replace('{form}', 'log-run')
       .replace('{key}', 'ranking-columns')
       .replaceAll(/\{\w+\}/g, 'nowhere')

@@ -35,7 +35,7 @@ const callers = [
 ] as const
 
 /*
- * Written by hand from the table of who may do what. `s` shown, `-` not found, `i` sent to sign in, `h` sent home. The columns are the callers above.
+ * Written by hand from the table of who may do what. `s` shown, `-` not found, `i` sent to sign in, `h` sent home, `e` to the editions. The columns are the callers above.
  */
 const table: Readonly<Record<string, string>> = {
   '(public)/invitation': 's s s s s s s s',
@@ -45,7 +45,11 @@ const table: Readonly<Record<string, string>> = {
   '(workspace)': 'i s s s s s s s',
   '(workspace)/calibrations/(list)': 'i s s - s s s s',
   '(workspace)/campaigns/(list)': 'i s s s s s s s',
-  '(workspace)/campaigns/[campaignId]': 'i - - - s s s s',
+  // a guest's way into a campaign leads to its editions
+  '(workspace)/campaigns/[campaignId]': 'i - - e s s s s',
+  '(workspace)/campaigns/[campaignId]/editions': 'i - - s s s s s',
+  // none has been published
+  '(workspace)/campaigns/[campaignId]/editions/[number]': 'i - - - - - - -',
   '(workspace)/campaigns/[campaignId]/history': 'i - - - - - s s',
   '(workspace)/campaigns/[campaignId]/method': 'i - - - s s s s',
   '(workspace)/campaigns/[campaignId]/people': 'i - - - s s s s',
@@ -113,6 +117,7 @@ async function outcomeOf(ask: () => unknown): Promise<string> {
     if (digest.startsWith('NEXT_HTTP_ERROR_FALLBACK;404')) return '-'
     if (/^NEXT_REDIRECT;[a-z]*;\/sign-in\?next=%2Fhere;/.test(digest)) return 'i'
     if (/^NEXT_REDIRECT;[a-z]*;\/;/.test(digest)) return 'h'
+    if (/^NEXT_REDIRECT;[a-z]*;\/campaigns\/[^/]+\/editions;/.test(digest)) return 'e'
     throw error
   }
 }

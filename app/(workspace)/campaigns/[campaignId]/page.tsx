@@ -8,6 +8,7 @@ import { RankingWorkspace } from '@/components/campaign/ranking-workspace'
 import { requireActor } from '@/lib/access/actor'
 import { getCampaign } from '@/lib/access/campaigns'
 import { getPreference } from '@/lib/access/preferences'
+import { type Actor } from '@/lib/domain/role'
 import { can } from '@/lib/policy/can'
 import { rankingForPage } from './_ranking-for-page'
 import { changeCampaignSampleAction } from './actions'
@@ -17,10 +18,16 @@ interface RankingPageProps {
   readonly searchParams: Promise<Record<string, string | string[] | undefined>>
 }
 
+/** A guest reads editions, and this is where their link to the campaign leads. */
+function sendGuestOn(actor: Actor, campaignId: string): void {
+  if (!can.readCampaign(actor, campaignId) && can.readEditions(actor, campaignId))
+    redirect(routeOf(`/campaigns/${campaignId}/editions`))
+}
+
 export async function generateMetadata({ params }: RankingPageProps): Promise<Metadata> {
   const actor = await requireActor()
   const { campaignId } = await params
-  if (!can.readCampaign(actor, campaignId)) return { title: 'Campaign' }
+  sendGuestOn(actor, campaignId)
   const campaign = await showOrNotFound(getCampaign(actor, campaignId))
   return { title: campaign.name }
 }
@@ -28,9 +35,7 @@ export async function generateMetadata({ params }: RankingPageProps): Promise<Me
 export default async function RankingPage({ params, searchParams }: RankingPageProps) {
   const actor = await requireActor()
   const { campaignId } = await params
-  // a guest reads editions, and this is where their link to the campaign leads
-  if (!can.readCampaign(actor, campaignId) && can.readEditions(actor, campaignId))
-    redirect(routeOf(`/campaigns/${campaignId}/editions`))
+  sendGuestOn(actor, campaignId)
   const [state, saved] = await showOrNotFound(
     Promise.all([
       rankingForPage(actor, campaignId, await searchParams),
