@@ -63,9 +63,9 @@ export function arrheniusSeries(
 /** The same lines for a table: each run's own, and the sample's as it is ranked. */
 export function namedFits(row: RankingRow): NamedFit[] {
   if (!row.fit) return []
-  if (row.runFits.length < 2) return [{ name: row.sampleCode, fit: row.fit }]
+  if (row.runFits.length < 2) return [{ name: row.sampleCode, fit: row.fit, about: row.cautions }]
   return [
     ...row.runFits.map((fit) => ({ name: `${row.sampleCode} ${fit.runCodes.join(', ')}`, fit })),
-    { name: `${row.sampleCode}, all its runs`, fit: row.fit },
+    { name: `${row.sampleCode}, all its runs`, fit: row.fit, about: row.cautions },
   ]
 }

@@ -56,6 +56,8 @@ export function compareNumbers(
 
 const numeric = {
   filter: 'agNumberColumnFilter',
+  // an exact value is hardly ever met by a measured number
+  filterParams: { defaultOption: 'greaterThanOrEqual', maxNumConditions: 2 },
   comparator: compareNumbers,
   type: 'rightAligned',
   cellDataType: 'number',

@@ -35,7 +35,7 @@ interface RankingGridProps {
   readonly onSelectionChange: (sampleIds: string[]) => void
   readonly onOpenWorking: (row: RankingRow, working: Working) => void
   readonly onChangeCell: (row: RankingRow, change: RankingCellChange) => void
-  /** column order, widths, sort and filters as the person left them */
+  /** column order, widths and sort as the person left them */
   readonly savedState: GridState | null
   readonly onStateChange: (state: GridState) => void
   readonly hasFilterRow: boolean
@@ -73,22 +73,21 @@ function workingOf(ranking: Ranking | undefined, row: RankingRow | undefined, co
   return row.workings[key] ?? row.fit?.workings[key] ?? derivedWorking(ranking, row, colId)
 }
 
-/** Of what was left on a wide screen a narrow one takes sort and filter: its own columns are pinned and ordered for its width. */
+/** Of what was left on a wide screen a narrow one takes the sort: its own columns are pinned and ordered for its width. */
 function startingState(saved: GridState | null, isNarrow: boolean): GridState {
   if (!saved || !isNarrow) return saved ?? {}
-  return { ...(saved.sort ? { sort: saved.sort } : {}), ...(saved.filter ? { filter: saved.filter } : {}) }
+  return saved.sort ? { sort: saved.sort } : {}
 }
 
 /** Widths are kept once the person set one: kept unasked, they would hold a table to the widths of the day it was first sorted. */
 function savable(state: GridState, hasSetWidth: boolean): GridState {
-  const { columnOrder, columnSizing, columnVisibility, columnPinning, sort, filter } = state
+  const { columnOrder, columnSizing, columnVisibility, columnPinning, sort } = state
   return {
     ...(columnOrder ? { columnOrder } : {}),
     ...(columnSizing && hasSetWidth ? { columnSizing } : {}),
     ...(columnVisibility ? { columnVisibility } : {}),
     ...(columnPinning ? { columnPinning } : {}),
     ...(sort ? { sort } : {}),
-    ...(filter ? { filter } : {}),
   }
 }
 
@@ -165,9 +164,22 @@ export function RankingGrid(props: RankingGridProps) {
     // scrolling asks at every step; the words change only where a column comes in or goes out
     setFar((before) => (JSON.stringify(before) === JSON.stringify(found) ? before : found))
   }
+  const [shownOf, setShownOf] = useState<number | null>(null)
   const isWhole = rows.length <= ROWS_SHOWN_WHOLE
   return (
     <GridProvider>
+      {shownOf === null ? null : (
+        <p role="status" className="m-0 flex flex-wrap items-center gap-x-3 px-4 pb-1 text-[13px] sm:px-6 print:hidden">
+          Filters show {shownOf} of {rows.length} samples.
+          <button
+            type="button"
+            className="min-h-6 cursor-pointer text-accent underline underline-offset-2 touch:min-h-11"
+            onClick={() => grid.current?.setFilterModel(null)}
+          >
+            Show all
+          </button>
+        </p>
+      )}
       <BeyondView far={far} onShow={(colId, side) => grid.current?.ensureColumnVisible(colId, side)} />
       <div className={isWhole ? 'ranking-grid w-full' : 'ranking-grid h-[70vh] w-full'}>
         <AgGridReact<RankingGridRow>
@@ -204,6 +216,7 @@ export function RankingGrid(props: RankingGridProps) {
             lookAround(event)
           }}
           onDisplayedColumnsChanged={lookAround}
+          onFilterChanged={({ api }) => setShownOf(api.isAnyFilterPresent() ? api.getDisplayedRowCount() : null)}
           onSelectionChanged={(event: SelectionChangedEvent<RankingGridRow>) =>
             onSelectionChange(event.api.getSelectedRows().map((entry) => entry.row.sampleId))
           }

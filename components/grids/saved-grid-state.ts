@@ -1,9 +1,9 @@
 import { type GridState } from 'ag-grid-community'
 
-/** Column order, widths, sort and filters of a grid, as kept for a person. */
+/** Column order, widths and sort of a grid, as kept for a person. A filter is of the moment: kept, it would hide rows from somebody who forgot it. */
 export type SavedGridState = GridState
 
-const PARTS = ['columnOrder', 'columnSizing', 'columnVisibility', 'columnPinning', 'sort', 'filter'] as const
+const PARTS = ['columnOrder', 'columnSizing', 'columnVisibility', 'columnPinning', 'sort'] as const
 
 /**
  * A stored state read back. It is the person's own and was written by the grid itself, but it may come from an older release: only the

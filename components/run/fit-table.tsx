@@ -1,5 +1,6 @@
 'use client'
 
+import { type Caution } from '@/lib/analysis/caution'
 import { type ArrheniusFit } from '@/lib/analysis/reduction/run-reduction'
 import { formatFixed } from '@/components/numbers/format-fixed'
 import { halfWidth } from '@/components/numbers/half-width'
@@ -10,6 +11,12 @@ import { CautionTag } from '@/components/working/caution-tag'
 export interface NamedFit {
   readonly name: string
   readonly fit: ArrheniusFit
+  /** doubts about the run or sample that bear on the line without having been raised by it, such as a loss on stream */
+  readonly about?: readonly Caution[]
+}
+
+function cautionsOf({ fit, about = [] }: NamedFit): Caution[] {
+  return [...about.filter(({ code }) => !fit.cautions.some((one) => one.code === code)), ...fit.cautions]
 }
 
 interface FitTableProps {
@@ -81,7 +88,7 @@ export function FitTable({ caption, fits, onOpen }: FitTableProps) {
           </tr>
         </thead>
         <tbody>
-          {fits.map(({ name, fit }) => (
+          {fits.map(({ name, fit, about = [] }) => (
             <tr key={name} className="border-b border-line">
               <th scope="row" className="px-2 py-1 text-left font-normal whitespace-nowrap">
                 {name}
@@ -109,8 +116,8 @@ export function FitTable({ caption, fits, onOpen }: FitTableProps) {
               </td>
               <td className="px-2 py-1">
                 <span className="flex flex-wrap gap-1">
-                  {fit.cautions.length === 0 ? <span className="text-ink-3">none</span> : null}
-                  {fit.cautions.map((caution, index) => (
+                  {cautionsOf({ name, fit, about }).length === 0 ? <span className="text-ink-3">none</span> : null}
+                  {cautionsOf({ name, fit, about }).map((caution, index) => (
                     <CautionTag key={`${caution.code}-${index}`} caution={caution} />
                   ))}
                 </span>

@@ -100,7 +100,11 @@ export function RunWorkspace(props: RunWorkspaceProps) {
   const working = fitWorking ?? (point && picked ? workingOfPoint(point, picked.key) : null)
   const fits: NamedFit[] = reduction?.fit
     ? [
-        { name: reduction.fitWithAllPoints ? 'without what was left out' : 'all counting holds', fit: reduction.fit },
+        {
+          name: reduction.fitWithAllPoints ? 'without what was left out' : 'all counting holds',
+          fit: reduction.fit,
+          about: reduction.cautions,
+        },
         ...(reduction.fitWithAllPoints ? [{ name: 'with it', fit: reduction.fitWithAllPoints }] : []),
       ]
     : []

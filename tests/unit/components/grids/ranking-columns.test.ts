@@ -184,6 +184,9 @@ describe('interval scale', () => {
 })
 
 describe('saved state', () => {
+  it('takes no filter: rows hidden by one that is forgotten would be missed', () => {
+    expect(savedGridState({ filter: { filterModel: { ea: { type: 'equals', filter: 84 } } } })).toBeNull()
+  })
   it('takes the parts it knows', () => {
     expect(savedGridState({ sort: { sortModel: [] }, rowSelection: ['x'], filter: null })).toEqual({
       sort: { sortModel: [] },
