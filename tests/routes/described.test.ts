@@ -463,6 +463,14 @@ describe('every operation does what its description says', () => {
     })
     const proposal = await succeed('lead-person', 'GET', `${here}/proposal`)
     const { contentSha256 } = z.looseObject({ contentSha256: z.string() }).parse(proposal.body)
+    cookie.secret = leadSession
+    for (const [change, status] of [
+      [{ password: 'not the password' }, 422],
+      [{ contentSha256: 'a'.repeat(64) }, 412],
+    ] as const) {
+      const body = { contentSha256, statement: 'Reviewed and released.', password: TEST_PASSWORD, ...change }
+      expect((await askApi(null, 'POST', here, { body, headers: { Origin: ORIGIN } })).status).toBe(status)
+    }
     const published = await succeed('lead-person', 'POST', here, {
       body: { contentSha256, statement: 'Reviewed and released.', password: TEST_PASSWORD },
     })

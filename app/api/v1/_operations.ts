@@ -114,7 +114,8 @@ export function refusalsOf(operation: Operation): number[] {
   const isChange = method !== 'get'
   const hasInput = query !== undefined || body !== undefined || bodyType !== undefined || parts !== undefined
   const sends = body !== undefined || bodyType !== undefined
-  const isRecorded = sends && operation.isForPersons !== true && scope !== null
+  // what a person keeps for themselves is put, whatever was there
+  const isRecorded = sends && method !== 'put' && scope !== null
   return [
     ...new Set([
       ...(hasInput ? [400] : []),
@@ -391,6 +392,7 @@ export const operations: readonly Operation[] = [
     body: publicationSchema,
     answer: editionRecord,
     status: 201,
+    refusals: [412, 429, 503],
   }),
   ofPerson('get', '/campaigns/{campaignId}/editions/proposal', 'What a publication would freeze now', {
     answer: editionProposalRecord,

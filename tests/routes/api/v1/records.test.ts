@@ -457,6 +457,7 @@ test.each([
   '/campaigns/nowhere/methods',
   '/campaigns/nowhere/samples',
   '/campaigns/nowhere/history',
+  '/campaigns/nowhere/editions',
   '/campaigns/nowhere/ranking',
   '/runs?campaignId=nowhere',
   '/samples/nowhere/lots',
