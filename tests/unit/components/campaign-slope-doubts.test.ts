@@ -12,7 +12,7 @@ test('a pair says which of its slopes is not that of the reaction alone', () => 
       sampleCode: 'A',
       cautions: [
         raiseCaution('deactivation', {
-          value: 0.865,
+          value: 0.8655,
           limit: 0.03,
           more: { temperatureK: 518, lossPerH: 0.034, corrected: '' },
         }),
