@@ -78,7 +78,12 @@ export function RunForm({ choices, initial, isDraft, now, save, draftName = 'log
     value: values[name],
     error: issueOf(name),
     understood: reading.said[name],
-    onChange: (event: { target: { value: string } }) => change({ [name]: event.target.value }),
+    onChange: (event: { target: { value: string } }) =>
+      change({
+        [name]: event.target.value,
+        // what was said of another figure says nothing of this one: an unstated kind is asked again
+        ...(name === 'pressure' ? { pressureKind: '' as const } : {}),
+      }),
     onBlur: () => touch(name),
   })
 
@@ -242,7 +247,10 @@ export function RunForm({ choices, initial, isDraft, now, save, draftName = 'log
                     : 'Choose a sample'
                 }
                 choices={samples.map(({ id, code, name }) => ({ value: id, label: `${code}, ${name}` }))}
-                onChange={(event) => change({ sampleId: event.target.value, lotId: '' })}
+                onChange={(event) =>
+                  // the mass of another sample would be a plausible wrong one
+                  change({ sampleId: event.target.value, lotId: '', catalyst: '' })
+                }
                 className={(sample?.lots.length ?? 0) > 0 ? 'col-span-1' : 'col-span-2'}
               />
             ) : null}

@@ -291,7 +291,8 @@ function readFeed(reader: Reader, values: RunFormValues): FeedReading {
     if (isAsked) asksReference = true
     const read = parseQuantity(flow, 'molar-flow', { flowReference: chosen })
     if (!read.ok) {
-      if (isAsked) return null
+      // a state that is only half stated is not made whole by the choice for all flows
+      if (isAsked && chosen === null) return null
       reader.fault(`feed.${String(position)}.flow`, read.sentence)
       return null
     }

@@ -162,6 +162,7 @@ function readingOf(value: number, unit: Unit, options: QuantityOptions): Quantit
 function molarFlowReading(value: number, alias: string, options: QuantityOptions): QuantityReading {
   const unit = unitFromAlias(alias, 'volume-flow')
   if (unit === null) return refuse(unknownUnit(alias, 'molar-flow'))
+  if (isHalfStated(unit)) return refuse(halfStated(`${plain(value)} ${unit.label}`))
   const reference = unit.flowReference ?? options.flowReference ?? null
   if (reference === null)
     return refuse(
@@ -175,6 +176,15 @@ function molarFlowReading(value: number, alias: string, options: QuantityOptions
     said: `${plain(value)} ${unit.label}, counted at ${stateInWords(reference)} = ${plain(Number((valueSi * 1e6).toPrecision(5)))} µmol/s`,
     flowReference: reference,
   }
+}
+
+// `mL/min (20 °C)`: a state of which one half is stated. Another state must not be put in its place.
+function isHalfStated(unit: Unit): boolean {
+  return (unit.flowReference ?? null) === null && /\(.*\d.*\)$/u.test(unit.label)
+}
+
+function halfStated(written: string): string {
+  return `“${written}” states only a temperature or only a pressure; a volume is counted at both, so write both, as in 60 mL/min (20 °C, 1013 mbar).`
 }
 
 function sieveReading(mesh: number): QuantityReading {

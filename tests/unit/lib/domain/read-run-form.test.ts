@@ -139,3 +139,22 @@ describe('"Log a run" as typed', () => {
     expect(issuesOf({ kind: 'blank', catalyst: '' })).toEqual([])
   })
 })
+
+test('a flow that states half of its state is not counted at another one', () => {
+  const [gas, ...others] = drawn().feed
+  if (gas === undefined) throw new Error('the drawn form has a feed')
+  const withFlow = (flow: string) => readRunForm(drawn({ feed: [{ ...gas, flow }, ...others] }), choices)
+  const half = withFlow('7.2 mL/min (20 °C)')
+  expect(half.run).toBeNull()
+  expect(half.issues).toMatchObject([
+    {
+      field: 'feed.0.flow',
+      message:
+        '“7.2 mL/min (20 °C)” states only a temperature or only a pressure; a volume is counted at both, so write both, as in 60 mL/min (20 °C, 1013 mbar).',
+    },
+  ])
+  // 7.2 mL/min at 293.15 K and 101.3 kPa by the ideal gas: p V / (R T), R of CODATA 2018
+  const whole = withFlow('7.2 mL/min (20 °C, 1013 mbar)')
+  const expected = (101_300 * (7.2e-6 / 60)) / (8.314462618 * 293.15)
+  expect((whole.run?.feed[0]?.flowMolPerS ?? 0) / expected).toBeCloseTo(1, 8)
+})
