@@ -13,6 +13,8 @@ import { type RunActions } from './run-actions'
 const kinds = { 'rig-log': 'Rig log', analyser: 'Analyser', attachment: 'Attachment' } as const
 
 function stateText(upload: Upload): string {
+  if (upload.kind === 'attachment' && upload.state === 'confirmed') return `${upload.fileName}, kept beside the run`
+  if (upload.state === 'set-aside') return 'set aside'
   if (upload.failure !== null) return `failed: ${upload.failure}`
   switch (upload.state) {
     case 'confirmed': {
@@ -20,8 +22,6 @@ function stateText(upload: Upload): string {
       const problems = upload.problems.filter((problem) => problem.severity !== 'note').length
       return `${rows}${problems === 0 ? 'nothing skipped' : `${problems} ${problems === 1 ? 'problem' : 'problems'}`}`
     }
-    case 'set-aside':
-      return 'set aside'
     case 'needs-answers':
       return 'questions to be answered'
     case 'ready':
@@ -63,7 +63,7 @@ export function UploadLine({
         <span key={upload.id} title={upload.fileName}>
           <b className="font-semibold">{upload.kind === null ? upload.fileName : kinds[upload.kind]}</b>{' '}
           {stateText(upload)}
-          {upload.kind === 'analyser'
+          {upload.kind === 'analyser' && upload.state === 'confirmed'
             ? `, clock ${clockOffsetS < 0 ? '−' : '+'} ${formatFixed(Math.abs(clockOffsetS), 0)} s`
             : ''}
         </span>

@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import './zod-words'
 
 /** Code of a record as people write it on a label: `CQ-101`, `R-0001`, `Rig B`. */
 export const codeSchema = z.string().trim().min(1).max(40)

@@ -47,6 +47,11 @@ const WORK_WORDS: Readonly<Record<Work, string>> = {
   loading: 'Loading',
 }
 
+function standInTheWay(problems: readonly Problem[]): string {
+  const count = problems.filter((problem) => problem.severity === 'fatal').length
+  return count === 1 ? 'One problem stands in the way.' : `${String(count)} problems stand in the way.`
+}
+
 /** One file of a run: what was found in it, what it leaves open, what would be taken in, and the button that takes it in. */
 export function UploadSection({
   upload,
@@ -231,7 +236,7 @@ export function UploadSection({
             The file is stored but was not read to the end. Add it once more: it is read then, not stored twice.
           </Notice>
         ) : null}
-        {done === null ? null : (
+        {done === null || (isFatal && !isConfirmed) ? null : (
           <Notice kind="sound" isLive>
             {done}
           </Notice>
@@ -303,6 +308,12 @@ export function UploadSection({
           </Button>
         </Notice>
       )}
+      {isFatal && isReady ? (
+        <Notice kind="fault" isLive className="mt-3" title="It cannot be confirmed yet.">
+          {standInTheWay(problems)} Mend what the list below names, in the table of columns above or in the file, and it
+          can be.
+        </Notice>
+      ) : null}
       <ProblemTable problems={problems} fileName={upload.fileName} />
 
       {trouble === null ? null : (

@@ -36,7 +36,7 @@ export function specificationFaults(specification: ColumnMapSpecification): Prob
       faults.push(
         missing(
           'areas or mole fractions',
-          'Both areas and mole fractions are marked. One of the two is read: set the other columns to “ignore”.',
+          'Both areas and mole fractions are marked. One of the two is read: set the other columns to “not read”.',
         ),
       )
     if (specification.shape === 'long' && !has('species-name'))
@@ -61,8 +61,8 @@ export function specificationFaults(specification: ColumnMapSpecification): Prob
           expected: `a unit of ${dimensions.join(' or ').replace('-', ' ')}`,
           sentence:
             column.unit === ''
-              ? `“${column.header}” states no unit. Choose one in the table of columns.`
-              : `“${column.unit}” of column “${column.header}” is not a unit of ${dimensions.join(' or ').replace('-', ' ')} that is known here. Choose one in the table of columns.`,
+              ? `“${column.header}” states no unit. Write it in the table of columns.`
+              : `“${column.unit}” of column “${column.header}” is not a unit of ${dimensions.join(' or ').replace('-', ' ')} that is known here. Write it in the table of columns.`,
         }),
       )
     if (needsSpecies(column, specification) && column.species === null)
@@ -72,7 +72,7 @@ export function specificationFaults(specification: ColumnMapSpecification): Prob
           severity: 'problem',
           column: column.header,
           expected: 'a species',
-          sentence: `“${column.header}” does not say which species it is about. Choose one in the table of columns, or set the column to “ignore”.`,
+          sentence: `“${column.header}” does not say which species it is about. Choose one in the table of columns, or set the column to “not read”.`,
         }),
       )
   }
@@ -87,7 +87,7 @@ export function specificationFaults(specification: ColumnMapSpecification): Prob
           severity: 'problem',
           column: column.header,
           expected: 'one column for each meaning',
-          sentence: `“${column.header}” means the same as another column. Set one of the two to “ignore”.`,
+          sentence: `“${column.header}” means the same as another column. Set one of the two to “not read”.`,
         }),
       )
     twice.add(key)
