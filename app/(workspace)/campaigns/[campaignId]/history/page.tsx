@@ -1,4 +1,5 @@
 import { showOrNotFound } from '@/app/_show-or-not-found'
+import { actionWords } from '@/components/campaign/action-words'
 import { DataTable } from '@/components/ui/data-table'
 import { Moment } from '@/components/ui/moment'
 import { PageBody } from '@/components/ui/page-body'
@@ -38,7 +39,7 @@ export default async function HistoryPage({ params }: { params: Promise<{ campai
           columns={[
             { key: 'at', head: 'When', className: 'whitespace-nowrap', cell: (row) => <Moment at={row.at} /> },
             { key: 'who', head: 'Who', isRowHead: true, cell: (row) => row.actorName },
-            { key: 'what', head: 'What', className: 'whitespace-nowrap', cell: (row) => row.action },
+            { key: 'what', head: 'What', className: 'whitespace-nowrap', cell: (row) => actionWords(row.action) },
             {
               key: 'change',
               head: 'Change',

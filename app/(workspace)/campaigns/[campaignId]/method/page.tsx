@@ -61,7 +61,11 @@ export default async function MethodPage({ params }: { params: Promise<{ campaig
                 label: field.label,
                 value:
                   field.choices?.find((choice) => choice.value === methodFieldText(field, settings))?.label ??
-                  methodFieldText(field, settings),
+                  (field.kind === 'flag'
+                    ? settings[field.key] === true
+                      ? 'yes'
+                      : 'no'
+                    : methodFieldText(field, settings)),
               })),
               ...steps.map((equation, step) => ({
                 label: `Orders of ${equation}`,
