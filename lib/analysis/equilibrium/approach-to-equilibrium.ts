@@ -96,7 +96,7 @@ export function approachToEquilibrium(
  */
 export function equilibriumQuotient(
   numbers: readonly number[],
-  pressuresPa: readonly number[],
+  pressuresPa: ArrayLike<number>,
   equilibriumConstant: number,
 ): number {
   let quotient = 1

@@ -24,27 +24,28 @@ interface Mean {
 }
 
 function meanOf(values: Float64Array, rows: readonly number[]): Mean {
-  const seen: number[] = []
+  const seen = new Float64Array(rows.length)
+  let count = 0
   for (const row of rows) {
     const value = values[row] ?? Number.NaN
-    if (Number.isFinite(value)) seen.push(value)
+    if (Number.isFinite(value)) seen[count++] = value
   }
-  if (seen.length === 0) return { value: Number.NaN, standardError: null, count: 0 }
+  if (count === 0) return { value: Number.NaN, standardError: null, count }
   const first = seen[0] ?? 0
   let total = 0
-  for (const value of seen) total += value - first
-  const mean = first + total / seen.length
-  if (seen.length < 2 * BLOCKS) return { value: mean, standardError: null, count: seen.length }
+  for (let i = 0; i < count; i++) total += (seen[i] ?? 0) - first
+  const mean = first + total / count
+  if (count < 2 * BLOCKS) return { value: mean, standardError: null, count }
   let squares = 0
   for (let block = 0; block < BLOCKS; block++) {
-    const from = Math.floor((block * seen.length) / BLOCKS)
-    const to = Math.floor(((block + 1) * seen.length) / BLOCKS)
+    const from = Math.floor((block * count) / BLOCKS)
+    const to = Math.floor(((block + 1) * count) / BLOCKS)
     let sum = 0
     for (let i = from; i < to; i++) sum += (seen[i] ?? 0) - mean
     const deviation = sum / (to - from)
     squares += deviation * deviation
   }
-  return { value: mean, standardError: Math.sqrt(squares / (BLOCKS - 1) / BLOCKS), count: seen.length }
+  return { value: mean, standardError: Math.sqrt(squares / (BLOCKS - 1) / BLOCKS), count }
 }
 
 /**

@@ -1,3 +1,4 @@
+import { median } from '../statistics/median'
 import { type Hold } from './run-reduction'
 import { type HoldEdit, type RigLog } from './run-input'
 
@@ -19,22 +20,25 @@ const FLOW_TOLERANCE_OF_TOTAL = 0.01
 const ROWS_TO_END = 3
 const SHORTEST_BYPASS_S = 300
 
-function median(values: readonly number[]): number {
-  const sorted = values.filter((value) => Number.isFinite(value)).sort((a, b) => a - b)
-  if (sorted.length === 0) return Number.NaN
-  const half = Math.floor(sorted.length / 2)
-  const upper = sorted[half] ?? Number.NaN
-  return sorted.length % 2 === 1 ? upper : ((sorted[half - 1] ?? Number.NaN) + upper) / 2
-}
+const WINDOW_ROWS = 7
 
 // Median over seven rows, so that the noise of a bed thermocouple does not pass for a change.
 function smooth(values: Float64Array): Float64Array {
   const result = new Float64Array(values.length)
-  const window: number[] = []
+  const window = new Float64Array(WINDOW_ROWS)
+  const reach = (WINDOW_ROWS - 1) / 2
   for (let i = 0; i < values.length; i++) {
-    window.length = 0
-    for (let j = Math.max(0, i - 3); j <= Math.min(values.length - 1, i + 3); j++) window.push(values[j] ?? Number.NaN)
-    result[i] = median(window)
+    let count = 0
+    for (let j = Math.max(0, i - reach); j <= Math.min(values.length - 1, i + reach); j++) {
+      const value = values[j] ?? Number.NaN
+      if (!Number.isFinite(value)) continue
+      let place = count++
+      for (; place > 0 && (window[place - 1] ?? 0) > value; place--) window[place] = window[place - 1] ?? 0
+      window[place] = value
+    }
+    const half = Math.floor(count / 2)
+    const upper = count === 0 ? Number.NaN : (window[half] ?? Number.NaN)
+    result[i] = count % 2 === 1 ? upper : ((window[half - 1] ?? Number.NaN) + upper) / 2
   }
   return result
 }
@@ -71,18 +75,20 @@ function cutIntoStretches(log: RigLog, conditions: Conditions, toleranceK: numbe
     }
     let total = 0
     for (const flow of reference.flows) if (Number.isFinite(flow)) total += flow
+    const room = reference.flows.map((wanted) =>
+      Math.max(FLOW_TOLERANCE * Math.abs(wanted), FLOW_TOLERANCE_OF_TOTAL * total),
+    )
     const isOff = (i: number): boolean => {
       if (!isBypass) {
         const temperature = conditions.temperature[i] ?? Number.NaN
         if (Number.isFinite(temperature) && !(Math.abs(temperature - reference.temperature) <= toleranceK)) return true
       }
-      return conditions.flows.some((flow, s) => {
-        const value = flow[i] ?? Number.NaN
-        const wanted = reference.flows[s] ?? Number.NaN
-        if (!Number.isFinite(value)) return false
-        const room = Math.max(FLOW_TOLERANCE * Math.abs(wanted), FLOW_TOLERANCE_OF_TOTAL * total)
-        return !(Math.abs(value - wanted) <= room)
-      })
+      for (let s = 0; s < conditions.flows.length; s++) {
+        const value = conditions.flows[s]?.[i] ?? Number.NaN
+        if (!Number.isFinite(value)) continue
+        if (!(Math.abs(value - (reference.flows[s] ?? Number.NaN)) <= (room[s] ?? Number.NaN))) return true
+      }
+      return false
     }
     let last = start
     let off = 0
@@ -105,10 +111,9 @@ function cutIntoStretches(log: RigLog, conditions: Conditions, toleranceK: numbe
 
 // The stretch without the rows in which the set-point or the bed is still on its way
 function trimToReached(stretch: Stretch, conditions: Conditions, toleranceK: number): Stretch {
-  const slice = (values: Float64Array): number[] => Array.from(values.subarray(stretch.first, stretch.last + 1))
-  const wanted = median(slice(conditions.temperature))
-  const latter = Array.from(conditions.bed.subarray(Math.floor((stretch.first + stretch.last) / 2), stretch.last + 1))
-  const bedWanted = median(latter)
+  const wanted = median(conditions.temperature.subarray(stretch.first, stretch.last + 1))
+  const middle = Math.floor((stretch.first + stretch.last) / 2)
+  const bedWanted = median(conditions.bed.subarray(middle, stretch.last + 1))
   const isReached = (i: number): boolean =>
     Math.abs((conditions.temperature[i] ?? Number.NaN) - wanted) <= toleranceK / 3 &&
     !(Math.abs((conditions.bed[i] ?? bedWanted) - bedWanted) > toleranceK)
@@ -119,7 +124,7 @@ function trimToReached(stretch: Stretch, conditions: Conditions, toleranceK: num
 }
 
 function meanFlows(conditions: Conditions, stretch: Stretch): number[] {
-  return conditions.flows.map((flow) => median(Array.from(flow.subarray(stretch.first, stretch.last + 1))))
+  return conditions.flows.map((flow) => median(flow.subarray(stretch.first, stretch.last + 1)))
 }
 
 function sameFlows(a: readonly number[], b: readonly number[]): boolean {
@@ -159,7 +164,7 @@ export function findHolds(log: RigLog, rules: HoldRules, edits: readonly HoldEdi
     const foundEndS = time(stretch.last)
     const shortest = raw.isBypass ? Math.min(SHORTEST_BYPASS_S, rules.minimumHoldS) : rules.minimumHoldS
     if (!(foundEndS - foundStartS >= shortest)) continue
-    const setTemperatureK = median(Array.from(conditions.temperature.subarray(stretch.first, stretch.last + 1)))
+    const setTemperatureK = median(conditions.temperature.subarray(stretch.first, stretch.last + 1))
     const flows = meanFlows(conditions, stretch)
     const edit = edits.find((entry) => Math.abs(entry.foundStartS - foundStartS) < 1)
     let returnsTo: number | null = null

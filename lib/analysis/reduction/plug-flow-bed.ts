@@ -32,17 +32,19 @@ export interface BedSolution {
 
 interface PreparedStep {
   /** change of each species' flow per mole of key reactant converted by this step */
-  readonly change: readonly number[]
+  readonly change: Float64Array
   readonly numbers: readonly number[]
   readonly orders: readonly { readonly index: number; readonly order: number; readonly inlet: number }[]
   readonly equilibriumConstant: number | null
 }
 
 interface PreparedBed {
-  readonly inlet: readonly number[]
+  readonly inlet: Float64Array
   readonly keyFlow: number
   readonly pressurePa: number
   readonly steps: readonly PreparedStep[]
+  /** partial pressures at the place in the bed that is being looked at, written anew for each: some thousands of places a point */
+  readonly pressures: Float64Array
 }
 
 const INTEGRATION_STEPS = 24
@@ -52,7 +54,7 @@ function prepareBed(request: BedRequest): PreparedBed {
   const names = new Set(Object.keys(request.inletMoleFraction))
   for (const step of request.steps) for (const name of Object.keys(step.stoichiometry)) names.add(name)
   const species = [...names].sort()
-  const inlet = species.map((name) => request.inletMoleFraction[name] ?? 0)
+  const inlet = Float64Array.from(species, (name) => request.inletMoleFraction[name] ?? 0)
   const keyFlow = request.inletMoleFraction[request.keyReactant] ?? 0
   if (!(keyFlow > 0)) {
     throw new AnalysisError('missing-input', `The feed holds no ${request.keyReactant}.`, {
@@ -82,54 +84,68 @@ function prepareBed(request: BedRequest): PreparedBed {
         return [{ index, order, inlet: fraction * request.pressurePa }]
       })
     return {
-      change: numbers.map((nu) => nu / consumed),
+      change: Float64Array.from(numbers, (nu) => nu / consumed),
       numbers,
       orders,
       equilibriumConstant: step.lnEquilibrium === null ? null : exp(step.lnEquilibrium),
     }
   })
-  return { inlet, keyFlow, pressurePa: request.pressurePa, steps }
+  return { inlet, keyFlow, pressurePa: request.pressurePa, steps, pressures: new Float64Array(species.length) }
 }
 
-// Rates of all steps relative to their forward rates in the feed, at given conversions.
-function relativeRates(bed: PreparedBed, conversions: readonly number[]): number[] {
-  const flows = bed.inlet.map((flow, i) => {
-    let value = flow
-    bed.steps.forEach((step, s) => {
-      value += bed.keyFlow * (conversions[s] ?? 0) * (step.change[i] ?? 0)
-    })
-    return value
-  })
+function fillPressures(bed: PreparedBed, conversions: Float64Array): void {
+  const { inlet, keyFlow, pressurePa, steps, pressures } = bed
   let total = 0
-  for (const flow of flows) total += flow
-  const pressures = flows.map((flow) => (bed.pressurePa * flow) / total)
-  return bed.steps.map((step) => {
-    let rate = 1
-    for (const { index, order, inlet } of step.orders) {
-      const pressure = pressures[index] ?? 0
-      if (!(pressure > 0)) return Number.NaN
-      rate *= pow(pressure / inlet, order)
-    }
-    if (step.equilibriumConstant === null) return rate
-    return rate * (1 - equilibriumQuotient(step.numbers, pressures, step.equilibriumConstant))
-  })
+  for (let i = 0; i < inlet.length; i++) {
+    let flow = inlet[i] ?? 0
+    for (let s = 0; s < steps.length; s++) flow += keyFlow * (conversions[s] ?? 0) * (steps[s]?.change[i] ?? 0)
+    pressures[i] = flow
+    total += flow
+  }
+  for (let i = 0; i < pressures.length; i++) pressures[i] = (pressurePa * (pressures[i] ?? 0)) / total
+}
+
+// Rate of one step relative to its forward rate in the feed, at the pressures of the bed.
+function relativeRate(step: PreparedStep, pressures: Float64Array): number {
+  let rate = 1
+  for (const { index, order, inlet } of step.orders) {
+    const pressure = pressures[index] ?? 0
+    if (!(pressure > 0)) return Number.NaN
+    rate *= pow(pressure / inlet, order)
+  }
+  if (step.equilibriumConstant === null) return rate
+  return rate * (1 - equilibriumQuotient(step.numbers, pressures, step.equilibriumConstant))
+}
+
+// dX/dz of every step at given conversions and forward rates
+function fillSlopes(bed: PreparedBed, conversions: Float64Array, rates: readonly number[], slopes: Float64Array): void {
+  fillPressures(bed, conversions)
+  for (let s = 0; s < slopes.length; s++) {
+    const step = bed.steps[s]
+    slopes[s] = step === undefined ? Number.NaN : relativeRate(step, bed.pressures) * (rates[s] ?? 0)
+  }
+}
+
+function move(from: Float64Array, by: Float64Array, factor: number, to: Float64Array): void {
+  for (let s = 0; s < to.length; s++) to[s] = (from[s] ?? 0) + factor * (by[s] ?? 0)
 }
 
 // Conversions at the outlet for given forward rates: classical fourth-order Runge-Kutta with fixed steps, the same every time
-function integrate(bed: PreparedBed, rates: readonly number[]): number[] {
+function integrate(bed: PreparedBed, rates: readonly number[]): Float64Array {
   const h = 1 / INTEGRATION_STEPS
-  const slope = (at: readonly number[]): number[] => relativeRates(bed, at).map((value, s) => value * (rates[s] ?? 0))
-  const moved = (from: readonly number[], by: readonly number[], factor: number): number[] =>
-    from.map((value, s) => value + factor * (by[s] ?? 0))
-  let conversions: number[] = rates.map(() => 0)
+  const zeros = (): Float64Array => new Float64Array(rates.length)
+  const [conversions, place, k1, k2, k3, k4] = [zeros(), zeros(), zeros(), zeros(), zeros(), zeros()]
   for (let i = 0; i < INTEGRATION_STEPS; i++) {
-    const k1 = slope(conversions)
-    const k2 = slope(moved(conversions, k1, h / 2))
-    const k3 = slope(moved(conversions, k2, h / 2))
-    const k4 = slope(moved(conversions, k3, h))
-    conversions = conversions.map(
-      (value, s) => value + (h / 6) * ((k1[s] ?? 0) + 2 * (k2[s] ?? 0) + 2 * (k3[s] ?? 0) + (k4[s] ?? 0)),
-    )
+    fillSlopes(bed, conversions, rates, k1)
+    move(conversions, k1, h / 2, place)
+    fillSlopes(bed, place, rates, k2)
+    move(conversions, k2, h / 2, place)
+    fillSlopes(bed, place, rates, k3)
+    move(conversions, k3, h, place)
+    fillSlopes(bed, place, rates, k4)
+    for (let s = 0; s < conversions.length; s++)
+      conversions[s] =
+        (conversions[s] ?? 0) + (h / 6) * ((k1[s] ?? 0) + 2 * (k2[s] ?? 0) + 2 * (k3[s] ?? 0) + (k4[s] ?? 0))
   }
   return conversions
 }
@@ -166,7 +182,7 @@ export function solvePlugFlowBed(request: BedRequest): BedSolution {
     const reached = integrate(bed, rates)
     if (reached.some((value) => !Number.isFinite(value))) break
     let worst = 0
-    const error = reached.map((value, s) => {
+    const error = Array.from(reached, (value, s) => {
       const wanted = target[s] ?? 0
       if (wanted === 0) return 0
       const difference = ln(wanted) - ln(Math.max(value, wanted * 1e-6))
