@@ -1,3 +1,4 @@
+import { STANDARD_ATMOSPHERE_PA } from './constants'
 import { type Dimension } from './dimension'
 import { type FlowReference } from './flow-reference'
 import { formatNumber } from './format-number'
@@ -69,6 +70,7 @@ const NUMBER_THEN_UNIT =
  * Quantity behind what a person types or a file states, with what was understood in words.
  *
  * Number and unit by {@link parseNumber} and {@link unitFromAlias}; times also as `2 h 30 min` or `02:30:00`, lengths also as a sieve number.
+ * A gas flow that states only the temperature it is counted at, `60 mL/min (20 °C)`, is taken at 101.325 kPa, and that is said.
  * Nothing is guessed that would change the value: an unknown reference state of a gas flow, a pressure that does not say gauge or absolute
  * and a comma that can be two things are handed back to the caller to ask.
  * Source: own table, see unit-table.ts; BIPM, The International System of Units, 9th edition, 2019.
@@ -86,7 +88,7 @@ export function parseQuantity(text: string, dimension: Dimension, options: Quant
     const compound = parseCompoundTime(text)
     if (compound !== null) return compound
   }
-  const split = splitNumber(text)
+  const split = dimension === 'length' ? (splitVulgarFraction(text) ?? splitNumber(text)) : splitNumber(text)
   if (split === null)
     return refuse(`“${text.trim()}” does not start with a number; write it like ${EXAMPLES[dimension]}.`)
   const number = parseNumber(split.number, options.decimalMark ?? null)
@@ -94,10 +96,16 @@ export function parseQuantity(text: string, dimension: Dimension, options: Quant
   const alias = split.unit === '' ? (options.defaultUnit ?? '') : split.unit
   if (alias === '' && dimension !== 'fraction')
     return refuse(`“${text.trim()}” has no unit; write one, for example ${EXAMPLES[dimension]}.`)
+  if (alias === '' && dimension === 'fraction' && number.value > 1)
+    return refuse(
+      `“${text.trim()}” without a unit is ${plain(number.value * 100)} %; write ${plain(number.value)} % if that is meant.`,
+    )
   if (dimension === 'length' && /^mesh$/iu.test(alias)) return sieveReading(number.value)
   const unit = unitFromAlias(alias, dimension)
   if (unit === null && dimension === 'molar-flow') return molarFlowReading(number.value, alias, options)
   if (unit === null) return refuse(unknownUnit(alias, dimension))
+  if (unit.dimension === 'volume-flow' && isPressureAlone(unit))
+    return refuse(pressureAlone(`${plain(number.value)} ${unit.label}`))
   const conflict = basisConflict(unit, options)
   if (conflict !== null) return refuse(conflict)
   return readingOf(number.value, unit, options)
@@ -116,6 +124,16 @@ export function splitNumber(text: string): { readonly number: string; readonly u
   const reciprocal = match[2].startsWith('/') ? /^(.*\S)\s+1$/su.exec(match[1]) : null
   if (reciprocal?.[1] !== undefined) return { number: reciprocal[1], unit: `1${match[2]}` }
   return { number: match[1], unit: match[2] }
+}
+
+// `1/4 in`, `1 1/2 in`: as tubes are sold; `60/80 mesh` is a range
+function splitVulgarFraction(text: string): { readonly number: string; readonly unit: string } | null {
+  const match = /^\s*(?:(\d{1,3})[\s-]+)?(\d{1,3})\s*[/\u2044]\s*(\d{1,3})\s*([^\d\s].*?)\s*$/su.exec(
+    text.replace(/["”″]/u, ' in'),
+  )
+  const below = Number(match?.[3])
+  if (match?.[4] === undefined || below === 0 || /^mesh$/iu.test(match[4])) return null
+  return { number: String(Number(match[1] ?? 0) + Number(match[2]) / below), unit: match[4] }
 }
 
 function readingOf(value: number, unit: Unit, options: QuantityOptions): QuantityReading {
@@ -145,15 +163,17 @@ function readingOf(value: number, unit: Unit, options: QuantityOptions): Quantit
     }
   }
   if (unit.dimension === 'volume-flow') {
-    const flowReference = unit.flowReference ?? options.flowReference ?? null
-    const state = flowReference === null ? 'no reference state stated' : `counted at ${stateInWords(flowReference)}`
+    const flowReference = referenceOf(unit, options)
+    const state =
+      flowReference === null ? 'no reference state stated' : `counted at ${stateInWords(flowReference)}${assumed(unit)}`
     return { ok: true, valueSi, unitLabel: unit.label, said: `${written}, ${state}${remark}`, flowReference }
   }
+  const share = unit.dimension === 'fraction' && unit.label === '' ? ` = ${plain(value * 100)} %` : ''
   return {
     ok: true,
     valueSi,
     unitLabel: unit.label,
-    said: `${written}${remark}`,
+    said: `${written}${share}${remark}`,
     ...(unit.fractionOf === undefined ? {} : { fractionOf: unit.fractionOf }),
   }
 }
@@ -162,29 +182,43 @@ function readingOf(value: number, unit: Unit, options: QuantityOptions): Quantit
 function molarFlowReading(value: number, alias: string, options: QuantityOptions): QuantityReading {
   const unit = unitFromAlias(alias, 'volume-flow')
   if (unit === null) return refuse(unknownUnit(alias, 'molar-flow'))
-  if (isHalfStated(unit)) return refuse(halfStated(`${plain(value)} ${unit.label}`))
-  const reference = unit.flowReference ?? options.flowReference ?? null
+  if (isPressureAlone(unit)) return refuse(pressureAlone(`${plain(value)} ${unit.label}`))
+  const reference = referenceOf(unit, options)
   if (reference === null)
     return refuse(
       `“${plain(value)} ${unit.label}” is a volume; say at which temperature and pressure it is counted, for example 0 °C and 1013 mbar.`,
     )
   const valueSi = molarFlowFromVolumeFlow(unit.toSi(value), reference)
+  const remark = unit.remark === '' ? '' : `; ${unit.remark}`
   return {
     ok: true,
     valueSi,
     unitLabel: unit.label,
-    said: `${plain(value)} ${unit.label}, counted at ${stateInWords(reference)} = ${plain(Number((valueSi * 1e6).toPrecision(5)))} µmol/s`,
+    said: `${plain(value)} ${unit.label}, counted at ${stateInWords(reference)}${assumed(unit)} = ${plain(Number((valueSi * 1e6).toPrecision(5)))} µmol/s${remark}`,
     flowReference: reference,
   }
 }
 
-// `mL/min (20 °C)`: a state of which one half is stated. Another state must not be put in its place.
-function isHalfStated(unit: Unit): boolean {
-  return (unit.flowReference ?? null) === null && /\(.*\d.*\)$/u.test(unit.label)
+// What a unit states of its own goes before what was answered for all flows.
+function referenceOf(unit: Unit, options: QuantityOptions): FlowReference | null {
+  if (unit.statedTemperatureK !== undefined)
+    return { temperatureK: unit.statedTemperatureK, pressurePa: STANDARD_ATMOSPHERE_PA }
+  return unit.flowReference ?? options.flowReference ?? null
 }
 
-function halfStated(written: string): string {
-  return `“${written}” states only a temperature or only a pressure; a volume is counted at both, so write both, as in 60 mL/min (20 °C, 1013 mbar).`
+function assumed(unit: Unit): string {
+  return unit.statedTemperatureK === undefined ? '' : ' (no pressure stated, so standard pressure)'
+}
+
+// `mL/min (1 bar)`: another temperature must not be put beside it.
+function isPressureAlone(unit: Unit): boolean {
+  return (
+    (unit.flowReference ?? null) === null && unit.statedTemperatureK === undefined && /\(.*\d.*\)$/u.test(unit.label)
+  )
+}
+
+function pressureAlone(written: string): string {
+  return `“${written}” states a pressure and no temperature; a volume is counted at both, so write both, as in 60 mL/min (20 °C, 1013 mbar).`
 }
 
 function sieveReading(mesh: number): QuantityReading {
@@ -244,6 +278,13 @@ function basisConflict(unit: Unit, options: QuantityOptions): string | null {
 }
 
 function unknownUnit(alias: string, dimension: Dimension): string {
+  const bracket = /[([]([^()[\]]*)[)\]]$/u.exec(alias)
+  if (
+    bracket?.[1] !== undefined &&
+    (dimension === 'molar-flow' || dimension === 'volume-flow') &&
+    unitFromAlias(alias.slice(0, bracket.index).trim(), 'volume-flow') !== null
+  )
+    return `“(${bracket[1]})” is not a state that gas is counted at; write its temperature and pressure, as in 60 mL/min (20 °C, 1013 mbar).`
   // grams of product per gram of catalyst and hour: a mass for a mass, which no table turns into an amount
   if (dimension === 'rate-per-mass' && unitFromAlias(alias, 'frequency') !== null)
     return `“${alias}” is a mass per mass and time, or a rate per site; give the amount made per mass of catalyst, like ${EXAMPLES[dimension]}, by dividing by the molar mass.`

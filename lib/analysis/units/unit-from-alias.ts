@@ -23,6 +23,8 @@ export interface Unit {
   readonly pressureKind?: PressureKind
   /** volume flows only: the reference state the unit names, null where it names none */
   readonly flowReference?: FlowReference | null
+  /** volume flows only: a temperature is stated and no pressure with it */
+  readonly statedTemperatureK?: number
   /** volume flows only: the word says "standard" or "normal", whether or not it says which state */
   readonly isStandardVolume?: boolean
   /** fractions only */
@@ -254,13 +256,16 @@ function volumeFlowUnit(text: string): Unit | null {
   if (unit === null || qualifier === '') return unit
   const stated = referenceFromText(qualifier)
   if (stated === null) return null
-  if (stated === 'not-stated')
+  if (stated === 'not-stated') {
+    const statedTemperatureK = temperatureAlone(qualifier)
     return {
       ...unit,
       label: `${unit.label} (${qualifier})`,
       isStandardVolume: true,
-      remark: `“${qualifier}” is used for several states`,
+      ...(statedTemperatureK === null ? {} : { statedTemperatureK }),
+      remark: /\d/u.test(qualifier) ? '' : `“${qualifier}” is used for several states`,
     }
+  }
   return { ...unit, label: `${unit.label} (${qualifier})`, flowReference: stated, isStandardVolume: true }
 }
 
@@ -277,6 +282,13 @@ function splitQualifier(text: string): { base: string; qualifier: string } {
   const wordAfter = /^(.*?)\s+(STP|NTP|norm|std|standard|normal)$/u.exec(text)
   if (wordAfter?.[1] !== undefined && wordAfter[2] !== undefined) return { base: wordAfter[1], qualifier: wordAfter[2] }
   return { base: text, qualifier: '' }
+}
+
+// `20 °C` with no pressure beside it, in kelvin; null for anything else.
+function temperatureAlone(text: string): number | null {
+  const match = /^(-?\d+(?:[.,]\d+)?)\s*(\S.*)$/u.exec(text)
+  const kelvin = temperatureUnit(match?.[2] ?? '-')?.toSi(Number((match?.[1] ?? '').replace(',', '.')))
+  return kelvin !== undefined && kelvin > 0 ? kelvin : null
 }
 
 // A state in words, `not-stated` where the word is used for several states, null where it is not about a state at all.

@@ -116,6 +116,34 @@ describe('pressures', () => {
   })
 })
 
+describe('what a person writes as a fraction', () => {
+  // the inch is 25.4 mm by definition
+  it.each([
+    ['1/4 in', 6.35e-3],
+    ['1/4"', 6.35e-3],
+    ['3/8 inch', 9.525e-3],
+    ['1 1/2 in', 38.1e-3],
+    ['1-1/2 in', 38.1e-3],
+  ])('%s is %d m', (text, metres) => {
+    const read = parseQuantity(text, 'length')
+    expect(read.ok ? read.valueSi : NaN).toBeCloseTo(metres, 12)
+  })
+  it('is not divided by nothing, nor taken for a pair of sieves', () => {
+    expect(parseQuantity('1/0 in', 'length').ok).toBe(false)
+    expect(parseQuantity('60/80 mesh', 'length').ok).toBe(false)
+  })
+  it('without a unit is a share of one, and more than all of it is asked about', () => {
+    expect(parseQuantity('5', 'fraction', { fractionOf: 'mass' })).toEqual({
+      ok: false,
+      sentence: '“5” without a unit is 500 %; write 5 % if that is meant.',
+    })
+    expect(parseQuantity('8', 'fraction')).toMatchObject({
+      sentence: '“8” without a unit is 800 %; write 8 % if that is meant.',
+    })
+    expect(parseQuantity('0.05', 'fraction')).toMatchObject({ ok: true, valueSi: 0.05, said: '0.05 = 5 %' })
+  })
+})
+
 describe('gas flows', () => {
   const normal = { temperatureK: 273.15, pressurePa: 101_325 }
   it.each([
@@ -148,7 +176,8 @@ describe('gas flows', () => {
     ['60 mL/min (20 °C, 1 atm)', 60, { temperatureK: 293.15, pressurePa: 101_325 }],
     ['60 sccm @ 25 °C and 1 bar', 60, { temperatureK: 298.15, pressurePa: 100_000 }],
     ['60 mL/min (273.15 K, 1 bar)', 60, { temperatureK: 273.15, pressurePa: 100_000 }],
-    ['60 mL/min (0 °C)', 60, null],
+    // a temperature alone is taken at 101.325 kPa, and that is said
+    ['60 mL/min (0 °C)', 60, normal],
   ])('%s', (text, millilitresPerMinute, flowReference) => {
     const reading = parseQuantity(text, 'volume-flow')
     expect(reading).toMatchObject({ ok: true, flowReference })
