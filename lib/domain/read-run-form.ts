@@ -6,13 +6,14 @@ import { type FlowReference, NORMAL_REFERENCE } from '../analysis/units/flow-ref
 import { formatNumber } from '../analysis/units/format-number'
 import { formatQuantity } from '../analysis/units/format-quantity'
 import { volumeFlowFromMolarFlow } from '../analysis/units/molar-flow-from-volume-flow'
-import { parseQuantity } from '../analysis/units/parse-quantity'
+import { parseQuantity, splitNumber } from '../analysis/units/parse-quantity'
 import { parseRange } from '../analysis/units/parse-range'
 import { type FieldIssue } from './errors'
 import { setFigures } from './format-estimate'
 import { formatInstant } from './format-instant'
 import { instantFromLocal } from './instant-in-zone'
 import { type FeedEntry, type NewRun, newRunSchema } from './run'
+import { formulaOfName } from './species-names'
 import { referenceFromKey, type RunFormChoices, type RunFormValues } from './run-form'
 import { speciesText } from './species-text'
 
@@ -23,7 +24,7 @@ export interface RunFormReading {
   readonly issues: readonly FieldIssue[]
   /** what was understood, by the field's name */
   readonly said: Readonly<Record<string, string>>
-  /** share of each row of the feed in all that is understood so far [-]; null where the row is not understood */
+  /** share of each row in the feed [-]; null while a row is not understood, since the total is not known then */
   readonly moleFractions: readonly (number | null)[]
   readonly feedSentence: string
   readonly bedSentence: string
@@ -59,6 +60,7 @@ export function readRunForm(values: RunFormValues, choices: RunFormChoices): Run
     : {
         ...bed,
         catalystMassKg: bedIn.catalystMassKg,
+        massRelativeStandardUncertainty: bedIn.massRelativeStandardUncertainty,
         particleMinimumM: bedIn.particleMinimumM,
         particleMaximumM: bedIn.particleMaximumM,
         tubeInnerDiameterM: bedIn.tubeInnerDiameterM,
@@ -99,7 +101,8 @@ export function readRunForm(values: RunFormValues, choices: RunFormChoices): Run
     ],
     activeMetal: values.kind === 'catalyst' ? (sample?.activeMetal ?? '') : '',
     temperatureRangeK: hottestK === null ? null : { low: 298.15, high: hottestK },
-    pressurePa: pressure.absolutePa,
+    // gauge or absolute not said yet: it is this much at least
+    pressurePa: pressure.absolutePa ?? pressure.leastPa,
     rigLimits: {
       maximumPressurePa: rig?.maximumPressurePa ?? null,
       maximumTemperatureK: rig?.maximumTemperatureK ?? null,
@@ -109,6 +112,8 @@ export function readRunForm(values: RunFormValues, choices: RunFormChoices): Run
     particleDiameterM: particleM,
     tubeInnerDiameterM: geometry.tubeInnerDiameterM,
     bedLengthM: geometry.bedLengthM,
+    catalystMassKg: geometry.catalystMassKg,
+    massRelativeStandardUncertainty: geometry.massRelativeStandardUncertainty,
   })
 
   const candidate = {
@@ -210,17 +215,18 @@ function readBed(reader: Reader, values: RunFormValues, isNewBed: boolean) {
   }
 }
 
-// `450 mg SiC`: a mass, then what it is
+// `450 mg SiC` or `SiC 450 mg`: a mass and what it is
 function readDiluent(reader: Reader, text: string): { diluentMassKg: number; diluentMaterial: string } {
   const trimmed = text.trim()
   if (trimmed === '') return { diluentMassKg: 0, diluentMaterial: '' }
   const split = /^(.*?\d[.,]?\s*[^\s\d.,]+)(?:\s+(.*))?$/u.exec(trimmed)
-  const read = parseQuantity(split?.[1] ?? trimmed, 'mass')
+  const reversed = /^(\p{L}.*?)[\s,:]+(\d[\d.,]*\s*[^\s\d.,]+)$/u.exec(trimmed)
+  const read = parseQuantity(reversed?.[2] ?? split?.[1] ?? trimmed, 'mass')
   if (!read.ok) {
     reader.fault('diluent', read.sentence.replace('80 mg', '450 mg SiC'))
     return { diluentMassKg: 0, diluentMaterial: '' }
   }
-  const diluentMaterial = (split?.[2] ?? '').trim()
+  const diluentMaterial = (reversed?.[1] ?? split?.[2] ?? '').trim()
   reader.say(
     'diluent',
     diluentMaterial === '' ? `${read.said}; say of what, if known` : `${read.said} of ${diluentMaterial}`,
@@ -243,7 +249,11 @@ function readWeighing(reader: Reader, text: string, massKg: number | null): numb
   }
   const mass = parseQuantity(text, 'mass')
   if (!mass.ok) {
-    reader.fault('weighing', `“${text.trim()}” is neither a share nor a mass; write it like 0.5 % or 0.4 mg.`)
+    const isBare = splitNumber(text)?.unit === ''
+    reader.fault(
+      'weighing',
+      isBare ? share.sentence : `“${text.trim()}” is neither a share nor a mass; write it like 0.5 % or 0.4 mg.`,
+    )
     return 0.005
   }
   if (massKg === null || !(massKg > 0)) return 0.005
@@ -267,13 +277,16 @@ function readFeed(reader: Reader, values: RunFormValues): FeedReading {
   let asksReference = false
   const seen = new Set<string>()
   const entries = values.feed.map((row, position): FeedEntry | null => {
-    const species = row.species.trim()
+    const named = formulaOfName(row.species)
+    const species = named ?? row.species.trim()
     const flow = row.flow.trim()
     if (species === '' && flow === '') return null
     if (!/^[A-Za-z][A-Za-z0-9()+-]{0,19}$/.test(species)) {
       reader.fault(`feed.${String(position)}.species`, 'Write the gas as a formula, for example CO2 or Ar.')
       return null
     }
+    if (named !== null)
+      reader.say(`feed.${String(position)}.species`, `${row.species.trim()} read as ${speciesText(named)}`)
     if (seen.has(species)) {
       reader.fault(`feed.${String(position)}.species`, `${speciesText(species)} stands twice; add the flows up.`)
       return null
@@ -291,7 +304,6 @@ function readFeed(reader: Reader, values: RunFormValues): FeedReading {
     if (isAsked) asksReference = true
     const read = parseQuantity(flow, 'molar-flow', { flowReference: chosen })
     if (!read.ok) {
-      // a state that is only half stated is not made whole by the choice for all flows
       if (isAsked && chosen === null) return null
       reader.fault(`feed.${String(position)}.flow`, read.sentence)
       return null
@@ -315,10 +327,14 @@ function readFeed(reader: Reader, values: RunFormValues): FeedReading {
   if (values.feed.filter((row) => row.isStandard).length > 1)
     reader.fault('feed', 'Only one gas can be the internal standard.')
   const known = entries.filter((entry) => entry !== null)
+  const isWhole = values.feed.every(
+    (row, position) => (row.species.trim() === '' && row.flow.trim() === '') || (entries[position] ?? null) !== null,
+  )
   const first = known[0]
   return {
     entries,
-    totalMolPerS: known.reduce((sum, entry) => sum + entry.flowMolPerS, 0),
+    // while one gas is not understood, the total is not known, and no share of it
+    totalMolPerS: isWhole ? known.reduce((sum, entry) => sum + entry.flowMolPerS, 0) : 0,
     reference:
       chosen ??
       (first === undefined
@@ -329,7 +345,14 @@ function readFeed(reader: Reader, values: RunFormValues): FeedReading {
 }
 
 function readPressure(reader: Reader, values: RunFormValues) {
-  const nothing = { typedPa: null, absolutePa: null, kind: 'absolute' as const, barometerPa: null, isUnstated: false }
+  const nothing = {
+    typedPa: null,
+    absolutePa: null,
+    kind: 'absolute' as const,
+    barometerPa: null,
+    leastPa: null as number | null,
+    isUnstated: false,
+  }
   if (values.pressure.trim() === '') return nothing
   const read = parseQuantity(values.pressure, 'pressure')
   if (!read.ok) {
@@ -341,16 +364,23 @@ function readPressure(reader: Reader, values: RunFormValues) {
   if (kind === '') {
     reader.fault('pressureKind', 'Say whether this is gauge (above the air around) or absolute.')
     reader.say('pressure', read.said)
-    return { ...nothing, isUnstated }
+    return { ...nothing, leastPa: read.valueSi, isUnstated }
   }
   if (kind === 'absolute') {
     reader.say('pressure', `${formatQuantity(read.valueSi, 'pressure')} absolute`)
-    return { typedPa: read.valueSi, absolutePa: read.valueSi, kind, barometerPa: null, isUnstated }
+    return {
+      typedPa: read.valueSi,
+      absolutePa: read.valueSi,
+      kind,
+      barometerPa: null,
+      leastPa: read.valueSi,
+      isUnstated,
+    }
   }
   const barometer = parseQuantity(values.barometer, 'pressure')
   if (!barometer.ok) {
     reader.fault('barometer', 'A gauge pressure needs the air pressure beside it, for example 1013 mbar.')
-    return { ...nothing, isUnstated, kind }
+    return { ...nothing, leastPa: read.valueSi, isUnstated, kind }
   }
   reader.say('barometer', formatQuantity(barometer.valueSi, 'pressure', { unit: 'mbar' }))
   const absolutePa = absolutePressure(read.valueSi, barometer.valueSi)
@@ -358,7 +388,7 @@ function readPressure(reader: Reader, values: RunFormValues) {
     'pressure',
     `${formatQuantity(read.valueSi, 'pressure')} gauge and ${formatQuantity(barometer.valueSi, 'pressure', { unit: 'mbar' })} of air make ${formatQuantity(absolutePa, 'pressure')} absolute`,
   )
-  return { typedPa: read.valueSi, absolutePa, kind, barometerPa: barometer.valueSi, isUnstated }
+  return { typedPa: read.valueSi, absolutePa, kind, barometerPa: barometer.valueSi, leastPa: absolutePa, isUnstated }
 }
 
 function feedSentence(totalMolPerS: number, reference: FlowReference | null, catalystMassKg: number): string {

@@ -1,5 +1,6 @@
 import { type Caution } from '../caution'
 import { heatCapacityOrLeast } from '../equilibrium/least-heat-capacity'
+import { formatQuantity } from '../units/format-quantity'
 import { adiabaticRise } from './adiabatic-rise'
 import { flammabilityCautions } from './flammability-cautions'
 import { gasHazardCautions } from './gas-hazard-cautions'
@@ -15,6 +16,12 @@ export const ADIABATIC_RISE_LIMIT_K = 50
 export const TUBE_PER_PARTICLE_LIMIT = 10
 /** Bed lengths per particle below which the bed is too short to count as plug flow. */
 export const BED_PER_PARTICLE_LIMIT = 50
+/** Mass from which a test bed is unusual and the unit is asked about [kg]. */
+export const CATALYST_MASS_LIMIT_KG = 0.01
+/** Relative standard uncertainty of a weighing from which every rate is mostly doubt. */
+export const WEIGHING_LIMIT = 0.2
+/** Inner diameter from which a tube is unusual for a test rig [m]. */
+export const TUBE_LIMIT_M = 0.05
 /** Share of the rig's limit from which the distance is pointed out. */
 const NEAR_LIMIT = 0.9
 const FEED_SUM_TOLERANCE = 0.005
@@ -39,6 +46,7 @@ export function plannedRunCautions(planned: PlannedRunInput): Caution[] {
     ...gasHazardCautions(input),
     ...heatCautions(input),
     ...bedCautions(input),
+    ...unusualFigureCautions(input),
     ...feedCautions(input),
   ]
   const weight = { grave: 0, caution: 1, note: 2 }
@@ -65,6 +73,8 @@ function withoutNonNumbers(planned: PlannedRunInput): PlannedRunInput {
     particleDiameterM: known(planned.particleDiameterM),
     tubeInnerDiameterM: known(planned.tubeInnerDiameterM),
     bedLengthM: known(planned.bedLengthM),
+    catalystMassKg: known(planned.catalystMassKg),
+    massRelativeStandardUncertainty: known(planned.massRelativeStandardUncertainty),
   }
 }
 
@@ -175,6 +185,54 @@ function bedCautions({ particleDiameterM, tubeInnerDiameterM, bedLengthM }: Plan
         alongBed,
         BED_PER_PARTICLE_LIMIT,
         '1',
+        'common practice',
+      ),
+    )
+  return cautions
+}
+
+// Figures that are possible and seldom meant: a wrong unit or a slipped comma.
+function unusualFigureCautions(input: PlannedRunInput): Caution[] {
+  const cautions: Caution[] = []
+  const massKg = input.catalystMassKg ?? 0
+  if (massKg > CATALYST_MASS_LIMIT_KG)
+    cautions.push(
+      caution(
+        'large-catalyst-mass',
+        'caution',
+        `${formatQuantity(massKg, 'mass')} of catalyst`,
+        `${formatQuantity(massKg, 'mass')} of catalyst is much for a test bed, which holds milligrams to a few grams. Check the unit: every rate is divided by this mass.`,
+        massKg,
+        CATALYST_MASS_LIMIT_KG,
+        'kg',
+        'common practice',
+      ),
+    )
+  const weighing = input.massRelativeStandardUncertainty ?? 0
+  if (weighing > WEIGHING_LIMIT)
+    cautions.push(
+      caution(
+        'uncertain-weighing',
+        'caution',
+        `weighing uncertain by ${(100 * weighing).toFixed(0)} %`,
+        `The weighing is given as uncertain by ${(100 * weighing).toFixed(0)} % of the mass; above ${String(100 * WEIGHING_LIMIT)} % it outweighs all else in every rate. Check figure and unit.`,
+        weighing,
+        WEIGHING_LIMIT,
+        '1',
+        'common practice',
+      ),
+    )
+  const tubeM = input.tubeInnerDiameterM ?? 0
+  if (tubeM > TUBE_LIMIT_M)
+    cautions.push(
+      caution(
+        'wide-tube',
+        'caution',
+        `tube ${formatQuantity(tubeM, 'length')} wide`,
+        `A tube of ${formatQuantity(tubeM, 'length')} inner diameter is wide for a test rig, where 2 to 25 mm are usual. Check the unit.`,
+        tubeM,
+        TUBE_LIMIT_M,
+        'm',
         'common practice',
       ),
     )

@@ -19,4 +19,7 @@ export interface PlannedRunInput {
   readonly particleDiameterM?: number | null
   readonly tubeInnerDiameterM?: number | null
   readonly bedLengthM?: number | null
+  readonly catalystMassKg?: number | null
+  /** of the weighing, relative to the mass */
+  readonly massRelativeStandardUncertainty?: number | null
 }

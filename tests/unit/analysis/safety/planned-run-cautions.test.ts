@@ -102,6 +102,20 @@ describe('cautions for a planned run', () => {
     expect(find({ feed: unknown }, 'adiabatic-rise')?.sentence).toContain('lowest heat capacity its gases can have')
     expect(find({ feedHeatCapacityJPerMolK: 33 }, 'adiabatic-rise')?.value).toBeCloseTo(500, 9)
   })
+  it.each([
+    ['large-catalyst-mass', { catalystMassKg: 0.01 }, { catalystMassKg: 0.08 }, '80'],
+    [
+      'uncertain-weighing',
+      { massRelativeStandardUncertainty: 0.2 },
+      { massRelativeStandardUncertainty: 0.25 },
+      'uncertain by 25 % of the mass',
+    ],
+    ['wide-tube', { tubeInnerDiameterM: 0.05 }, { tubeInnerDiameterM: 0.46 }, '460'],
+  ])('ask about a figure that is seldom meant: %s', (code, usual, unusual, words) => {
+    expect(codes(usual)).not.toContain(code)
+    expect(find(unusual, code)?.severity).toBe('caution')
+    expect(find(unusual, code)?.sentence).toContain(words)
+  })
   it('are grave for carbon monoxide over cold nickel', () => {
     expect(find({ temperatureRangeK: { low: 400, high: 600 } }, 'carbonyl')?.severity).toBe('grave')
     expect(find({ temperatureRangeK: null }, 'carbonyl')?.severity).toBe('grave')

@@ -140,21 +140,114 @@ describe('"Log a run" as typed', () => {
   })
 })
 
-test('a flow that states half of its state is not counted at another one', () => {
+describe('a flow with a bracket behind it', () => {
   const [gas, ...others] = drawn().feed
   if (gas === undefined) throw new Error('the drawn form has a feed')
-  const withFlow = (flow: string) => readRunForm(drawn({ feed: [{ ...gas, flow }, ...others] }), choices)
-  const half = withFlow('7.2 mL/min (20 °C)')
-  expect(half.run).toBeNull()
-  expect(half.issues).toMatchObject([
-    {
-      field: 'feed.0.flow',
-      message:
-        '“7.2 mL/min (20 °C)” states only a temperature or only a pressure; a volume is counted at both, so write both, as in 60 mL/min (20 °C, 1013 mbar).',
+  const withFlow = (flow: string, change: Partial<RunFormValues> = {}) =>
+    readRunForm(drawn({ feed: [{ ...gas, flow }, ...others], ...change }), choices)
+
+  // p V / (R T) of an ideal gas for 7.2 mL/min, R of CODATA 2018; the form counts flows at 0 °C and 101.325 kPa
+  test.each([
+    ['7.2 mL/min', 273.15, 101_325, '5.3538 µmol/s'],
+    ['7.2 ml/min (0 °C, 1013 mbar)', 273.15, 101_300, '5.3525 µmol/s'],
+    ['7.2 ml/min (20 °C)', 293.15, 101_325, '20 °C and 101.325 kPa (no pressure stated, so standard pressure)'],
+    ['7.2 ml/min (25 °C)', 298.15, 101_325, '25 °C and 101.325 kPa (no pressure stated, so standard pressure)'],
+    ['7.2 mL/min (25 °C, 1 bar)', 298.15, 100_000, '25 °C and 100 kPa'],
+    ['7.2 mL/min (STP)', 273.15, 101_325, '“STP” is used for several states'],
+    ['7.2 mL/min (NTP)', 273.15, 101_325, '“NTP” is used for several states'],
+  ])('%s is counted at %d K and %d Pa, said back', (flow, kelvin, pascal, words) => {
+    const { run, said } = withFlow(flow)
+    const expected = (pascal * (7.2e-6 / 60)) / (8.314462618 * kelvin)
+    expect((run?.feed[0]?.flowMolPerS ?? 0) / expected).toBeCloseTo(1, 8)
+    expect(run?.feed[0]?.referenceTemperatureK).toBeCloseTo(kelvin, 9)
+    expect(run?.feed[0]?.referencePressurePa).toBeCloseTo(pascal, 6)
+    expect(said['feed.0.flow']).toContain(words)
+  })
+
+  test.each(['7.2 mL/min', '7.2 mL/min (STP)', '7.2 mL/min (NTP)', '7.2 sccm'])(
+    '%s is asked about where no state was chosen',
+    (flow) => {
+      const { run, issues } = withFlow(flow, { flowReference: '' })
+      expect(run).toBeNull()
+      expect(issues.map(({ field }) => field)).toEqual(['flowReference'])
     },
-  ])
-  // 7.2 mL/min at 293.15 K and 101.3 kPa by the ideal gas: p V / (R T), R of CODATA 2018
-  const whole = withFlow('7.2 mL/min (20 °C, 1013 mbar)')
-  const expected = (101_300 * (7.2e-6 / 60)) / (8.314462618 * 293.15)
-  expect((whole.run?.feed[0]?.flowMolPerS ?? 0) / expected).toBeCloseTo(1, 8)
+  )
+
+  test.each([
+    ['7.2 mL/min (1 bar)', 'states a pressure and no temperature'],
+    ['7.2 mL/min (dry)', '“(dry)” is not a state that gas is counted at'],
+    ['7.2 mL/min (20 °C, 1 barg)', '“(20 °C, 1 barg)” is not a state that gas is counted at'],
+  ])('%s is a fault', (flow, words) => {
+    const { run, issues } = withFlow(flow)
+    expect(run).toBeNull()
+    expect(issues.map(({ field }) => field)).toEqual(['feed.0.flow'])
+    expect(issues[0]?.message).toContain(words)
+  })
+})
+
+describe('what is unusual or half known', () => {
+  const codesOf = (change: Partial<RunFormValues>) =>
+    readRunForm(drawn(change), choices).cautions.map(({ code }) => code)
+  // the rig of these tests is entered for 10 bar and 600 °C
+  test.each([
+    ['over-pressure', { pressure: '300 bar abs' }],
+    ['over-pressure', { pressure: '300 bar', pressureKind: '' as const }],
+    ['over-pressure', { pressure: '300 barg', barometer: '' }],
+    ['over-temperature', { highestTemperature: '601 °C' }],
+    ['large-catalyst-mass', { catalyst: '80 g' }],
+    ['uncertain-weighing', { weighing: '20 mg' }],
+    ['wide-tube', { tube: '46 cm' }],
+  ])('is pointed out as %s', (code, change) => {
+    expect(codesOf({})).not.toContain(code)
+    expect(codesOf(change)).toContain(code)
+  })
+
+  test('a mass, a weighing and a tube that are unusual do not stand in the way', () => {
+    expect(issuesOf({ catalyst: '80 g', weighing: '20 g', tube: '46 cm' })).toEqual([])
+  })
+
+  test('a share of an unknown total is not shown', () => {
+    const feed = drawn().feed.map((row, position) => (position === 2 ? { ...row, flow: '4.8 furlongs' } : row))
+    const reading = readRunForm(drawn({ feed }), choices)
+    expect(reading.moleFractions).toEqual([null, null, null, null])
+    expect(reading.feedSentence).toBe('')
+    expect(reading.cautions.map(({ tag }) => tag).join(' ')).not.toContain('%')
+    const empty = readRunForm(drawn({ feed: [...drawn().feed, { species: '', flow: '', isStandard: false }] }), choices)
+    expect(empty.moleFractions.map((share) => share?.toFixed(2) ?? null)).toEqual([
+      '0.12',
+      '0.60',
+      '0.08',
+      '0.20',
+      null,
+    ])
+  })
+
+  test('a gas by its name is its formula, said back, and the same gas', () => {
+    const named = drawn().feed.map((row) => (row.species === 'H2' ? { ...row, species: 'Hydrogen' } : row))
+    const { run, said } = readRunForm(drawn({ feed: named }), choices)
+    expect(run?.feed.map(({ species }) => species)).toEqual(['CO2', 'H2', 'Ar', 'N2'])
+    expect(said['feed.1.species']).toBe('Hydrogen read as H₂')
+    const twice = [...drawn().feed, { species: 'hydrogen', flow: '1 mL/min', isStandard: false }]
+    expect(issuesOf({ feed: twice })).toEqual(['feed.4.species'])
+  })
+
+  test('a diluent is understood with its material first or last', () => {
+    for (const diluent of ['450 mg SiC', 'SiC 450 mg', 'SiC, 450 mg', 'SiC: 0.45 g']) {
+      const { run } = readRunForm(drawn({ diluent }), choices)
+      if (run === null || !('catalystMassKg' in run.loading)) throw new Error(`not read: ${diluent}`)
+      expect(run.loading.diluentMassKg).toBeCloseTo(450e-6, 15)
+      expect(run.loading.diluentMaterial).toBe('SiC')
+    }
+    const { run } = readRunForm(drawn({ diluent: 'Al2O3 450 mg', tube: '1/4 in' }), choices)
+    expect(run?.loading).toMatchObject({ diluentMaterial: 'Al2O3', tubeInnerDiameterM: 0.006_35 })
+  })
+
+  test('figures out of range are refused in words of their own, all at once', () => {
+    const { issues } = readRunForm(drawn({ weighing: '8', bedLength: '46 m', catalyst: '80 kg' }), choices)
+    expect(issues).toEqual([
+      { field: 'weighing', message: '“8” without a unit is 800 %; write 8 % if that is meant.' },
+      { field: 'catalyst', message: 'This must be below 10 kg.' },
+      { field: 'bedLength', message: 'This must be below 10 m.' },
+    ])
+  })
 })
