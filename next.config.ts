@@ -12,7 +12,17 @@ const securityHeaders = [
 ]
 
 const config: NextConfig = {
-  serverExternalPackages: ['@electric-sql/pglite', 'pg', 'pg-copy-streams', 'formidable', 'yauzl', 'bcryptjs'],
+  serverExternalPackages: [
+    '@electric-sql/pglite',
+    'pg',
+    'pg-copy-streams',
+    'formidable',
+    'yauzl',
+    'bcryptjs',
+    'pdfkit',
+    'nodemailer',
+    '@aws-sdk/client-s3',
+  ],
   poweredByHeader: false,
   productionBrowserSourceMaps: false,
   typedRoutes: true,
